@@ -1,0 +1,13 @@
+module hoopsheet
+
+go 1.26.0
+
+ignore ./site/node_modules
+
+require (
+	github.com/evanw/esbuild v0.28.2 // indirect
+	github.com/google/jsonschema-go v0.4.3 // indirect
+	github.com/hack-pad/go-indexeddb v0.3.2 // indirect
+	github.com/yuin/goldmark v1.8.7 // indirect
+	gonum.org/v1/gonum v0.17.0 // indirect
+)
