@@ -1,0 +1,110 @@
+package bessel
+
+import "math"
+
+// J returns the Bessel function of the first kind of real order nu >= 0,
+//
+//	J_nu(x) = (x/2)^nu sum over k of (-x^2/4)^k / (k! Gamma(nu+k+1)).
+//
+// For negative x it is real only for integer nu, where J_n(-x) = (-1)^n J_n(x);
+// otherwise, and for nu < 0 or NaN in either argument, the result is NaN.
+// J(nu, 0) is 1 for nu = 0 and 0 above; J(nu, +-Inf) is 0.
+func J(nu, x float64) float64 {
+	switch {
+	case !(nu >= 0) || math.IsInf(nu, 1) || math.IsNaN(x):
+		return math.NaN()
+	case x < 0:
+		if nu != math.Floor(nu) {
+			return math.NaN()
+		}
+		if math.Mod(nu, 2) == 1 {
+			return -J(nu, -x)
+		}
+		return J(nu, -x)
+	case x == 0:
+		if nu == 0 {
+			return 1
+		}
+		return 0
+	case math.IsInf(x, 1):
+		return 0
+	}
+	h, l, _, _ := jPair(nu, x)
+	return h + l
+}
+
+// JInt returns J_n(x) for integer n, also negative: J_{-n}(x) = (-1)^n J_n(x).
+// It is J with the order already known to be whole.
+func JInt(n int, x float64) float64 {
+	if n < 0 {
+		if n&1 == 1 || n&1 == -1 {
+			return -J(float64(-n), x)
+		}
+		return J(float64(-n), x)
+	}
+	return J(float64(n), x)
+}
+
+// JPrime returns the derivative of J_nu at x,
+//
+//	J'_nu(x) = (nu/x) J_nu(x) - J_{nu+1}(x).
+//
+// The domain is that of J; J'_nu(0) is 1/2 for nu = 1, +Inf for 0 < nu < 1 and
+// 0 otherwise.
+func JPrime(nu, x float64) float64 {
+	switch {
+	case !(nu >= 0) || math.IsInf(nu, 1) || math.IsNaN(x):
+		return math.NaN()
+	case x < 0:
+		if nu != math.Floor(nu) {
+			return math.NaN()
+		}
+		if math.Mod(nu, 2) == 1 {
+			return JPrime(nu, -x)
+		}
+		return -JPrime(nu, -x)
+	case x == 0:
+		switch {
+		case nu == 1:
+			return 0.5
+		case nu > 0 && nu < 1:
+			return math.Inf(1)
+		}
+		return 0
+	case math.IsInf(x, 1):
+		return 0
+	}
+	_, d := jAndDerivative(nu, x)
+	return d
+}
+
+// jAndDerivative returns J_nu(x) and J'_nu(x) for nu >= 0 and finite x > 0.
+func jAndDerivative(nu, x float64) (j, d float64) {
+	ah, al, bh, bl := jPair(nu, x)
+	qh := nu / x
+	p, e := twoProd(qh, x)
+	ql := ((nu - p) - e) / x
+	ph, pl := mulDD(qh, ql, ah, al)
+	h, l := addDD(ph, pl, -bh, -bl)
+	return ah + al, h + l
+}
+
+// jPair returns J_nu(x) and J_{nu+1}(x) as compensated numbers for finite
+// nu >= 0 and x > 0. It is the dispatcher of the branch map in doc.go.
+func jPair(nu, x float64) (ah, al, bh, bl float64) {
+	whole := math.Floor(nu)
+	mu, n := nu-whole, int(whole)
+	switch {
+	case nu > x+1 && debyeExponent(nu, x) > underflowExponent:
+		return 0, 0, 0, 0
+	case x >= hankelMin && nu <= x:
+		ah, al, _, _ = hankel(mu, x)
+		bh, bl, _, _ = hankel(mu+1, x)
+		return up(mu, n, x, ah, al, bh, bl)
+	case mu == 0:
+		return intBackward(n, x)
+	case x >= hankelMin:
+		return realDown(mu, n, x)
+	}
+	return realBackward(mu, n, x)
+}
