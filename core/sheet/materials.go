@@ -32,7 +32,7 @@ func Materials() []Material {
 			ID: "polyester-film", Name: "Polyester film (PET, biaxially oriented)",
 			Density: 1390, E: 4.8e9, Nu: 0.38, CTE: 17e-6, AllowableStress: 33e6,
 			Source: "Density, modulus (4.8 GPa along, 5.0 GPa across the web), Poisson's ratio below yield, expansion (30 to 50 °C) " +
-				"and stress at 5 % strain (98 MPa): product bulletin of a film maker, 1990s, table 1. " +
+				"and stress at 5 % strain (98 MPa): product bulletin of a film maker, table 1. " +
 				"A space agency's materials list gives 30e-6 per kelvin for the expansion: it depends on the orientation, so measure it where it matters. " +
 				"Allowable stress: common practice, one third of the stress at 5 % strain, because the film creeps.",
 		},
