@@ -1,0 +1,63 @@
+package spectrum
+
+import (
+	"math"
+	"slices"
+)
+
+// The running median's half width follows the frequency, so that the rising floor at low
+// frequencies is followed, between these bounds.
+const (
+	floorWidest   = 100.0 // Hz
+	floorFewest   = 16.0  // natural bins to each side, for a median of at least some 32 values
+	floorPerHz    = 0.5   // share of the frequency
+	medianToMean  = 1 / math.Ln2
+	leastUnmasked = 0.25 // share of bins that must be left for a median
+)
+
+// noiseFloor writes to dst the mean power of the noise at each bin of power, from running
+// medians: for Gaussian noise a bin's power is exponentially distributed, with median ln 2
+// times its mean. Bins where masked is true do not count (masked may be nil). step is the
+// distance of bins in Hz and natural that of the unpadded length.
+func (a *Analyzer) noiseFloor(dst, power []float64, masked []bool, step, natural float64) []float64 {
+	dst = resize(dst, len(power))
+	half := func(k int) int {
+		f := float64(k) * step
+		h := max(min(floorPerHz*f, floorWidest), floorFewest*natural)
+		return max(1, int(h/step))
+	}
+	at, level := 0, math.Log(a.medianAround(power, masked, 0, half(0)))
+	dst[0] = math.Exp(level)
+	for at < len(power)-1 {
+		next := min(at+max(1, half(at)/4), len(power)-1)
+		nextLevel := math.Log(a.medianAround(power, masked, next, half(next)))
+		for k := at + 1; k <= next; k++ {
+			t := float64(k-at) / float64(next-at)
+			dst[k] = math.Exp(level + t*(nextLevel-level))
+		}
+		at, level = next, nextLevel
+	}
+	return dst
+}
+
+// leastPower keeps logarithms finite in digital silence: -400 dB of full scale.
+const leastPower = 1e-40
+
+// medianAround returns the mean noise power by the median of the unmasked bins within half of k.
+func (a *Analyzer) medianAround(power []float64, masked []bool, k, half int) float64 {
+	lo, hi := max(0, k-half), min(len(power)-1, k+half)
+	take := func(all bool) {
+		a.scratch = a.scratch[:0]
+		for i := lo; i <= hi; i++ {
+			if all || masked == nil || !masked[i] {
+				a.scratch = append(a.scratch, power[i])
+			}
+		}
+	}
+	take(false)
+	if float64(len(a.scratch)) < leastUnmasked*float64(hi-lo+1) {
+		take(true)
+	}
+	slices.Sort(a.scratch)
+	return max(medianToMean*a.scratch[len(a.scratch)/2], leastPower)
+}

@@ -1,0 +1,197 @@
+package spectrum
+
+import "math"
+
+const (
+	framesApart  = 4    // frames overlap by three quarters
+	frameSNR     = 4.0  // power ratio under which a frame of the envelope no longer counts
+	weightCap    = 1000 // power ratio at which a frame's weight stops growing: beats then count, not noise
+	fewestFrames = 5
+	misfit       = 2.0 // mean squared residual, against noise alone, that widens the uncertainty
+)
+
+// ringDown is the decay of one tone.
+type ringDown struct {
+	known    bool    // enough of the envelope stands out of the noise
+	decay    float64 // d in exp(-d t), 1/s; negative if it grows
+	u        float64 // standard uncertainty of decay, 1/s
+	residual float64 // rms of the envelope about the straight line, dB
+	heard    float64 // how long the envelope stays above the noise, s
+}
+
+// ringDown fits the decay rate of the tone at f in x: the samples are shifted by -f, averaged
+// under overlapping Hann windows of the given length in seconds, and a straight line is drawn
+// through the logarithm of the magnitude
+//
+//	ln |z_m| = b - d t_m + Re(n_m / s_m)
+//
+// by weighted least squares, twice reweighted. noise is the variance of a sample of the white
+// noise that would give the floor met at f. The uncertainty follows from the covariance of n_m
+// (frames overlap) and is widened where the residuals are larger than noise makes them, as
+// beating neighbours do.
+func (a *Analyzer) ringDown(x []float64, rate, f, length, noise float64) ringDown {
+	// The logarithm of a magnitude at a power ratio r has the bias E1(r)/2, under 0.002 at
+	// frameSNR, and the variance 1/(2 r): Rice, Bell Syst. Tech. J. 24 (1945) 46-156, sec. 3.10.
+	hop := max(1, int(length*rate/framesApart))
+	n := hop * framesApart
+	if len(x) < n+(fewestFrames-1)*hop {
+		return ringDown{}
+	}
+	a.heterodyne(x, 2*math.Pi*f/rate)
+	win := a.window(Hann, n)
+	frames := (len(x)-n)/hop + 1
+	a.envelope = resize(a.envelope, frames)
+	for m := range a.envelope {
+		re, im := 0.0, 0.0
+		for i, v := range a.shifted[m*hop : m*hop+n] {
+			re += win[i] * real(v)
+			im += win[i] * imag(v)
+		}
+		a.envelope[m] = math.Log(max(re*re+im*im, leastPower)) / 2
+	}
+	frameNoise := max(noise*sumSquares(win), leastPower)
+	fit := envelopeFit{y: a.envelope, step: float64(hop) / rate, noise: frameNoise}
+	if !fit.start() {
+		return ringDown{}
+	}
+	for range 3 {
+		if !fit.reweight() {
+			return ringDown{}
+		}
+	}
+	r := fit.result(overlap(win, hop))
+	r.heard = float64(fit.used)*fit.step + float64(n-hop)/rate
+	return r
+}
+
+// heterodyne writes x[i] exp(-i omega i) to a.shifted.
+func (a *Analyzer) heterodyne(x []float64, omega float64) {
+	if cap(a.shifted) < len(x) {
+		a.shifted = make([]complex128, len(x))
+	}
+	a.shifted = a.shifted[:len(x)]
+	const stretch = 256 // the turning phase is set afresh so often; rounding stays under 256 ulp
+	s, c := math.Sincos(omega)
+	turn := complex(c, -s)
+	for from := 0; from < len(x); from += stretch {
+		s, c := math.Sincos(omega * float64(from))
+		phase := complex(c, -s)
+		for i := from; i < min(from+stretch, len(x)); i++ {
+			a.shifted[i] = complex(x[i]*real(phase), x[i]*imag(phase))
+			phase *= turn
+		}
+	}
+}
+
+// envelopeFit is a weighted straight line through y[0:used] at t = 0, step, 2 step ...
+type envelopeFit struct {
+	y     []float64 // ln |z|
+	step  float64   // s
+	noise float64   // E |n|^2
+	used  int
+	b, d  float64
+	tm    float64 // weighted mean time
+	stt   float64 // weighted sum of squares about it
+}
+
+// start takes the frames up to where the measured envelope first meets the noise.
+func (f *envelopeFit) start() bool {
+	limit := math.Log(frameSNR*f.noise) / 2
+	for f.used = 0; f.used < len(f.y) && f.y[f.used] > limit; f.used++ {
+	}
+	if f.used < fewestFrames {
+		return false
+	}
+	f.solve(func(m int) float64 { return f.y[m] })
+	return true
+}
+
+// reweight takes weights and the last frame from the line itself, which noise does not shake.
+func (f *envelopeFit) reweight() bool {
+	limit := math.Log(frameSNR*f.noise) / 2
+	b, d := f.b, f.d
+	line := func(m int) float64 { return b - d*float64(m)*f.step }
+	for f.used = 0; f.used < len(f.y) && line(f.used) > limit; f.used++ {
+	}
+	if f.used < fewestFrames {
+		return false
+	}
+	f.solve(line)
+	return true
+}
+
+func (f *envelopeFit) weight(lnz float64) float64 {
+	r := math.Exp(2*lnz) / f.noise
+	return 1 / (1/r + 1.0/weightCap)
+}
+
+func (f *envelopeFit) solve(line func(int) float64) {
+	var w, wt, wy float64
+	for m := range f.used {
+		k := f.weight(line(m))
+		w += k
+		wt += k * float64(m) * f.step
+		wy += k * f.y[m]
+	}
+	f.tm = wt / w
+	ym := wy / w
+	var sty float64
+	f.stt = 0
+	for m := range f.used {
+		k, t := f.weight(line(m)), float64(m)*f.step-f.tm
+		f.stt += k * t * t
+		sty += k * t * (f.y[m] - ym)
+	}
+	f.d = -sty / f.stt
+	f.b = ym + f.d*f.tm
+}
+
+// result works out the uncertainty; correlation[j] is that of the noise of frames j apart.
+func (f *envelopeFit) result(correlation []float64) ringDown {
+	line := func(m int) float64 { return f.b - f.d*float64(m)*f.step }
+	share := func(m int) float64 { // d's derivative by y[m], over the magnitude of the signal there
+		return f.weight(line(m)) * (float64(m)*f.step - f.tm) / f.stt * math.Exp(-line(m))
+	}
+	variance, squares, plain := 0.0, 0.0, 0.0
+	for m := range f.used {
+		variance += correlation[0] * share(m) * share(m)
+		for j := 1; j < len(correlation) && m+j < f.used; j++ {
+			variance += 2 * correlation[j] * share(m) * share(m+j)
+		}
+		r := f.y[m] - line(m)
+		plain += r * r
+		squares += r * r * 2 * math.Exp(2*line(m)) / f.noise
+	}
+	variance *= f.noise / 2
+	if s := squares / float64(f.used-2); s > misfit {
+		variance *= s
+	}
+	return ringDown{
+		known: true, decay: f.d, u: math.Sqrt(variance),
+		residual: 20 / math.Ln10 * math.Sqrt(plain/float64(f.used)),
+	}
+}
+
+// overlap returns the correlation of white noise under the window and under itself j hops later.
+func overlap(win []float64, hop int) []float64 {
+	out := []float64{}
+	for j := 0; j*hop < len(win); j++ {
+		s := 0.0
+		for i := j * hop; i < len(win); i++ {
+			s += win[i] * win[i-j*hop]
+		}
+		out = append(out, s)
+	}
+	for j := len(out) - 1; j >= 0; j-- {
+		out[j] /= out[0]
+	}
+	return out
+}
+
+func sumSquares(x []float64) float64 {
+	s := 0.0
+	for _, v := range x {
+		s += v * v
+	}
+	return s
+}
