@@ -1,0 +1,97 @@
+package disc
+
+import "hoopsheet/core/bessel"
+
+// pair is a cosine and a sine value; the two share every radial factor.
+type pair struct{ c, s float64 }
+
+// quad is J_m(j_mn r) at one radius for four successive n.
+type quad struct{ a, b, c, d float64 }
+
+// panel holds the quads of four successive n for the radii lo, lo+1, ...;
+// below lo all four are smaller than panelFloor and are left out.
+type panel struct {
+	lo int
+	q  []quad
+}
+
+// panelFloor: leaving out values below it changes a sum of N coefficients by
+// less than 1e-22 of the largest, far below its rounding.
+const panelFloor = 0x1p-80
+
+// radialTable is J_m(j_mn r_i) for all orders of a basis at given radii.
+type radialTable struct {
+	nr     int
+	orders [][]panel // orders[m][n/4]
+}
+
+// newRadialTable evaluates the table. Radii must rise.
+func newRadialTable(b *Basis, radii []float64) *radialTable {
+	t := &radialTable{nr: len(radii), orders: make([][]panel, b.M+1)}
+	for m := range t.orders {
+		z := b.zeros[m*b.N : (m+1)*b.N]
+		for len(z) > 0 {
+			k := min(4, len(z))
+			t.orders[m] = append(t.orders[m], newPanel(m, z[:k], radii))
+			z = z[k:]
+		}
+	}
+	return t
+}
+
+// newPanel works from the rim inwards: once the largest of the four, the last,
+// is below the floor inside its turning point, the rest is smaller still.
+func newPanel(m int, z []float64, radii []float64) panel {
+	q := make([]quad, len(radii))
+	last := z[len(z)-1]
+	lo := len(radii)
+	for lo > 0 {
+		r := radii[lo-1]
+		v := bessel.JInt(m, last*r)
+		if last*r < float64(m) && v < panelFloor {
+			break
+		}
+		lo--
+		e := &q[lo]
+		put := [...]*float64{&e.a, &e.b, &e.c, &e.d}
+		for i, zi := range z[:len(z)-1] {
+			*put[i] = bessel.JInt(m, zi*r)
+		}
+		*put[len(z)-1] = v
+	}
+	return panel{lo: lo, q: q[lo:]}
+}
+
+// dot returns sum over i of q[i] v[i] for the four n and both parts.
+func (p *panel) dot(v []pair) (ac, as, bc, bs, cc, cs, dc, ds float64) {
+	q := p.q
+	v = v[p.lo:][:len(q)]
+	for i := range q {
+		t, x := &q[i], &v[i]
+		xc, xs := x.c, x.s
+		a, b, c, d := t.a, t.b, t.c, t.d
+		ac += a * xc
+		as += a * xs
+		bc += b * xc
+		bs += b * xs
+		cc += c * xc
+		cs += c * xs
+		dc += d * xc
+		ds += d * xs
+	}
+	return
+}
+
+// add adds the four functions with coefficients k[0..3] to v.
+func (p *panel) add(v []pair, k *[4]pair) {
+	q := p.q
+	v = v[p.lo:][:len(q)]
+	ac, as, bc, bs := k[0].c, k[0].s, k[1].c, k[1].s
+	cc, cs, dc, ds := k[2].c, k[2].s, k[3].c, k[3].s
+	for i := range q {
+		t, x := &q[i], &v[i]
+		a, b, c, d := t.a, t.b, t.c, t.d
+		x.c += (a*ac + b*bc) + (c*cc + d*dc)
+		x.s += (a*as + b*bs) + (c*cs + d*ds)
+	}
+}
