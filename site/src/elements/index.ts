@@ -1,0 +1,2 @@
+// Every custom element, each defined by the module that holds it.
+export {};
