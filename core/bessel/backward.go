@@ -57,9 +57,7 @@ func seqBackward(dst []float64, x float64) {
 		ah, al, bh, bl = bh, bl, h, l
 	}
 	sh, sl = addDD(2*sh, 2*sl, bh, bl)
-	nh := 1 / sh
-	p, e := twoProd(nh, sh)
-	nl := ((1 - p) - e - nh*sl) * nh
+	nh, nl := divDD(1, 0, sh, sl)
 	for k := range dst[:min(n, m+1)] {
 		dst[k] = dst[k]*nh + dst[k]*nl
 	}
@@ -103,9 +101,7 @@ func intBackward(n int, x float64) (ah, al, bh, bl float64) {
 		ah, al, bh, bl = ch, cl, oh, ol
 	}
 	sh, sl = addDD(2*sh, 2*sl, ch, cl)
-	nh := 1 / sh
-	p, e := twoProd(nh, sh)
-	nl := ((1 - p) - e - nh*sl) * nh
+	nh, nl := divDD(1, 0, sh, sl)
 	ah, al = mulDD(ah, al, nh, nl)
 	bh, bl = mulDD(bh, bl, nh, nl)
 	return ah, al, bh, bl
@@ -129,12 +125,12 @@ func realBackward(mu float64, n int, x float64) (ah, al, bh, bl float64) {
 	if float64(low) > 4*x { // growth per step at most 2(low+2 terms)/x
 		ch = startTiny
 	}
-	var sum float64
-	lam := float64(low) + mu
+	var sh, sl float64
+	lam, lamLow := twoSum(float64(low), mu)
 	for k := 2 * terms; k >= 0; k-- {
 		if k&1 == 0 {
 			j := float64(k / 2)
-			sum = (lam+2*j)*(ch+cl) + (lam+j)/(j+1)*sum
+			sh, sl = neumannTerm(lam, lamLow, j, ch, cl, sh, sl)
 		}
 		if k == 0 {
 			break
@@ -143,24 +139,36 @@ func realBackward(mu float64, n int, x float64) (ah, al, bh, bl float64) {
 		h, l := step(mh, ml, ih, il, ch, cl, oh, ol)
 		oh, ol, ch, cl = ch, cl, h, l
 	}
-	scale := prefix(lam, x) * lam / sum
+	// The prefix at lam + lamLow; its logarithmic derivative is
+	// ln(x/2) - psi(lam+1), and psi(lam+1) is about ln(lam + 1/2).
+	ph, pl, exp := prefix(lam, x)
+	pl += ph * (lamLow * math.Log(x/(2*lam+1)))
+	ph, pl = mulDD(ph, pl, lam, lamLow)
+	ph, pl = divDD(ph, pl, sh, sl)
+	ph, pl = math.Ldexp(ph, exp), math.Ldexp(pl, exp)
 	for k := low; k > n; k-- {
 		mh, ml := fastTwoSum(float64(k), mu)
 		h, l := step(mh, ml, ih, il, ch, cl, oh, ol)
 		oh, ol, ch, cl = ch, cl, h, l
 	}
-	ah, al = mulDD(ch, cl, scale, 0)
-	bh, bl = mulDD(oh, ol, scale, 0)
+	ah, al = mulDD(ch, cl, ph, pl)
+	bh, bl = mulDD(oh, ol, ph, pl)
 	return ah, al, bh, bl
 }
 
-// prefix returns (x/2)^nu / Gamma(nu+1).
-func prefix(nu, x float64) float64 {
-	if nu < 150 {
-		return math.Pow(x/2, nu) / math.Gamma(nu+1)
-	}
-	lg, _ := math.Lgamma(nu + 1)
-	return math.Exp(nu*math.Log(x/2) - lg)
+// neumannTerm is one step of Horner's rule for the sum in realBackward: it
+// returns (lambda + 2j) c + (lambda + j)/(j + 1) s, lambda = lam + lamLow.
+func neumannTerm(lam, lamLow, j, ch, cl, sh, sl float64) (h, l float64) {
+	uh, ul := twoSum(lam, 2*j)
+	ul += lamLow
+	vh, vl := twoSum(lam, j)
+	wh := vh / (j + 1)
+	p, pe := twoProd(wh, j+1)
+	wl := ((vh - p) - pe + vl + lamLow) / (j + 1)
+	p, pe = twoProd(uh, ch)
+	q, qe := twoProd(wh, sh)
+	h, l = twoSum(p, q)
+	return h, l + (pe + qe + (uh*cl + ul*ch) + (wh*sl + wl*sh))
 }
 
 // realDown returns J_nu and J_{nu+1} for nu = mu + n > x >= hankelMin: down to
@@ -187,9 +195,7 @@ func realDown(mu float64, n int, x float64) (ah, al, bh, bl float64) {
 		th, tl, _, _ = hankel(mu+1, x)
 		uh, ul = oh, ol
 	}
-	sh := th / uh
-	p, e := twoProd(sh, uh)
-	sl := (((th - p) - e) + (tl - sh*ul)) / uh
+	sh, sl := divDD(th, tl, uh, ul)
 	ah, al = mulDD(ah, al, sh, sl)
 	bh, bl = mulDD(bh, bl, sh, sl)
 	return ah, al, bh, bl

@@ -36,3 +36,10 @@ func invDD(x float64) (h, l float64) {
 	p, e := twoProd(h, x)
 	return h, ((1 - p) - e) * h
 }
+
+// divDD returns the quotient of two compensated numbers.
+func divDD(ah, al, bh, bl float64) (h, l float64) {
+	h = ah / bh
+	p, e := twoProd(h, bh)
+	return h, (((ah - p) - e) + (al - h*bl)) / bh
+}

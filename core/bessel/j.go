@@ -101,6 +101,8 @@ func jPair(nu, x float64) (ah, al, bh, bl float64) {
 		ah, al, _, _ = hankel(mu, x)
 		bh, bl, _, _ = hankel(mu+1, x)
 		return up(mu, n, x, ah, al, bh, bl)
+	case useSeries(nu, x):
+		return jSeries(nu, x), 0, jSeries(nu+1, x), 0
 	case mu == 0:
 		return intBackward(n, x)
 	case x >= hankelMin:

@@ -31,10 +31,10 @@ func phase(nu, x float64) (ch, cl, sh, sl float64) {
 	q := k + whole
 	r, e := twoSum(x-float64(q*halfPi1), -float64(q*halfPi2))
 	e -= float64(q * halfPi3)
-	f := (nu - whole) + 0.5
+	f, fe := twoSum(nu-whole, 0.5)
 	p, pe := twoProd(f, halfPiH)
 	h, l := twoSum(r, -p)
-	l += (e - pe) - float64(f*halfPiL)
+	l += (e - pe) - (float64(f*halfPiL) + fe*halfPiH)
 	h, l = fastTwoSum(h, l)
 	ch, cl, sh, sl = sinCosSmall(h, l)
 	switch int64(k) & 3 {

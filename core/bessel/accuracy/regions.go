@@ -1,0 +1,70 @@
+package accuracy
+
+import (
+	"math"
+	"math/big"
+
+	"hoopsheet/core/bessel"
+)
+
+func column(i int) func(row) *big.Float {
+	return func(r row) *big.Float { return r.v[i] }
+}
+
+func code(c string) func(row) bool {
+	return func(r row) bool { return r.code == c }
+}
+
+func both(a, b func(row) bool) func(row) bool {
+	return func(r row) bool { return a(r) && b(r) }
+}
+
+// envelope returns sqrt(J^2 + Y^2) where the functions oscillate.
+func envelope(r row) float64 {
+	if r.x < r.nu {
+		return 0
+	}
+	j, _ := r.v[0].Float64()
+	y, _ := r.v[1].Float64()
+	return math.Hypot(j, y)
+}
+
+func j(name string, promise float64, in func(row) bool) probe {
+	return probe{
+		name: name, promise: promise, in: in, want: column(0), scale: envelope,
+		got: func(r row) float64 { return bessel.J(r.nu, r.x) },
+	}
+}
+
+func jseq(name string, promise float64, in func(row) bool) probe {
+	var dst []float64
+	return probe{
+		name: name, promise: promise, in: both(in, row.whole), want: column(0), scale: envelope,
+		got: func(r row) float64 {
+			n := int(r.nu) + 1
+			if len(dst) < n {
+				dst = make([]float64, n)
+			}
+			bessel.JSeq(dst[:n], r.x)
+			return dst[n-1]
+		},
+	}
+}
+
+func upTo200(r row) bool { return r.nu <= 201 && r.x <= 250 }
+
+// cylinder holds the regions of J, J_n in sequence, and Y.
+var cylinder = []probe{
+	j("J, whole orders to 200, x to 200", 2, code("int")),
+	j("J, real orders to 200, x to 200", 2, code("real")),
+	j("J around the turning point", 2, code("turn")),
+	j("J near its zeros", 2, code("zero")),
+	j("J at the switches of method", 2, code("switch")),
+	j("J, small x or small order", 2, code("small")),
+	j("J, orders below 2, x to 60", 2, code("low")),
+	j("J, orders to 1000, x 200 to 1100", 2, code("high")),
+	j("J, orders to 1000, x 200 to 1e6", 2, code("far")),
+	j("J, all whole orders to 200", 2, both(row.whole, upTo200)),
+	jseq("JSeq, whole orders to 200", 2, upTo200),
+	jseq("JSeq, whole orders to 1000, x to 1e6", 2, func(r row) bool { return !upTo200(r) }),
+}
