@@ -111,7 +111,7 @@ func (p *Page) readHead(raw string) (string, error) {
 		case "title":
 			p.Title = value
 		case "lead":
-			p.Lead = value
+			p.Lead = strings.NewReplacer("--", "–", "'", "’").Replace(value)
 		default:
 			return "", fmt.Errorf("unknown line %q in the head: title and lead are known", key)
 		}
@@ -148,7 +148,7 @@ func renderPages(site siteDirs, pages []*Page, classes *styleClasses) error {
 		if err := markdown.Renderer().Render(&out, page.source, page.doc); err != nil {
 			return fmt.Errorf("%s.md: %w", page.Name, err)
 		}
-		page.Body = wrapTables(classes.strip(out.String()))
+		page.Body = scrollable(classes.strip(out.String()))
 	}
 	return nil
 }
@@ -183,8 +183,9 @@ func onlyTags(n ast.Node) bool {
 
 var tableTag = regexp.MustCompile(`(?s)<table>.*?</table>`)
 
-// wrapTables lets a wide table scroll sideways by itself, by keyboard too.
-func wrapTables(html string) string {
+// scrollable lets what may be too wide - tables, code - scroll sideways by itself, by keyboard too.
+func scrollable(html string) string {
+	html = strings.ReplaceAll(html, "<pre>", `<pre tabindex="0">`)
 	return tableTag.ReplaceAllStringFunc(html, func(table string) string {
 		return `<div class="table-scroll" tabindex="0" role="region" aria-label="Table">` + table + `</div>`
 	})
