@@ -1,6 +1,7 @@
 package spectrum
 
 import (
+	"cmp"
 	"fmt"
 	"math"
 	"slices"
@@ -86,7 +87,7 @@ func (a *Analyzer) Analyse(r *Recording, o Options) (Result, error) {
 	rate := r.Rate / float64(m)
 	a.climb(a.stretch, rate, &o)
 	a.limit(3 * o.MaxPeaks)
-	a.measureDecays(a.stretch, rate)
+	a.measureDecays(a.stretch, rate, &o)
 	a.choose(rate, &o)
 	a.present(&res, rate, &o)
 	return res, nil
@@ -202,9 +203,9 @@ func (res *Result) place(s strikes, n int, rate float64, o *Options) (from, to i
 
 // grade adds what the raw samples say.
 func (res *Result) grade(l level) {
-	res.Peak, res.Clipped = l.peak, l.clipped
-	if l.clipped > 0 {
-		res.note(NoteClipped, "%.2g %% of the samples are at full scale: the recording is clipped, and false peaks may appear at sums and multiples.", 100*l.clipped)
+	res.Peak, res.Clipped = l.peak, l.share
+	if l.clipped {
+		res.note(NoteClipped, "%.2g %% of the samples are at full scale: the recording is clipped, and false peaks may appear at sums and multiples.", 100*l.share)
 	}
 	if l.peak < quietPeak && l.peak > 0 {
 		res.note(NoteQuiet, "The recording is very quiet: its largest sample is %.2g of full scale.", l.peak)
@@ -249,18 +250,16 @@ func (a *Analyzer) displayRung(peaks []Peak, rate float64) *rung {
 	return best
 }
 
-// limit keeps the candidates of the best signal-to-noise ratio.
+// limit keeps the n loudest candidates.
 func (a *Analyzer) limit(n int) {
-	slices.SortFunc(a.found, func(p, q found) int {
-		switch {
-		case p.snr > q.snr:
-			return -1
-		case p.snr < q.snr:
-			return 1
-		}
-		return 0
-	})
+	a.sortByLoudness()
 	a.found = a.found[:min(n, len(a.found))]
+}
+
+// sortByLoudness puts first what is largest on average over the rung it was seen on: by that a
+// short strong line and a long weak one are compared as the display shows them.
+func (a *Analyzer) sortByLoudness() {
+	slices.SortFunc(a.found, func(p, q found) int { return cmp.Compare(q.loudness, p.loudness) })
 }
 
 func (res *Result) note(code Code, format string, args ...any) {

@@ -21,8 +21,8 @@ type Analyzer struct {
 	filterFor int
 	shifted   []complex128
 	envelope  []float64
+	noise     []float64
 	rungs     []rung
-	tops      []top
 	masked    []bool
 	found     []found
 	tones     []tone

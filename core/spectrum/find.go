@@ -10,9 +10,12 @@ import (
 // it rises above it again. Two steady tones 1.5 bins apart under Hann show at least that.
 const saddleDrop = 2.0
 
-// lobeMargin is the power ratio (6 dB) by which a weak top must pass the side lobes of a stronger
-// one: lobes of two strong tones may add.
+// lobeMargin is the power ratio (6 dB) by which a weak top must pass the side lobes of stronger ones:
+// a top may stand on a lobe, which doubles its magnitude.
 const lobeMargin = 4.0
+
+// mostTops bounds how many local maxima of a spectrum are looked into.
+const mostTops = 400
 
 // top is a local maximum of a power spectrum that stands out.
 type top struct {
@@ -32,6 +35,7 @@ func findTops(dst []top, power, floor []float64, lo, hi int, ratio, natural floa
 		}
 	}
 	slices.SortFunc(dst, func(a, b top) int { return cmp.Compare(b.power, a.power) })
+	dst = dst[:min(len(dst), mostTops)]
 	kept := dst[:0]
 	for _, t := range dst {
 		if !isSideLobe(kept, t, natural, w) {
@@ -55,14 +59,13 @@ func fallsOff(power []float64, k, step int) bool {
 	return false
 }
 
+// isSideLobe reports whether the side lobes of stronger tops, all adding up, may be the top t.
 func isSideLobe(stronger []top, t top, natural float64, w Window) bool {
+	sum := 0.0
 	for _, s := range stronger {
-		e := w.envelope(float64(t.bin-s.bin) / natural)
-		if t.power < lobeMargin*e*e*s.power {
-			return true
-		}
+		sum += math.Sqrt(s.power) * w.envelope(float64(t.bin-s.bin)/natural)
 	}
-	return false
+	return t.power < lobeMargin*sum*sum
 }
 
 // maskTops marks the bins around each top down to where its slope meets four times the floor or

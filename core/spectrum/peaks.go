@@ -56,6 +56,7 @@ type rung struct {
 	padded int
 	power  []float64
 	floor  []float64
+	tops   []top
 }
 
 func (g *rung) step(rate float64) float64    { return rate / float64(g.padded) }
@@ -65,8 +66,28 @@ func (g *rung) natural() float64             { return float64(g.padded) / float6
 // found is a candidate: where it was seen first and what has been read of it.
 type found struct {
 	reading
-	rung int
-	ring ringDown
+	rung     int
+	loudness float64 // mean amplitude over that rung
+	ring     ringDown
+}
+
+// isLobeOfFound reports whether a top of a short rung may be a side lobe of tones found on longer
+// ones. There close tones beat: their common top may all but vanish while their side lobes stay.
+func (a *Analyzer) isLobeOfFound(r reading, upTo int, w Window) bool {
+	sum := 0.0
+	for _, c := range a.found[:upTo] {
+		sum += c.loudness * w.envelope((c.f-r.f)*r.seconds)
+	}
+	return r.amplitude*r.amplitude < lobeMargin*sum*sum
+}
+
+// start is the amplitude at the start of the stretch: by the ring-down, which has seen it, and not
+// from the later average where that can be had.
+func (c *found) start() float64 {
+	if c.ring.known {
+		return c.ring.start
+	}
+	return c.amplitude
 }
 
 // climb fills the rungs of the ladder for the stretch x.
@@ -86,11 +107,12 @@ func (a *Analyzer) climb(x []float64, rate float64, o *Options) {
 		g.power = a.Power(g.power, x[:n], g.padded, o.Window)
 		step, natural := g.step(rate), rate/float64(n)
 		lo, hi := g.band(rate, o)
+		g.power = g.power[:min(len(g.power), hi+2+int(floorWidest/step))] // nothing above is looked at
 		g.floor = a.noiseFloor(g.floor, g.power, nil, step, natural)
-		a.tops = findTops(a.tops, g.power, g.floor, lo, hi, o.ratio(), g.natural(), o.Window)
-		a.masked = maskTops(a.masked, a.tops, g.power, g.floor)
+		g.tops = findTops(g.tops, g.power, g.floor, lo, hi, o.ratio(), g.natural(), o.Window)
+		a.masked = maskTops(a.masked, g.tops, g.power, g.floor)
 		g.floor = a.noiseFloor(g.floor, g.power, a.masked, step, natural)
-		a.tops = findTops(a.tops, g.power, g.floor, lo, hi, o.ratio(), g.natural(), o.Window)
+		g.tops = findTops(g.tops, g.power, g.floor, lo, hi, o.ratio(), g.natural(), o.Window)
 		a.collect(len(a.rungs)-1, rate, o)
 	}
 }
@@ -98,7 +120,7 @@ func (a *Analyzer) climb(x []float64, rate float64, o *Options) {
 // band returns the first and last bin of the frequencies asked for.
 func (g *rung) band(rate float64, o *Options) (lo, hi int) {
 	step := g.step(rate)
-	return max(1, int(math.Ceil(o.Lowest/step))), min(len(g.power)-2, int(o.Highest/step))
+	return max(1, int(math.Ceil(o.Lowest/step))), max(1, min(len(g.power)-2, int(o.Highest/step)))
 }
 
 // collect adds the tops of rung k that longer rungs have not shown.
@@ -108,12 +130,12 @@ func (a *Analyzer) collect(k int, rate float64, o *Options) {
 	}
 	g := &a.rungs[k]
 	already := len(a.found)
-	for _, t := range a.tops {
+	for _, t := range g.tops {
 		r, ok := g.read(t.bin, rate, o.Window)
-		if !ok || r.f*g.seconds(rate) < fewestPeriods || a.isFound(r.f, apartBins*r.natural, already) {
+		if !ok || r.f*g.seconds(rate) < fewestPeriods || a.isFound(r.f, apartBins*r.natural, already) || a.isLobeOfFound(r, already, o.Window) {
 			continue
 		}
-		a.found = append(a.found, found{reading: r, rung: k})
+		a.found = append(a.found, found{reading: r, rung: k, loudness: r.amplitude})
 	}
 }
 
@@ -136,6 +158,7 @@ func (g *rung) read(k int, rate float64, w Window) (reading, bool) {
 	n := float64(g.n)
 	return reading{
 		tone:      tone{f: (float64(k) + offset) * g.step(rate), amplitude: 2 * math.Sqrt(power) / (n * m.wg)},
+		offset:    offset,
 		snr:       power / g.floor[k],
 		noiseSD:   math.Sqrt(g.floor[k] / (n * m.ww)),
 		uParabola: w.parabolaBias() / math.Sqrt2 * rate / n,
@@ -144,18 +167,37 @@ func (g *rung) read(k int, rate float64, w Window) (reading, bool) {
 	}, true
 }
 
-// measureDecays finds the ring-down of every candidate.
-func (a *Analyzer) measureDecays(x []float64, rate float64) {
+// measureDecays finds the ring-down of every candidate: first as if it were alone, then knowing
+// of the others.
+func (a *Analyzer) measureDecays(x []float64, rate float64, o *Options) {
 	whole := float64(len(x)) / rate
-	for i := range a.found {
-		c := &a.found[i]
-		// Hann frames of length L null what is 2/L away and hold it 31 dB down beyond; but a
-		// line needs several frames within the time it is heard.
-		length := min(max(2.5/a.nearest(i), c.seconds/8), c.seconds/3)
-		length = min(max(length, 4/c.f), whole/3)
-		c.ring = a.ringDown(x, rate, c.f, length, c.noiseSD*c.noiseSD)
-		if c.ring.known {
-			c.decay = max(0, c.ring.decay)
+	for pass := range 2 {
+		a.tones = a.tones[:0]
+		for i := range a.found {
+			c := &a.found[i]
+			t := c.tone
+			t.amplitude *= o.Window.steadyMoments().wg / o.Window.moments(min(c.decay*c.seconds, mostDecay)).wg
+			a.tones = append(a.tones, t)
+		}
+		for i := range a.found {
+			c := &a.found[i]
+			// Hann frames of length L null what is 2/L away and hold it 31 dB down beyond; but a
+			// line needs several frames within the time it is heard.
+			length := min(max(2.5/a.nearest(i), c.seconds/8), c.seconds/3)
+			length = min(max(length, 4/c.f), whole/3)
+			others := a.tones
+			if pass == 0 {
+				others = nil
+			}
+			r := a.ringDown(x, rate, i, c.f, length, c.noiseSD*c.noiseSD, others)
+			if pass == 0 || r.known {
+				c.ring = r
+			}
+		}
+		for i := range a.found {
+			if c := &a.found[i]; c.ring.known {
+				c.decay = max(0, c.ring.decay)
+			}
 		}
 	}
 }
@@ -173,11 +215,10 @@ func (a *Analyzer) nearest(i int) float64 {
 
 // choose reads every candidate again on the rung where its uncertainty is smallest.
 func (a *Analyzer) choose(rate float64, o *Options) {
-	a.tones = a.tones[:0]
-	for i := range a.found {
+	for i := range a.tones {
 		c := &a.found[i]
-		c.amplitude *= o.Window.steadyMoments().wg / o.Window.moments(c.decay*c.seconds).wg
-		a.tones = append(a.tones, c.tone)
+		c.amplitude *= o.Window.steadyMoments().wg / o.Window.moments(min(c.decay*c.seconds, mostDecay)).wg
+		a.tones[i] = c.tone
 	}
 	for i := range a.found {
 		c := &a.found[i]
@@ -201,7 +242,7 @@ func (a *Analyzer) choose(rate float64, o *Options) {
 func (a *Analyzer) atRung(i, k int, rate float64, o *Options) reading {
 	c, g := a.found[i], &a.rungs[k]
 	none := reading{uNoise: math.Inf(1)}
-	bin, ok := g.nearestTop(c.f/g.step(rate), max(c.natural, g.step(rate)*g.natural())/g.step(rate))
+	bin, ok := g.nearestTop(c.f/g.step(rate), max(c.natural, rate/float64(g.n))/g.step(rate))
 	if !ok || c.f*g.seconds(rate) < fewestPeriods {
 		return none
 	}
@@ -209,30 +250,37 @@ func (a *Analyzer) atRung(i, k int, rate float64, o *Options) reading {
 	if !ok {
 		return none
 	}
-	m := o.Window.moments(c.decay * r.seconds)
+	fall := c.decay * r.seconds
+	m := o.Window.moments(fall)
 	r.decay = c.decay
+	if c.ring.known {
+		// The lobe's shape is known, and with it what the parabola gets wrong.
+		bins := g.natural()
+		wrong := o.Window.parabolaError(fall, r.offset, bins)
+		other := o.Window.parabolaError(max(0, c.ring.decay+c.ring.u)*r.seconds, r.offset, bins)
+		r.f -= wrong * g.step(rate)
+		r.uParabola = math.Abs(other-wrong) * g.step(rate)
+	}
 	r.amplitude *= o.Window.steadyMoments().wg / m.wg
 	r.uNoise = noiseUncertainty(r.amplitude, r.noiseSD, g.n, m) * r.natural
 	r.uNeighbours = neighbourUncertainty(r.tone, a.tones, i, r.seconds, o.Window) * r.natural
 	return r
 }
 
-// nearestTop returns the highest local maximum within the given distance of a place, in bins.
+// nearestTop returns the strongest of the rung's tops within the given distance of a place, in bins.
 func (g *rung) nearestTop(place, within float64) (int, bool) {
-	best, ok := 0, false
-	lo, hi := max(1, int(place-within)), min(len(g.power)-2, int(place+within)+1)
-	for k := lo; k <= hi; k++ {
-		if g.power[k] > g.power[k-1] && g.power[k] >= g.power[k+1] && (!ok || g.power[k] > g.power[best]) {
-			best, ok = k, true
+	for _, t := range g.tops {
+		if math.Abs(float64(t.bin)-place) <= within {
+			return t.bin, true
 		}
 	}
-	return best, ok
+	return 0, false
 }
 
-// peaks turns candidates into peaks: at most o.MaxPeaks of the best signal-to-noise ratio, by
-// rising frequency. It returns how many were left out.
+// peaks turns candidates into peaks: the o.MaxPeaks loudest at most, by rising
+// frequency. It returns how many were left out.
 func (a *Analyzer) peaks(n int, rate float64, o *Options) (out []Peak, left int) {
-	slices.SortFunc(a.found, func(p, q found) int { return cmp.Compare(q.snr, p.snr) })
+	a.sortByLoudness()
 	kept := a.found[:0]
 	for _, c := range a.found {
 		same := func(k found) bool { return math.Abs(k.f-c.f) < max(k.natural, c.natural)/2 }
@@ -245,13 +293,14 @@ func (a *Analyzer) peaks(n int, rate float64, o *Options) (out []Peak, left int)
 	out = make([]Peak, 0, len(kept))
 	largest := 0.0
 	for _, c := range kept {
-		largest = max(largest, c.amplitude)
+		largest = max(largest, c.start())
 	}
 	for _, c := range kept {
+		start := c.start()
 		p := Peak{
-			Frequency: c.f, FrequencyU: c.u(), Amplitude: c.amplitude,
+			Frequency: c.f, FrequencyU: c.u(), Amplitude: start,
 			Bound: CramerRao(c.amplitude, c.decay, c.noiseSD, n, rate),
-			Level: relative(c.amplitude*c.amplitude, largest*largest),
+			Level: relative(start*start, largest*largest),
 			SNR:   relative(c.snr, 1), Residual: c.ring.residual, Seconds: c.seconds,
 		}
 		p.judge(c.ring, float64(n)/rate)

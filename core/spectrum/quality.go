@@ -12,7 +12,8 @@ const quietRise = 100.0
 // level describes the stretch used.
 type level struct {
 	peak    float64 // largest magnitude, in parts of full scale
-	clipped float64 // share of samples at full scale
+	share   float64 // of samples at full scale
+	clipped bool    // two of them in a row: one alone may be a recording scaled to its peak
 }
 
 // measure looks at the raw samples: every channel that went into the mix counts.
@@ -20,16 +21,20 @@ func measure(channels [][]float64, from, to int, fullScale float64) level {
 	var l level
 	at := 0
 	for _, c := range channels {
+		before := false
 		for _, v := range c[from:to] {
 			m := math.Abs(v)
 			l.peak = max(l.peak, m)
-			if m >= fullScale {
+			full := m >= fullScale
+			if full {
 				at++
+				l.clipped = l.clipped || before
 			}
+			before = full
 		}
 	}
 	if n := (to - from) * len(channels); n > 0 {
-		l.clipped = float64(at) / float64(n)
+		l.share = float64(at) / float64(n)
 	}
 	return l
 }

@@ -15,8 +15,8 @@ type ringDown struct {
 	known    bool    // enough of the envelope stands out of the noise
 	decay    float64 // d in exp(-d t), 1/s; negative if it grows
 	u        float64 // standard uncertainty of decay, 1/s
+	start    float64 // amplitude at the start
 	residual float64 // rms of the envelope about the straight line, dB
-	heard    float64 // how long the envelope stays above the noise, s
 }
 
 // ringDown fits the decay rate of the tone at f in x: the samples are shifted by -f, averaged
@@ -28,8 +28,9 @@ type ringDown struct {
 // by weighted least squares, twice reweighted. noise is the variance of a sample of the white
 // noise that would give the floor met at f. The uncertainty follows from the covariance of n_m
 // (frames overlap) and is widened where the residuals are larger than noise makes them, as
-// beating neighbours do.
-func (a *Analyzer) ringDown(x []float64, rate, f, length, noise float64) ringDown {
+// beating neighbours do. What leaks in from the other tones given (all but number self) counts as
+// noise of its own in each frame.
+func (a *Analyzer) ringDown(x []float64, rate float64, self int, f, length, noise float64, others []tone) ringDown {
 	// The logarithm of a magnitude at a power ratio r has the bias E1(r)/2, under 0.002 at
 	// frameSNR, and the variance 1/(2 r): Rice, Bell Syst. Tech. J. 24 (1945) 46-156, sec. 3.10.
 	hop := max(1, int(length*rate/framesApart))
@@ -49,8 +50,14 @@ func (a *Analyzer) ringDown(x []float64, rate, f, length, noise float64) ringDow
 		}
 		a.envelope[m] = math.Log(max(re*re+im*im, leastPower)) / 2
 	}
-	frameNoise := max(noise*sumSquares(win), leastPower)
-	fit := envelopeFit{y: a.envelope, step: float64(hop) / rate, noise: frameNoise}
+	step := float64(hop) / rate
+	a.noise = resize(a.noise, frames)
+	white := max(noise*sumSquares(win), leastPower)
+	for m := range a.noise {
+		a.noise[m] = white
+	}
+	addLeaks(a.noise, others, self, f, float64(n)/rate, step, n)
+	fit := envelopeFit{y: a.envelope, step: step, noise: a.noise}
 	if !fit.start() {
 		return ringDown{}
 	}
@@ -60,8 +67,30 @@ func (a *Analyzer) ringDown(x []float64, rate, f, length, noise float64) ringDow
 		}
 	}
 	r := fit.result(overlap(win, hop))
-	r.heard = float64(fit.used)*fit.step + float64(n-hop)/rate
+	w := Hann.transform(r.decay*float64(n)/rate, 0)
+	r.start = 2 * math.Exp(fit.b) / (float64(n) * real(w))
 	return r
+}
+
+// addLeaks adds to each frame's noise what the other tones put into a frame of n samples, seconds
+// long, at f: |A n W / 2|^2 with W the decaying tone's lobe at that distance.
+func addLeaks(noise []float64, others []tone, self int, f, seconds, step float64, n int) {
+	for j, o := range others {
+		for _, distance := range []float64{o.f - f, o.f + f} {
+			if j == self && distance == 0 {
+				continue
+			}
+			c := o.decay * seconds
+			w := Hann.transform(c, distance*seconds)
+			leak := o.amplitude * float64(n) / 2
+			p := leak * leak * (real(w)*real(w) + imag(w)*imag(w))
+			keep := math.Exp(-2 * o.decay * step)
+			for m := range noise {
+				noise[m] += p
+				p *= keep
+			}
+		}
+	}
 }
 
 // heterodyne writes x[i] exp(-i omega i) to a.shifted.
@@ -87,7 +116,7 @@ func (a *Analyzer) heterodyne(x []float64, omega float64) {
 type envelopeFit struct {
 	y     []float64 // ln |z|
 	step  float64   // s
-	noise float64   // E |n|^2
+	noise []float64 // E |n|^2
 	used  int
 	b, d  float64
 	tm    float64 // weighted mean time
@@ -96,22 +125,18 @@ type envelopeFit struct {
 
 // start takes the frames up to where the measured envelope first meets the noise.
 func (f *envelopeFit) start() bool {
-	limit := math.Log(frameSNR*f.noise) / 2
-	for f.used = 0; f.used < len(f.y) && f.y[f.used] > limit; f.used++ {
-	}
-	if f.used < fewestFrames {
-		return false
-	}
-	f.solve(func(m int) float64 { return f.y[m] })
-	return true
+	return f.fit(func(m int) float64 { return f.y[m] })
 }
 
 // reweight takes weights and the last frame from the line itself, which noise does not shake.
 func (f *envelopeFit) reweight() bool {
-	limit := math.Log(frameSNR*f.noise) / 2
 	b, d := f.b, f.d
-	line := func(m int) float64 { return b - d*float64(m)*f.step }
-	for f.used = 0; f.used < len(f.y) && line(f.used) > limit; f.used++ {
+	return f.fit(func(m int) float64 { return b - d*float64(m)*f.step })
+}
+
+// fit uses the frames up to where the given line is no longer frameSNR above the noise.
+func (f *envelopeFit) fit(line func(int) float64) bool {
+	for f.used = 0; f.used < len(f.y) && f.ratio(line, f.used) > frameSNR; f.used++ {
 	}
 	if f.used < fewestFrames {
 		return false
@@ -120,15 +145,19 @@ func (f *envelopeFit) reweight() bool {
 	return true
 }
 
-func (f *envelopeFit) weight(lnz float64) float64 {
-	r := math.Exp(2*lnz) / f.noise
-	return 1 / (1/r + 1.0/weightCap)
+// ratio is the power over the noise in frame m, for the magnitude on the line.
+func (f *envelopeFit) ratio(line func(int) float64, m int) float64 {
+	return math.Exp(2*line(m)) / f.noise[m]
+}
+
+func (f *envelopeFit) weight(line func(int) float64, m int) float64 {
+	return 1 / (1/f.ratio(line, m) + 1.0/weightCap)
 }
 
 func (f *envelopeFit) solve(line func(int) float64) {
 	var w, wt, wy float64
 	for m := range f.used {
-		k := f.weight(line(m))
+		k := f.weight(line, m)
 		w += k
 		wt += k * float64(m) * f.step
 		wy += k * f.y[m]
@@ -138,7 +167,7 @@ func (f *envelopeFit) solve(line func(int) float64) {
 	var sty float64
 	f.stt = 0
 	for m := range f.used {
-		k, t := f.weight(line(m)), float64(m)*f.step-f.tm
+		k, t := f.weight(line, m), float64(m)*f.step-f.tm
 		f.stt += k * t * t
 		sty += k * t * (f.y[m] - ym)
 	}
@@ -149,8 +178,8 @@ func (f *envelopeFit) solve(line func(int) float64) {
 // result works out the uncertainty; correlation[j] is that of the noise of frames j apart.
 func (f *envelopeFit) result(correlation []float64) ringDown {
 	line := func(m int) float64 { return f.b - f.d*float64(m)*f.step }
-	share := func(m int) float64 { // d's derivative by y[m], over the magnitude of the signal there
-		return f.weight(line(m)) * (float64(m)*f.step - f.tm) / f.stt * math.Exp(-line(m))
+	share := func(m int) float64 { // d's derivative by y[m], times the relative noise there
+		return f.weight(line, m) * (float64(m)*f.step - f.tm) / f.stt / math.Sqrt(2*f.ratio(line, m))
 	}
 	variance, squares, plain := 0.0, 0.0, 0.0
 	for m := range f.used {
@@ -160,9 +189,8 @@ func (f *envelopeFit) result(correlation []float64) ringDown {
 		}
 		r := f.y[m] - line(m)
 		plain += r * r
-		squares += r * r * 2 * math.Exp(2*line(m)) / f.noise
+		squares += r * r * 2 * f.ratio(line, m)
 	}
-	variance *= f.noise / 2
 	if s := squares / float64(f.used-2); s > misfit {
 		variance *= s
 	}

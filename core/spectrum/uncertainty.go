@@ -40,13 +40,14 @@ type tone struct {
 // reading is what one rung says about a tone, with the parts of its uncertainty in Hz.
 type reading struct {
 	tone
-	snr          float64 // power over the floor at the top
-	noiseSD      float64 // white noise of this standard deviation a sample gives the floor here
-	uNoise       float64
-	uParabola    float64
-	uNeighbours  float64
-	seconds      float64
-	natural, bin float64 // Hz: natural bin width, and position
+	snr         float64 // power over the floor at the top
+	noiseSD     float64 // white noise of this standard deviation a sample gives the floor here
+	uNoise      float64
+	uParabola   float64
+	uNeighbours float64
+	seconds     float64
+	natural     float64 // Hz, bin width of the unpadded length
+	offset      float64 // what logParabola gave, in bins
 }
 
 func (r reading) u() float64 {

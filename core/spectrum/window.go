@@ -22,12 +22,21 @@ func (w Window) terms() []float64 {
 	// Harris, Proc. IEEE 66 (1978) 51-83, table 1 (four-term, minimum side lobe).
 	switch w {
 	case BlackmanHarris:
-		return []float64{0.35875, 0.48829, 0.14128, 0.01168}
+		return blackmanHarrisTerms
 	case Rectangular:
-		return []float64{1}
+		return rectangularTerms
 	}
-	return []float64{0.5, 0.5}
+	return hannTerms
 }
+
+var (
+	hannTerms           = []float64{0.5, 0.5}
+	blackmanHarrisTerms = []float64{0.35875, 0.48829, 0.14128, 0.01168}
+	rectangularTerms    = []float64{1}
+)
+
+// blackmanHarrisLobes is -92 dB, the highest side lobe in Harris's table 1.
+const blackmanHarrisLobes = 2.5118864315095823e-5
 
 // halfLobe is the distance, in bins of the unpadded length, from the main lobe's top to its foot.
 func (w Window) halfLobe() float64 { return float64(len(w.terms())) }
@@ -89,7 +98,7 @@ func (w Window) envelope(delta float64) float64 {
 	case Rectangular:
 		return 1 / (math.Pi * d)
 	case BlackmanHarris:
-		return math.Pow(10, -92.0/20) // Harris 1978, table 1
+		return blackmanHarrisLobes
 	}
 	return 1 / (math.Pi * d * (d*d - 1)) // |sinc(d)/(1-d^2)|, sine replaced by 1
 }

@@ -44,6 +44,18 @@ def encode(x, bits, floating, rng):
     return np.frombuffer(raw, np.uint8).reshape(-1, 8)[:, :width].tobytes()
 
 
+def decode(data, bits, floating):
+    """The samples that are really in the file, for the truth."""
+    if floating:
+        return np.frombuffer(data, '<f4' if bits == 32 else '<f8').astype(float)
+    raw = np.frombuffer(data, np.uint8).reshape(-1, bits // 8).astype(np.int64)
+    if bits == 8:
+        return (raw[:, 0] - 128) / 128.0
+    value = sum(raw[:, i] << (8 * i) for i in range(bits // 8))
+    value = np.where(value >= 1 << (bits - 1), value - (1 << bits), value)
+    return value / 2.0 ** (bits - 1)
+
+
 def chunk(name, body):
     return name + struct.pack('<I', len(body)) + body + b'\0' * (len(body) & 1)
 
@@ -68,9 +80,12 @@ def save(name, x, rate, bits, floating=False, extensible=False, extra=b'', seed=
     if x.ndim == 1:
         x = x[:, None]
     data = encode(x, bits, floating, np.random.default_rng(seed))
+    back = decode(data, bits, floating).reshape(x.shape)
     with open(os.path.join(HERE, name), 'wb') as out:
         out.write(riff(fmt(bits, floating, x.shape[1], rate, extensible), extra, chunk(b'data', data)))
     TRUTH[name] = dict(rate=rate, channels=x.shape[1], bits=bits, float=floating, frames=x.shape[0],
+                       sum=list(back.sum(axis=0)), squares=list((back ** 2).sum(axis=0)),
+                       last=list(back[-1]),
                        **(truth or {}))
 
 
