@@ -34,12 +34,8 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 	result := &ModesResult{
 		ArealDensity: sigma,
 		WaveSpeed:    math.Sqrt(doc.Tension.Nominal / sigma),
-		Assumptions: []string{
-			"The sheet is ideal: limp, evenly tensioned at the nominal tension, and fixed at the rim.",
-			"The air is not taken into account; neither are stiffness, a cavity or attached masses.",
-			"The motion is small, so that the tension stays the same.",
-		},
-		Cautions: []string{},
+		Assumptions:  idealAssumptions(),
+		Cautions:     []string{},
 	}
 	result.Cautions = append(result.Cautions, airCautions(doc, result)...)
 	for _, mode := range modes.Ideal(doc.Ring.Radius, doc.Tension.Nominal, sigma, request.Count) {
@@ -66,7 +62,7 @@ func distances(frequency float64, lines []diaphragm.Line) []Distance {
 			Line:          line.Name,
 			LineFrequency: line.Frequency,
 			Relative:      relative,
-			Clearance:     Clearance(clearance),
+			Clearance:     clearance,
 		})
 	}
 	slices.SortStableFunc(list, func(a, b Distance) int {

@@ -1,2 +1,5 @@
 // Every custom element, each defined by the module that holds it.
-export {};
+import './bar.js';
+import './modes.js';
+import './respond.js';
+import './specify.js';

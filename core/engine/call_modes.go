@@ -1,0 +1,95 @@
+package engine
+
+import (
+	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/modes"
+)
+
+// ModesRequest asks for the modes of the ideal sheet.
+type ModesRequest struct {
+	Document diaphragm.Diaphragm `json:"document"`
+	// Count of modes to list, lowest first; 1 to 400.
+	Count int `json:"count"`
+}
+
+// ModesResult is the mode table.
+type ModesResult struct {
+	// ArealDensity sigma, kg/m^2, and WaveSpeed sqrt(T/sigma), m/s.
+	ArealDensity float64 `json:"arealDensity"`
+	WaveSpeed    float64 `json:"waveSpeed"`
+	// AirDensity, kg/m^3, and MassRatio rho a / sigma.
+	AirDensity  float64  `json:"airDensity"`
+	MassRatio   float64  `json:"massRatio"`
+	Modes       []Mode   `json:"modes"`
+	Assumptions []string `json:"assumptions"`
+	Cautions    []string `json:"cautions"`
+}
+
+// Mode is one line of the table.
+type Mode struct {
+	// M nodal diameters; N nodal circles counting the rim.
+	M int `json:"m"`
+	N int `json:"n"`
+	// Frequency of the ideal sheet, Hz.
+	Frequency float64 `json:"frequency"`
+	// Zero is j_mn, the n-th positive zero of J_m.
+	Zero float64 `json:"zero"`
+	// CircleRadii of the nodal circles inside the rim, r/a, inside out.
+	CircleRadii []float64 `json:"circleRadii"`
+	// NodalLines in words.
+	NodalLines string `json:"nodalLines"`
+	// Distances to every line to keep clear of, nearest first.
+	Distances []Distance `json:"distances"`
+	// BelowLowest is true when the mode lies below the lowest frequency
+	// allowed.
+	BelowLowest bool `json:"belowLowest"`
+}
+
+// Distance is how far a mode is from one line to keep clear of.
+type Distance struct {
+	Line string `json:"line"`
+	// LineFrequency, Hz.
+	LineFrequency float64 `json:"lineFrequency"`
+	// Relative is (mode - line) / line.
+	Relative float64 `json:"relative"`
+	// Clearance is hit within the line's half-width, near within twice the
+	// half-width, clear beyond.
+	Clearance modes.Clearance `json:"clearance"`
+}
+
+// ShapeRequest asks for the drawing of one mode.
+type ShapeRequest struct {
+	M int `json:"m"`
+	N int `json:"n"`
+	// Orientation of the first antinode, rad.
+	Orientation float64 `json:"orientation"`
+	// Size of the square raster, pixels a side, 16 to 1024.
+	Size int `json:"size"`
+	// Section through the centre at this angle, rad, with SectionPoints points
+	// from rim to rim.
+	SectionAngle  float64 `json:"sectionAngle"`
+	SectionPoints int     `json:"sectionPoints"`
+}
+
+// ShapeResult is the mode shape, scaled to a largest value of one.
+type ShapeResult struct {
+	// Raster rows from top to bottom, left to right, of a square around the
+	// unit disc; NaN outside the disc.
+	Raster Numbers `json:"raster"`
+	// Section displacement from the far rim (-1) through the centre to +1.
+	Section Numbers `json:"section"`
+	// CircleRadii of the nodal circles inside the rim, r/a.
+	CircleRadii []float64 `json:"circleRadii"`
+	// DiameterAngles of the nodal diameters, rad, 0 <= angle < pi.
+	DiameterAngles []float64 `json:"diameterAngles"`
+	// Lobes are the local extremes, for the + and - signs.
+	Lobes []Lobe `json:"lobes"`
+}
+
+// Lobe is one local extreme of a shape.
+type Lobe struct {
+	Radius float64 `json:"radius"`
+	Angle  float64 `json:"angle"`
+	// Value, -1 to 1.
+	Value float64 `json:"value"`
+}

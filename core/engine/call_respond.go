@@ -1,0 +1,81 @@
+package engine
+
+import (
+	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/response"
+)
+
+// RespondRequest asks what the ideal sheet does after its initial values.
+type RespondRequest struct {
+	Document     diaphragm.Diaphragm `json:"document"`
+	Displacement response.Shape      `json:"displacement"`
+	Velocity     response.Shape      `json:"velocity"`
+	// Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
+	Orders  int `json:"orders"`
+	Circles int `json:"circles"`
+	// Duration of the computed time, s; Frames evenly spaced over it.
+	Duration float64 `json:"duration"`
+	Frames   int     `json:"frames"`
+	// Radii and Angles set the display grid: radii j/(Radii-1), angles
+	// 2 pi i/Angles.
+	Radii  int              `json:"radii"`
+	Angles int              `json:"angles"`
+	Points []response.Point `json:"points"`
+}
+
+// RespondResult is the motion, ready to draw.
+type RespondResult struct {
+	// Times of the frames, s.
+	Times Numbers `json:"times"`
+	// Motion holds the frames one after another, each Radii x Angles values of
+	// displacement in m, a radius at a time.
+	Motion Numbers `json:"motion"`
+	// Histories holds one list per point; HistoryTimes belong to all, s.
+	HistoryTimes Numbers   `json:"historyTimes"`
+	Histories    []History `json:"histories"`
+	// Travel is the largest |w| anywhere within the duration.
+	Travel Travel `json:"travel"`
+	// Envelope is the largest |w| on the display grid over all frames, m.
+	Envelope Numbers `json:"envelope"`
+	// MissedDisplacement and MissedVelocity are the shares (0 to 1) of the
+	// initial potential and kinetic energy that the chosen modes leave out;
+	// MissedEnergy is the share of both together.
+	MissedDisplacement float64 `json:"missedDisplacement"`
+	MissedVelocity     float64 `json:"missedVelocity"`
+	MissedEnergy       float64 `json:"missedEnergy"`
+	// Energy is the initial energy, J, of the ideal sheet.
+	Energy float64 `json:"energy"`
+	// Period of mode (0,1), s, for choosing a duration.
+	Period float64 `json:"period"`
+	// RingDown is the time to -60 dB at the damping ratio of mode (0,1), s; 0
+	// without damping.
+	RingDown float64 `json:"ringDown"`
+	// Strongest lists the modes that carry most energy, largest first.
+	Strongest   []ModeShare `json:"strongest"`
+	Assumptions []string    `json:"assumptions"`
+	Warnings    []string    `json:"warnings"`
+}
+
+// History is the displacement of one point against time.
+type History struct {
+	Point  response.Point `json:"point"`
+	Values Numbers        `json:"values"`
+}
+
+// Travel is the largest displacement found, with its place and time.
+type Travel struct {
+	// Displacement with its sign, m.
+	Displacement float64        `json:"displacement"`
+	At           response.Point `json:"at"`
+	// Time, s.
+	Time float64 `json:"time"`
+}
+
+// ModeShare is the share of the initial energy that one mode carries.
+type ModeShare struct {
+	M     int     `json:"m"`
+	N     int     `json:"n"`
+	Share float64 `json:"share"`
+	// Frequency of the mode, Hz.
+	Frequency float64 `json:"frequency"`
+}

@@ -1,0 +1,106 @@
+/** What the page Respond remembers of its controls: texts as typed, so that nothing is lost or converted. */
+import type { Dimension, ReadItem, ShapeKind } from '../contract.js';
+
+export interface ShapeSetup {
+  kind: ShapeKind;
+  peak: string;
+  radius: string;
+  angle: string;
+  width: string;
+  formula: string;
+}
+
+export interface PointSetup {
+  radius: string;
+  angle: string;
+}
+
+export interface Setup {
+  displacement: ShapeSetup;
+  velocity: ShapeSetup;
+  duration: string;
+  orders: number;
+  points: PointSetup[];
+}
+
+export type Part = 'displacement' | 'velocity';
+
+export const parts: readonly Part[] = ['displacement', 'velocity'];
+
+export const mostPoints = 4;
+
+export const modeChoices = [8, 12, 16, 24, 32];
+
+export function firstSetup(): Setup {
+  return {
+    displacement: { kind: 'point', peak: '5 mm', radius: '0.4', angle: '30°', width: '0.1', formula: '(1 - r^2) * x' },
+    velocity: { kind: 'rest', peak: '1 m/s', radius: '0', angle: '0°', width: '0.2', formula: '1 - r^2' },
+    duration: '',
+    orders: 16,
+    points: [{ radius: '0', angle: '0°' }, { radius: '0.5', angle: '120°' }],
+  };
+}
+
+/** Which controls a shape has. */
+export function controlsOf(kind: ShapeKind): { peak: boolean; place: boolean; formula: boolean } {
+  return {
+    peak: kind !== 'rest',
+    place: kind === 'point' || kind === 'bump' || kind === 'patch',
+    formula: kind === 'formula',
+  };
+}
+
+export const kindNames: Readonly<Record<Part, Readonly<Partial<Record<ShapeKind, string>>>>> = {
+  displacement: {
+    rest: 'flat',
+    bulge: 'bulged by pressure, then released',
+    point: 'pulled at a point, then let go',
+    bump: 'a smooth bump',
+    formula: 'a formula',
+  },
+  velocity: {
+    rest: 'at rest',
+    patch: 'struck over a round patch',
+    bump: 'struck over a smooth bump',
+    bulge: 'moving as 1 − r²',
+    formula: 'a formula',
+  },
+};
+
+/** Every typed text, with what it is to be read as. */
+export function readItems(setup: Setup): ReadItem[] {
+  const items: ReadItem[] = [];
+  const item = (field: string, name: string, text: string, dimension: Dimension, unit: string, low = 0, high = 0): void => {
+    items.push({ field, name, text, dimension, unit, low, high });
+  };
+  for (const part of parts) {
+    const shape = setup[part];
+    const has = controlsOf(shape.kind);
+    if (has.peak) {
+      if (part === 'displacement') {
+        item('displacement.peak', 'height', shape.peak, 'length', 'mm', -10, 10);
+      } else {
+        item('velocity.peak', 'speed', shape.peak, 'speed', 'm/s', -1000, 1000);
+      }
+    }
+    if (has.place) {
+      item(`${part}.radius`, 'distance from the centre', shape.radius, 'ratio', '', 0, 1);
+      item(`${part}.angle`, 'angle', shape.angle, 'angle', '°');
+      item(`${part}.width`, 'size', shape.width, 'ratio', '', 0, 1);
+    }
+  }
+  if (setup.duration.trim() !== '') {
+    item('duration', 'time shown', setup.duration, 'time', 'ms');
+  }
+  setup.points.forEach((point, i) => {
+    item(`points.${i}.radius`, `distance of point ${i + 1} from the centre`, point.radius, 'ratio', '', 0, 1);
+    item(`points.${i}.angle`, `angle of point ${i + 1}`, point.angle, 'angle', '°');
+  });
+  return items;
+}
+
+/** A place on the drawing as texts. */
+export function placeTexts(radius: number, angle: number): PointSetup {
+  const degrees = Math.round((angle * 180) / Math.PI);
+  return { radius: String(Math.round(Math.min(0.98, radius) * 100) / 100), angle: `${degrees < 0 ? degrees + 360 : degrees}°` };
+}
