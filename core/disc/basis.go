@@ -95,33 +95,12 @@ func halfPiEps(m int) float64 {
 
 // Energy returns the integral over the disc of the square of the function with
 // these coefficients (Parseval). It panics if len(coef) is not Len().
-func (b *Basis) Energy(coef []float64) float64 {
-	if len(coef) != b.Len() {
-		panic(errLength)
-	}
-	var sum float64
-	for m := 0; m <= b.M; m++ {
-		sum += b.orderEnergy(coef, m)
-	}
-	return sum
-}
+func (b *Basis) Energy(coef []float64) float64 { return b.Roughness(coef, 0) }
 
-// orderEnergy is the share of order m in Energy.
-func (b *Basis) orderEnergy(coef []float64, m int) float64 {
-	var sum float64
-	for k := m * b.N; k < (m+1)*b.N; k++ {
-		c, s := coef[2*k], coef[2*k+1]
-		if m == 0 {
-			s = 0
-		}
-		sum += (c*c + s*s) * b.slope[k] * b.slope[k]
-	}
-	return halfPiEps(m) * sum
-}
-
-// LaplacianNorm returns the square root of the integral over the disc of the
-// square of the Laplacian of the function with these coefficients.
-func (b *Basis) LaplacianNorm(coef []float64) float64 {
+// Roughness returns the integral over the disc of f^2 (p = 0), |grad f|^2 (p = 1)
+// or (Laplacian f)^2 (p = 2) for the function with these coefficients: the sum
+// of j_mn^(2p) Norm(m, n) (a_mn^2 + b_mn^2).
+func (b *Basis) Roughness(coef []float64, p int) float64 {
 	if len(coef) != b.Len() {
 		panic(errLength)
 	}
@@ -131,7 +110,11 @@ func (b *Basis) LaplacianNorm(coef []float64) float64 {
 		if k < b.N {
 			s = 0
 		}
-		sum += halfPiEps(k/b.N) * (c*c + s*s) * b.slope[k] * b.slope[k] * (z * z) * (z * z)
+		v := halfPiEps(k/b.N) * (c*c + s*s) * b.slope[k] * b.slope[k]
+		for range p {
+			v *= z * z
+		}
+		sum += v
 	}
-	return math.Sqrt(sum)
+	return sum
 }

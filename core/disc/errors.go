@@ -9,6 +9,8 @@ const (
 	errFewRadii  = "disc: fewer radii than the band needs (see MinRadii)"
 	errLength    = "disc: slice of wrong length"
 	errRadius    = "disc: radius outside 0 <= r <= 1"
-	errRule      = "disc: a radial rule needs at least one radius and -1 < alpha <= 2"
+	errRule      = "disc: a radial rule needs at least one radius and 0 <= alpha <= 2"
+	errEdge      = "disc: no such family of shapes here"
+	errForm      = "disc: the form does not exist: p must be at most 2 nu"
 	errIndex     = "disc: order, zero or part outside the band"
 )

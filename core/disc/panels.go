@@ -39,6 +39,24 @@ func newRadialTable(b *Basis, radii []float64) *radialTable {
 	return t
 }
 
+// value returns J_m(j_mn r_i), or 0 where it was left out.
+func (t *radialTable) value(m, n, i int) float64 {
+	p := &t.orders[m][(n-1)/4]
+	if i < p.lo {
+		return 0
+	}
+	q := &p.q[i-p.lo]
+	switch (n - 1) % 4 {
+	case 0:
+		return q.a
+	case 1:
+		return q.b
+	case 2:
+		return q.c
+	}
+	return q.d
+}
+
 // newPanel works from the rim inwards: once the largest of the four, the last,
 // is below the floor inside its turning point, the rest is smaller still.
 func newPanel(m int, z []float64, radii []float64) panel {

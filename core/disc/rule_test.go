@@ -5,7 +5,7 @@ import (
 	"testing"
 )
 
-var ruleAlphas = []float64{-0.5, 0, 0.5, 1, 2}
+var ruleAlphas = []float64{0, 0.5, 1, 2}
 
 // A rule of n radii integrates r^(2k) (1-r^2)^alpha r exactly for k <= 2n-1:
 // half the beta function B(k+1, alpha+1), here by its recurrence
@@ -27,16 +27,17 @@ func TestRadialRuleMoments(t *testing.T) {
 				worst = math.Max(worst, math.Abs(sum-want))
 				want *= float64(k+1) / (float64(k+1) + alpha + 1)
 			}
-			// Absolute error in units of the whole weight: a node good to
-			// 2^-53 in r^2 moves r^(2k) by up to k 2^-53 of itself, with k up
-			// to 2n but only where the moment has fallen to 1/k; the powers
-			// accumulate as much again. So a few 2^-52, and n 2^-52 for the
-			// weights near the rim, whose relative error is
-			// 2^-53/(1-r^2) ~ n^2 2^-53 at a size of 1/n^2 of the whole,
-			// times 1/(1-r^2)^(-alpha) for alpha below 0.
-			tol := 0.5 / (alpha + 1) * 16 * 0x1p-52
-			if alpha < 0 {
-				tol *= float64(n)
+			// Absolute error in units of the whole weight: a radius good to
+			// 2^-53 moves r^(2k) by 2k 2^-53 of itself and the running power by
+			// as much again, but the moment has fallen to 1/k: 4 units of
+			// 2^-53. The weights carry the rounding of n steps of a stable
+			// recurrence, about sqrt(n) of random sign each; the sum averages
+			// them to a few units. Together below 32 units of 2^-53. For
+			// alpha > 0 a product of n factors of two roundings each enters
+			// squared: 2 sqrt(2n) units more.
+			tol := 0.5 / (alpha + 1) * 32 * 0x1p-53
+			if alpha > 0 {
+				tol *= 1 + 2*math.Sqrt(2*float64(n))/32
 			}
 			if worst > tol {
 				t.Errorf("n=%d alpha=%g: worst moment off by %.3g, allowed %.3g", n, alpha, worst, tol)
@@ -49,14 +50,17 @@ func TestRadialRuleMoments(t *testing.T) {
 func TestRadialRuleNodes(t *testing.T) {
 	for _, alpha := range ruleAlphas {
 		var before []float64
-		for n := 1; n <= 400; n++ {
+		for n := 1; n <= 512; n++ {
+			if n > 40 && n%128 > 1 {
+				continue // pairs such as 256 and 257 from here on
+			}
 			r, w := make([]float64, n), make([]float64, n)
 			RadialRule(r, w, alpha)
 			for i := range r {
 				if !(r[i] > 0 && r[i] < 1 && w[i] > 0) {
 					t.Fatalf("n=%d alpha=%g: node %g weight %g", n, alpha, r[i], w[i])
 				}
-				if i < len(before) && !(r[i] < before[i] && before[i] < r[i+1]) {
+				if len(before) == n-1 && i < n-1 && !(r[i] < before[i] && before[i] < r[i+1]) {
 					t.Fatalf("n=%d alpha=%g: node %d does not interlace", n, alpha, i)
 				}
 			}
@@ -73,7 +77,8 @@ func TestRadialRulePublished(t *testing.T) {
 	r, w := make([]float64, 5), make([]float64, 5)
 	RadialRule(r, w, 0)
 	for i := range r {
-		if math.Abs(2*r[i]*r[i]-1-x[i]) > 1e-15 || math.Abs(4*w[i]-wx[i]) > 1e-15 {
+		// Printed to 15 decimals; the comparison adds two roundings.
+		if math.Abs(2*r[i]*r[i]-1-x[i]) > 0.5e-15+2*0x1p-52 || math.Abs(4*w[i]-wx[i]) > 0.5e-15+2*0x1p-52 {
 			t.Errorf("node %d: x=%.16g w=%.16g, printed %.15g %.15g", i, 2*r[i]*r[i]-1, 4*w[i], x[i], wx[i])
 		}
 	}

@@ -10,7 +10,9 @@ type Transform struct {
 	Basis *Basis
 	Grid  *Grid
 
-	table *Table
+	table   *Table
+	samples []float64 // of AnalyseFunc
+	tailC   float64   // constant of PointwiseBound, 0 until asked for
 }
 
 // NewTransform prepares the transform for orders 0..M and zeros 1..N on a grid
@@ -82,6 +84,23 @@ func (t *Transform) Analyse(coef, samples []float64) Quality {
 		coef[2*n+1] = 0
 	}
 	return t.quality(coef, energy, kept)
+}
+
+// AnalyseFunc is Analyse for a function of r and theta that can be called: it is
+// taken at every sample of Grid, once. The first call allocates Grid.Len()
+// numbers, later ones nothing.
+func (t *Transform) AnalyseFunc(coef []float64, f func(r, theta float64) float64) Quality {
+	g := t.Grid
+	if t.samples == nil {
+		t.samples = make([]float64, g.Len())
+	}
+	for i, r := range g.R {
+		row := t.samples[i*g.NTheta:][:g.NTheta]
+		for k := range row {
+			row[k] = f(r, g.Theta(k))
+		}
+	}
+	return t.Analyse(coef, t.samples)
 }
 
 // angles takes each circle of samples to its Fourier series, weighted for the
