@@ -128,7 +128,7 @@ var expansions = []Unit{
 }
 
 var ratios = []Unit{
-	{Symbol: "", mul: 1, div: 1, also: []string{"1"}},
+	{Symbol: "", mul: 1, div: 1},
 	{Symbol: "%", mul: 1, div: 1e2, also: []string{"percent", "％"}},
 	{Symbol: "‰", mul: 1, div: 1e3, also: []string{"permille"}},
 }

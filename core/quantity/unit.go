@@ -35,11 +35,12 @@ func (u Unit) ToSI(x float64) float64 {
 }
 
 // FromSI converts an SI value to a number in unit u, with errors as in ToSI.
+// The zero of the unit comes out as 0 exactly.
 func (u Unit) FromSI(si float64) float64 {
 	if u.div == 0 {
 		return si
 	}
-	return (float64(si*u.div) - u.add) / u.mul
+	return (si - u.add/u.div) * u.div / u.mul
 }
 
 // Find looks a unit up by its symbol or another spelling of it ("um", "kg/m2")
