@@ -70,6 +70,7 @@ func barMark() template.HTML {
 func markPNG(size int, scale float64) ([]byte, error) {
 	const samples = 4
 	paper, ink, chord := rgb(iconPaper), rgb(iconInk), rgb(iconChord)
+	m := newMark()
 	img := image.NewRGBA(image.Rect(0, 0, size, size))
 	for py := range size {
 		for px := range size {
@@ -78,7 +79,7 @@ func markPNG(size int, scale float64) ([]byte, error) {
 				x := (float64(px)+(float64(i%samples)+0.5)/samples)*32/float64(size) - 16
 				y := (float64(py)+(float64(i/samples)+0.5)/samples)*32/float64(size) - 16
 				c := paper
-				switch markAt(x/scale, y/scale) {
+				switch m.at(x/scale, y/scale) {
 				case 1:
 					c = ink
 				case 2:
@@ -97,21 +98,38 @@ func markPNG(size int, scale float64) ([]byte, error) {
 	return out.Bytes(), err
 }
 
-// markAt is 1 on hoop and clamps, 2 on the chord, 0 elsewhere.
-func markAt(x, y float64) int {
-	if math.Abs(math.Hypot(x, y)-markRadius) <= markStroke/2 {
-		return 1
-	}
-	for i := range markClamps {
+// mark is the geometry worked out once for drawing by points.
+type mark struct {
+	clamps [markClamps][2]float64
+	dashes []float64
+	ux, uy float64 // along the chord
+}
+
+func newMark() mark {
+	m := mark{dashes: markDashes(), ux: math.Cos(chordTurn), uy: math.Sin(chordTurn)}
+	for i := range m.clamps {
 		angle := 2 * math.Pi * float64(i) / markClamps
-		if math.Hypot(x-clampCentre*math.Cos(angle), y-clampCentre*math.Sin(angle)) <= clampRadius {
-			return 1
-		}
+		m.clamps[i] = [2]float64{clampCentre * math.Cos(angle), clampCentre * math.Sin(angle)}
 	}
-	ux, uy := math.Cos(chordTurn), math.Sin(chordTurn)
-	along, across := x*ux+y*uy, -x*uy+y*ux-chordOffset
+	return m
+}
+
+// at is 1 on hoop and clamps, 2 on the chord, 0 elsewhere.
+func (m *mark) at(x, y float64) int {
+	switch radius := math.Sqrt(x*x + y*y); {
+	case math.Abs(radius-markRadius) <= markStroke/2:
+		return 1
+	case radius > markRadius:
+		for _, c := range m.clamps {
+			if (x-c[0])*(x-c[0])+(y-c[1])*(y-c[1]) <= clampRadius*clampRadius {
+				return 1
+			}
+		}
+		return 0
+	}
+	along, across := x*m.ux+y*m.uy, -x*m.uy+y*m.ux-chordOffset
 	if math.Abs(across) <= chordStroke/2 {
-		for _, s := range markDashes() {
+		for _, s := range m.dashes {
 			if math.Abs(along-s) <= chordDash/2 {
 				return 2
 			}
