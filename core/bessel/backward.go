@@ -189,13 +189,11 @@ func realDown(mu float64, n int, x float64) (ah, al, bh, bl float64) {
 	if n == 0 {
 		ah, al, bh, bl = ch, cl, oh, ol
 	}
-	th, tl, _, _ := hankel(mu, x)
-	uh, ul := ch, cl
+	th, tl, uh, ul := hankelJ(mu, x)
 	if math.Abs(oh) > math.Abs(ch) {
-		th, tl, _, _ = hankel(mu+1, x)
-		uh, ul = oh, ol
+		th, tl, ch, cl = uh, ul, oh, ol
 	}
-	sh, sl := divDD(th, tl, uh, ul)
+	sh, sl := divDD(th, tl, ch, cl)
 	ah, al = mulDD(ah, al, sh, sl)
 	bh, bl = mulDD(bh, bl, sh, sl)
 	return ah, al, bh, bl

@@ -10,20 +10,32 @@ const hankelMin = 25
 // hankelTerms bounds the number of pairs of terms; at hankelMin ten suffice.
 const hankelTerms = 24
 
-// hankel returns J_nu(x) and Y_nu(x) as compensated numbers for x >= hankelMin
-// and 0 <= nu < 2 (or nu^2 << x), with an absolute error of about 2^-55 of the
+// hankelJ returns J_mu(x) and J_{mu+1}(x) as compensated numbers for
+// x >= hankelMin and 0 <= mu < 1, with an absolute error of about 2^-55 of the
 // envelope sqrt(2/(pi x)).
-func hankel(nu, x float64) (jh, jl, yh, yl float64) {
+func hankelJ(mu, x float64) (ah, al, bh, bl float64) {
 	// DLMF 10.17.3-4. P - 1 and Q are small against 1, so the leading
 	// cos(chi), sin(chi) and the factor in front are the only parts that
 	// need more than double precision.
-	p, q := hankelPQ(nu, x)
-	ch, cl, sh, sl := phase(nu, x)
-	ah, al := hankelFactor(x)
+	ch, cl, sh, sl := phase(mu, x)
+	fh, fl := hankelFactor(x)
+	p, q := hankelPQ(mu, x)
+	ah, al = mulDD(fh, fl, ch, cl+(p*ch-q*sh))
+	// chi of order mu + 1 is a quarter turn behind.
+	p, q = hankelPQ(mu+1, x)
+	bh, bl = mulDD(fh, fl, sh, sl+(p*sh+q*ch))
+	return ah, al, bh, bl
+}
 
-	jh, jl = mulDD(ah, al, ch, cl+(p*ch-q*sh))
-	yh, yl = mulDD(ah, al, sh, sl+(p*sh+q*ch))
-	return jh, jl, yh, yl
+// hankelY returns Y_mu(x) and Y_{mu+1}(x), otherwise as hankelJ.
+func hankelY(mu, x float64) (ah, al, bh, bl float64) {
+	ch, cl, sh, sl := phase(mu, x)
+	fh, fl := hankelFactor(x)
+	p, q := hankelPQ(mu, x)
+	ah, al = mulDD(fh, fl, sh, sl+(p*sh+q*ch))
+	p, q = hankelPQ(mu+1, x)
+	bh, bl = mulDD(fh, fl, -ch, (q*sh-p*ch)-cl)
+	return ah, al, bh, bl
 }
 
 // hankelPQ returns P - 1 and Q of Hankel's expansion.

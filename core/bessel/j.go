@@ -98,11 +98,10 @@ func jPair(nu, x float64) (ah, al, bh, bl float64) {
 	case nu > x+1 && debyeExponent(nu, x) > underflowExponent:
 		return 0, 0, 0, 0
 	case x >= hankelMin && nu <= x:
-		ah, al, _, _ = hankel(mu, x)
-		bh, bl, _, _ = hankel(mu+1, x)
+		ah, al, bh, bl = hankelJ(mu, x)
 		return up(mu, n, x, ah, al, bh, bl)
 	case useSeries(nu, x):
-		return jSeries(nu, x), 0, jSeries(nu+1, x), 0
+		return jSeriesPair(nu, x)
 	case mu == 0:
 		return intBackward(n, x)
 	case x >= hankelMin:

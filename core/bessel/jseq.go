@@ -37,8 +37,7 @@ func JSeq(dst []float64, x float64) {
 
 // seqForward fills dst from J_0 and J_1 upwards, stable while n <= x.
 func seqForward(dst []float64, x float64) {
-	ah, al, _, _ := hankel(0, x)
-	bh, bl, _, _ := hankel(1, x)
+	ah, al, bh, bl := hankelJ(0, x)
 	ih, il := invDD(x)
 	dst[0] = ah + al
 	for k := 1; k < len(dst); k++ {

@@ -36,8 +36,11 @@ func mcMahonJ(nu float64, n int) float64 {
 	return a - (mu-1)*b*(1+b2*(4*(7*mu-31)/3+b2*(32*((83*mu-982)*mu+3779)/15)))
 }
 
-// startZeroJPrime approximates the n-th positive zero of J'_nu, nu > 0.
+// startZeroJPrime approximates the n-th positive zero of J'_nu.
 func startZeroJPrime(nu float64, n int) float64 {
+	if nu == 0 {
+		return startZeroJ(1, n)
+	}
 	if nu <= 1 {
 		if n == 1 {
 			// nu = 2 s_1 x^2 + 2 s_2 x^4 + 2 s_3 x^6 + ... with the Rayleigh

@@ -68,3 +68,53 @@ var cylinder = []probe{
 	jseq("JSeq, whole orders to 200", 2, upTo200),
 	jseq("JSeq, whole orders to 1000, x to 1e6", 2, func(r row) bool { return !upTo200(r) }),
 }
+
+// pairOf returns the last of the first n zeros found in sequence and what
+// comes with it.
+func pairOf(fill func(zeros, other []float64, nu float64), r row) (zero, other float64) {
+	z, o := make([]float64, r.n()), make([]float64, r.n())
+	fill(z, o, r.nu)
+	return z[r.n()-1], o[r.n()-1]
+}
+
+func shortSequence(r row) bool { return r.x <= 200 }
+
+// zeros holds the regions of j_{nu,n} and j'_{nu,n}; x is n there.
+var zeros = []probe{
+	{
+		name: "ZeroJ, orders to 1000, n to 1e6", promise: 2, want: column(0),
+		got: func(r row) float64 { return bessel.ZeroJ(r.nu, r.n()) },
+	},
+	{
+		name: "ZeroJPrime, orders to 1000, n to 1e6", promise: 2, want: column(1),
+		got: func(r row) float64 { return bessel.ZeroJPrime(r.nu, r.n()) },
+	},
+	{
+		name: "zeros of J in sequence, n to 200", promise: 2, want: column(0), in: shortSequence,
+		got: func(r row) float64 {
+			z, _ := pairOf(bessel.ZerosJAndDerivative, r)
+			return z
+		},
+	},
+	{
+		name: "J' at the zeros of J, n to 200", promise: 4, want: column(2), in: shortSequence,
+		got: func(r row) float64 {
+			_, d := pairOf(bessel.ZerosJAndDerivative, r)
+			return d
+		},
+	},
+	{
+		name: "zeros of J' in sequence, n to 200", promise: 2, want: column(1), in: shortSequence,
+		got: func(r row) float64 {
+			z, _ := pairOf(bessel.ZerosJPrimeAndValue, r)
+			return z
+		},
+	},
+	{
+		name: "J at the zeros of J', n to 200", promise: 4, want: column(3), in: shortSequence,
+		got: func(r row) float64 {
+			_, v := pairOf(bessel.ZerosJPrimeAndValue, r)
+			return v
+		},
+	},
+}
