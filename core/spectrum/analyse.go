@@ -89,6 +89,7 @@ func (a *Analyzer) Analyse(r *Recording, o Options) (Result, error) {
 	a.limit(3 * o.MaxPeaks)
 	a.measureDecays(a.stretch, rate, &o)
 	a.choose(rate, &o)
+	a.dropSkirts(rate, &o)
 	a.present(&res, rate, &o)
 	return res, nil
 }

@@ -3,6 +3,7 @@ package spectrum
 import (
 	"cmp"
 	"math"
+	"math/cmplx"
 	"slices"
 )
 
@@ -156,8 +157,10 @@ func (g *rung) read(k int, rate float64, w Window) (reading, bool) {
 	offset, power := logParabola(g.power[k-1], g.power[k], g.power[k+1])
 	m := w.steadyMoments()
 	n := float64(g.n)
+	steady := 2 * math.Sqrt(power) / (n * m.wg)
 	return reading{
-		tone:      tone{f: (float64(k) + offset) * g.step(rate), amplitude: 2 * math.Sqrt(power) / (n * m.wg)},
+		tone:      tone{f: (float64(k) + offset) * g.step(rate), amplitude: steady},
+		steady:    steady,
 		offset:    offset,
 		snr:       power / g.floor[k],
 		noiseSD:   math.Sqrt(g.floor[k] / (n * m.ww)),
@@ -170,35 +173,37 @@ func (g *rung) read(k int, rate float64, w Window) (reading, bool) {
 // measureDecays finds the ring-down of every candidate: first as if it were alone, then knowing
 // of the others.
 func (a *Analyzer) measureDecays(x []float64, rate float64, o *Options) {
+	a.measureEach(x, rate, nil, o)
+	a.dropSkirts(rate, o)
+	a.measureEach(x, rate, a.tones, o)
+}
+
+func (a *Analyzer) measureEach(x []float64, rate float64, others []tone, o *Options) {
 	whole := float64(len(x)) / rate
-	for pass := range 2 {
-		a.tones = a.tones[:0]
-		for i := range a.found {
-			c := &a.found[i]
-			t := c.tone
-			t.amplitude *= o.Window.steadyMoments().wg / o.Window.moments(min(c.decay*c.seconds, mostDecay)).wg
-			a.tones = append(a.tones, t)
+	for i := range a.found {
+		c := &a.found[i]
+		// Hann frames of length L null what is 2/L away and hold it 31 dB down beyond; but a
+		// line needs several frames within the time it is heard.
+		length := min(max(2.5/a.nearest(i), c.seconds/8), c.seconds/3)
+		length = min(max(length, 4/c.f), whole/3)
+		r := a.ringDown(x, rate, i, c.f, length, c.noiseSD*c.noiseSD, others)
+		if r.known || others == nil {
+			c.ring = r
 		}
-		for i := range a.found {
-			c := &a.found[i]
-			// Hann frames of length L null what is 2/L away and hold it 31 dB down beyond; but a
-			// line needs several frames within the time it is heard.
-			length := min(max(2.5/a.nearest(i), c.seconds/8), c.seconds/3)
-			length = min(max(length, 4/c.f), whole/3)
-			others := a.tones
-			if pass == 0 {
-				others = nil
-			}
-			r := a.ringDown(x, rate, i, c.f, length, c.noiseSD*c.noiseSD, others)
-			if pass == 0 || r.known {
-				c.ring = r
-			}
+	}
+	for i := range a.found {
+		if c := &a.found[i]; c.ring.known {
+			c.settle(max(0, c.ring.decay), o.Window)
 		}
-		for i := range a.found {
-			if c := &a.found[i]; c.ring.known {
-				c.decay = max(0, c.ring.decay)
-			}
-		}
+	}
+	a.listTones()
+}
+
+// listTones copies what is known of the candidates to a.tones.
+func (a *Analyzer) listTones() {
+	a.tones = a.tones[:0]
+	for i := range a.found {
+		a.tones = append(a.tones, a.found[i].tone)
 	}
 }
 
@@ -215,11 +220,6 @@ func (a *Analyzer) nearest(i int) float64 {
 
 // choose reads every candidate again on the rung where its uncertainty is smallest.
 func (a *Analyzer) choose(rate float64, o *Options) {
-	for i := range a.tones {
-		c := &a.found[i]
-		c.amplitude *= o.Window.steadyMoments().wg / o.Window.moments(min(c.decay*c.seconds, mostDecay)).wg
-		a.tones[i] = c.tone
-	}
 	for i := range a.found {
 		c := &a.found[i]
 		best := a.atRung(i, c.rung, rate, o)
@@ -237,6 +237,31 @@ func (a *Analyzer) choose(rate float64, o *Options) {
 	}
 }
 
+// dropSkirts removes candidates that noise on the skirts of stronger tones can have made: what is left
+// has a magnitude beyond all their skirts and the threshold over the noise taken together. The skirts of a
+// decaying tone reach further than a steady one's side lobes, and are known only with its decay rate.
+func (a *Analyzer) dropSkirts(rate float64, o *Options) {
+	a.listTones()
+	kept := a.found[:0]
+	for i, c := range a.found {
+		n := c.seconds * rate
+		own := c.steady * o.Window.steadyMoments().wg // magnitudes are in parts of n/2
+		skirts := 0.0
+		for j, other := range a.tones {
+			fall := other.decay * c.seconds
+			if j != i && other.amplitude*cmplx.Abs(o.Window.transform(fall, 0)) > own {
+				skirts += other.amplitude * cmplx.Abs(o.Window.transform(fall, (other.f-c.f)*c.seconds))
+			}
+		}
+		noise := 2 * c.noiseSD * math.Sqrt(o.ratio()*o.Window.steadyMoments().ww/n)
+		if own > skirts+noise {
+			kept = append(kept, c)
+		}
+	}
+	a.found = kept
+	a.listTones()
+}
+
 // atRung reads candidate i on rung k, with its uncertainties; they are infinite where it has no
 // top of its own there.
 func (a *Analyzer) atRung(i, k int, rate float64, o *Options) reading {
@@ -252,7 +277,7 @@ func (a *Analyzer) atRung(i, k int, rate float64, o *Options) reading {
 	}
 	fall := c.decay * r.seconds
 	m := o.Window.moments(fall)
-	r.decay = c.decay
+	r.settle(c.decay, o.Window)
 	if c.ring.known {
 		// The lobe's shape is known, and with it what the parabola gets wrong.
 		bins := g.natural()
@@ -261,7 +286,6 @@ func (a *Analyzer) atRung(i, k int, rate float64, o *Options) reading {
 		r.f -= wrong * g.step(rate)
 		r.uParabola = math.Abs(other-wrong) * g.step(rate)
 	}
-	r.amplitude *= o.Window.steadyMoments().wg / m.wg
 	r.uNoise = noiseUncertainty(r.amplitude, r.noiseSD, g.n, m) * r.natural
 	r.uNeighbours = neighbourUncertainty(r.tone, a.tones, i, r.seconds, o.Window) * r.natural
 	return r

@@ -3,11 +3,11 @@ package spectrum
 import "math"
 
 const (
-	framesApart  = 4    // frames overlap by three quarters
-	frameSNR     = 4.0  // power ratio under which a frame of the envelope no longer counts
-	weightCap    = 1000 // power ratio at which a frame's weight stops growing: beats then count, not noise
+	framesApart  = 4   // frames overlap by three quarters
+	frameSNR     = 4.0 // power ratio under which a frame of the envelope no longer counts
+	weightCap    = 1e4 // power ratio at which a frame's weight stops growing: beats then count, not noise
 	fewestFrames = 5
-	misfit       = 2.0 // mean squared residual, against noise alone, that widens the uncertainty
+	misfit       = 2.0 // weighted squared residuals, against those of noise alone, that widens the uncertainty
 )
 
 // ringDown is the decay of one tone.
@@ -181,7 +181,7 @@ func (f *envelopeFit) result(correlation []float64) ringDown {
 	share := func(m int) float64 { // d's derivative by y[m], times the relative noise there
 		return f.weight(line, m) * (float64(m)*f.step - f.tm) / f.stt / math.Sqrt(2*f.ratio(line, m))
 	}
-	variance, squares, plain := 0.0, 0.0, 0.0
+	variance, squares, expected, plain := 0.0, 0.0, 0.0, 0.0
 	for m := range f.used {
 		variance += correlation[0] * share(m) * share(m)
 		for j := 1; j < len(correlation) && m+j < f.used; j++ {
@@ -189,9 +189,10 @@ func (f *envelopeFit) result(correlation []float64) ringDown {
 		}
 		r := f.y[m] - line(m)
 		plain += r * r
-		squares += r * r * 2 * f.ratio(line, m)
+		squares += 2 * f.weight(line, m) * r * r
+		expected += f.weight(line, m) / f.ratio(line, m)
 	}
-	if s := squares / float64(f.used-2); s > misfit {
+	if s := squares / expected * float64(f.used) / float64(f.used-2); s > misfit {
 		variance *= s
 	}
 	return ringDown{

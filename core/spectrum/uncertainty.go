@@ -40,6 +40,7 @@ type tone struct {
 // reading is what one rung says about a tone, with the parts of its uncertainty in Hz.
 type reading struct {
 	tone
+	steady      float64 // amplitude of the steady tone that would give the top
 	snr         float64 // power over the floor at the top
 	noiseSD     float64 // white noise of this standard deviation a sample gives the floor here
 	uNoise      float64
@@ -48,6 +49,12 @@ type reading struct {
 	seconds     float64
 	natural     float64 // Hz, bin width of the unpadded length
 	offset      float64 // what logParabola gave, in bins
+}
+
+// settle sets the decay rate, and the amplitude at the start that goes with it.
+func (r *reading) settle(decay float64, w Window) {
+	r.decay = decay
+	r.amplitude = r.steady * w.steadyMoments().wg / w.moments(min(decay*r.seconds, mostDecay)).wg
 }
 
 func (r reading) u() float64 {
