@@ -39,13 +39,15 @@
 //
 // Every basis function is zero on the rim. A function that is not zero there,
 // or that jumps inside the disc, has coefficients that fall off slowly: the
-// missed energy goes down like 1/N, but beside the jump the sum overshoots by
-// 8.95 % of the jump's height however many terms are taken (Gibbs), in a band
-// whose width shrinks like 1/N; on the jump it takes the mean of both sides,
-// and on the rim it is zero. A jump along a whole circle is also heard at the
-// centre, where its waves meet: the error there does not die out either.
-// Quality.Smooth is then false and no pointwise bound is given.
-// TestGibbsAtRim and TestGibbsInside hold these statements.
+// missed energy goes down only like 1/N. Beside a jump the sum overshoots by
+// 8.95 % of the height of the jump however many terms are taken (Gibbs), in a
+// band whose width shrinks like 1/N; on the jump it takes the mean of both
+// sides. At the rim the series goes on beyond r = 1 with the sign reversed, so
+// the jump is twice the rim value and the overshoot 17.9 % of it. A jump along
+// a whole circle is also heard at the centre, where its waves meet: the error
+// there dies out only like N^(-1/2). Quality.Smooth is then false and no
+// pointwise error is claimed. TestGibbsAtRim and TestGibbsInside hold these
+// statements.
 //
 // # Polynomial families
 //

@@ -65,19 +65,27 @@ func newPanel(m int, z []float64, radii []float64) panel {
 	lo := len(radii)
 	for lo > 0 {
 		r := radii[lo-1]
-		v := bessel.JInt(m, last*r)
-		if last*r < float64(m) && v < panelFloor {
+		v := atZero(m, last, r)
+		if last*r < float64(m) && v < panelFloor { // v > 0 there
 			break
 		}
 		lo--
 		e := &q[lo]
 		put := [...]*float64{&e.a, &e.b, &e.c, &e.d}
 		for i, zi := range z[:len(z)-1] {
-			*put[i] = bessel.JInt(m, zi*r)
+			*put[i] = atZero(m, zi, r)
 		}
 		*put[len(z)-1] = v
 	}
 	return panel{lo: lo, q: q[lo:]}
+}
+
+// atZero returns J_m(z r) for a zero z of J_m: exactly 0 at the rim.
+func atZero(m int, z, r float64) float64 {
+	if r == 1 {
+		return 0
+	}
+	return bessel.JInt(m, z*r)
 }
 
 // dot returns sum over i of q[i] v[i] for the four n and both parts.

@@ -1,10 +1,6 @@
 package disc
 
-import (
-	"math"
-
-	"hoopsheet/core/bessel"
-)
+import "math"
 
 // Points synthesises coefficients at scattered points, for instance the history
 // of a few points of a vibrating sheet. It holds (M+1) N numbers a point.
@@ -31,7 +27,7 @@ func NewPoints(b *Basis, r, theta []float64) *Points {
 			panic(errRadius)
 		}
 		for k, z := range b.zeros {
-			p.radial = append(p.radial, bessel.JInt(k/b.N, z*ri))
+			p.radial = append(p.radial, atZero(k/b.N, z, ri))
 		}
 		for m := 0; m <= b.M; m++ {
 			s, c := math.Sincos(float64(m) * theta[i])

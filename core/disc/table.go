@@ -57,8 +57,8 @@ func (t *Table) Len() int { return len(t.R) * t.NTheta }
 //
 //	dst[i*NTheta+k] = sum over m, n of J_m(j_mn R[i]) [a_mn cos(m theta_k) + b_mn sin(m theta_k)].
 //
-// The rounding error is a few 1e-16 of the sum of sizes of the coefficients. It
-// panics unless len(dst) = Len() and len(coef) = Basis.Len(). It does not
+// The rounding error is a few 1e-16 of the sum of sizes of the coefficients; on
+// the rim the result is exactly 0. It panics unless len(dst) = Len() and len(coef) = Basis.Len(). It does not
 // allocate.
 func (t *Table) Synthesise(dst, coef []float64) {
 	b := t.Basis
