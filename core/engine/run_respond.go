@@ -1,0 +1,81 @@
+package engine
+
+import (
+	"context"
+	"strings"
+
+	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/response"
+)
+
+func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
+	c := respondCase(request)
+	if err := refuse(append(documentProblems(request.Document), c.Check()...)); err != nil {
+		return nil, err
+	}
+	motion, problems, err := response.Respond(ctx, c, progress(ctx))
+	if err != nil {
+		return nil, err
+	}
+	if err := refuse(problems); err != nil {
+		return nil, err
+	}
+	result := &RespondResult{
+		Times:        motion.Times,
+		Motion:       motion.Values,
+		HistoryTimes: motion.HistoryTimes,
+		Travel: Travel{
+			Displacement: motion.Travel.Displacement,
+			At:           motion.Travel.At,
+			Time:         motion.Travel.Time,
+		},
+		Envelope:           motion.Envelope,
+		MissedDisplacement: motion.MissedDisplacement,
+		MissedVelocity:     motion.MissedVelocity,
+		MissedEnergy:       motion.MissedEnergy,
+		Energy:             motion.Energy,
+		Period:             motion.Period,
+		RingDown:           motion.RingDown,
+		Histories:          []History{},
+		Strongest:          []ModeShare{},
+		Assumptions:        motion.Assumptions,
+		Warnings:           motion.Warnings,
+	}
+	for i, values := range motion.Histories {
+		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values})
+	}
+	for _, share := range motion.Strongest {
+		result.Strongest = append(result.Strongest, ModeShare{M: share.M, N: share.N, Share: share.Share, Frequency: share.Frequency})
+	}
+	return result, nil
+}
+
+func respondCase(request *RespondRequest) *response.Case {
+	doc := &request.Document
+	return &response.Case{
+		Sheet: response.Sheet{
+			Radius:       doc.Ring.Radius,
+			Tension:      doc.Tension.Nominal,
+			ArealDensity: doc.Sheet.ArealDensity(),
+			Stretch:      doc.Sheet.E * doc.Sheet.Thickness / (1 - doc.Sheet.Nu),
+		},
+		Zeta:         doc.Damping.Ratio,
+		Displacement: request.Displacement,
+		Velocity:     request.Velocity,
+		Orders:       request.Orders,
+		Circles:      request.Circles,
+		Duration:     request.Duration,
+		Frames:       request.Frames,
+		Radii:        request.Radii,
+		Angles:       request.Angles,
+		Points:       request.Points,
+	}
+}
+
+// documentProblems lists what is wrong with the document of a request, with
+// "document." before the fields of it that a request may repeat.
+func documentProblems(doc diaphragm.Diaphragm) []Problem {
+	return diaphragm.Validate(doc)
+}
+
+var _ = strings.TrimSpace

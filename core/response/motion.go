@@ -1,0 +1,174 @@
+package response
+
+import (
+	"math"
+
+	"hoopsheet/core/bessel"
+	"hoopsheet/core/disc"
+)
+
+// motion is the free motion of the ideal sheet as a sum of modes. Lengths on
+// the sheet are in units of its radius a, times in units of a/c, c the wave
+// speed; displacements in m.
+type motion struct {
+	basis *disc.Basis // of the orders that move
+	modes []modal     // those that move, in the order of the basis
+}
+
+// modal is one mode (m, n), its cosine and sine part together:
+//
+//	q” + 2 zeta omega q' + omega^2 q = 0.
+type modal struct {
+	index int // of the cosine coefficient in the basis
+	m, n  int
+	omega float64 // equal to the zero j_mn for the ideal sheet
+	zeta  float64
+	norm  float64 // integral of the square of the mode over the unit disc
+	// a and b are the initial displacements of the cosine and the sine part,
+	// va and vb their initial velocities in m per a/c.
+	a, b, va, vb float64
+	// size bounds the displacement anywhere on the sheet; it decays at least as
+	// fast as exp(-decay t).
+	size, decay float64
+}
+
+// negligible is the size, relative to the sum of all, below which a mode is
+// rounding only.
+const negligible = 1e-15
+
+// newMotion takes the initial coefficients of a basis to its modes. velocity
+// is in m per a/c.
+func newMotion(b *disc.Basis, zeta float64, displacement, velocity []float64) *motion {
+	var all []modal
+	var total float64
+	value := make([]float64, 1)
+	for m := 0; m <= b.M; m++ {
+		largest := 1.0 // of |J_m|
+		if m > 0 {
+			// The first extreme is the largest (Watson 15.31).
+			bessel.ZerosJPrimeAndValue(make([]float64, 1), value, float64(m))
+			largest = value[0]
+		}
+		for n := 1; n <= b.N; n++ {
+			i := b.Index(m, n, disc.Cos)
+			mode := modal{
+				index: i, m: m, n: n,
+				omega: b.Zero(m, n), zeta: zeta, norm: b.Norm(m, n),
+				a: displacement[i], b: displacement[i+1],
+				va: velocity[i], vb: velocity[i+1],
+			}
+			mode.bound(largest)
+			total += mode.size
+			all = append(all, mode)
+		}
+	}
+	moves := &motion{}
+	highest := 0
+	for _, mode := range all {
+		if mode.size > negligible*total {
+			moves.modes = append(moves.modes, mode)
+			highest = mode.m
+		}
+	}
+	// Coefficients stand order by order, so those of a basis with fewer orders
+	// are the first ones of this.
+	moves.basis = b
+	if highest < b.M {
+		moves.basis = basisOf(highest, b.N)
+	}
+	return moves
+}
+
+// bound sets size and decay; largest is that of |J_m|.
+func (mode *modal) bound(largest float64) {
+	// cos m theta and sin m theta parts add like the sides of a right angle.
+	start := math.Hypot(mode.a, mode.b)
+	if mode.zeta < 0.99 {
+		root := math.Sqrt((1 - mode.zeta) * (1 + mode.zeta))
+		ahead := math.Hypot(mode.va/mode.omega+mode.zeta*mode.a, mode.vb/mode.omega+mode.zeta*mode.b) / root
+		mode.size = largest * math.Hypot(start, ahead)
+		mode.decay = mode.zeta * mode.omega
+		return
+	}
+	// Near and above critical damping |C| <= 1 and omega |S| < 1; see
+	// fundamental.
+	mode.size = largest * (start + math.Hypot(mode.va, mode.vb)/mode.omega)
+	mode.decay = 0
+}
+
+// fundamental returns the two fundamental solutions of one mode at the time t:
+// c with value one and slope zero at t = 0, and s omega times that with value
+// zero and slope one. Their slopes are c' = -omega s and
+// s' = omega (c - 2 zeta s).
+//
+// It holds for every zeta >= 0, through the critical value without loss.
+func fundamental(omega, zeta, t float64) (c, s float64) {
+	x := omega * t
+	if zeta <= 1 {
+		root := math.Sqrt((1 - zeta) * (1 + zeta))
+		sin, cos := math.Sincos(root * x)
+		decay := 1.0
+		if zeta > 0 {
+			decay = math.Exp(-zeta * x)
+		}
+		if root > 0 {
+			s = decay * sin / root
+		} else {
+			s = decay * x
+		}
+		return decay*cos + zeta*s, s
+	}
+	// exp(-(zeta -+ root) x) with zeta - root = 1/(zeta + root).
+	root := math.Sqrt((zeta - 1) * (zeta + 1))
+	slow := math.Exp(-x / (zeta + root))
+	// 1 - fast/slow, which does not cancel as root goes to zero.
+	gap := -math.Expm1(-2 * root * x)
+	s = slow * gap / (2 * root)
+	return slow*(1-gap/2) + zeta*s, s
+}
+
+// amplitudes writes the coefficients at the time t.
+func (mo *motion) amplitudes(coef []float64, t float64) {
+	clear(coef)
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		c, s := fundamental(k.omega, k.zeta, t)
+		s /= k.omega
+		coef[k.index] = c*k.a + s*k.va
+		coef[k.index+1] = c*k.b + s*k.vb
+	}
+}
+
+// energy returns the potential and the kinetic energy at the time t, in units
+// of T/2 (J for displacements in m).
+func (mo *motion) energy(t float64) (potential, kinetic float64) {
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		c, s := fundamental(k.omega, k.zeta, t)
+		q, p := c*k.a+s*k.va/k.omega, c*k.b+s*k.vb/k.omega
+		ds := c - 2*k.zeta*s
+		dq, dp := ds*k.va-k.omega*s*k.a, ds*k.vb-k.omega*s*k.b
+		potential += k.norm * k.omega * k.omega * (q*q + p*p)
+		kinetic += k.norm * (dq*dq + dp*dp)
+	}
+	return potential, kinetic
+}
+
+// reach bounds the displacement anywhere on the sheet from the time t on.
+func (mo *motion) reach(t float64) float64 {
+	var sum float64
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		sum += k.size * math.Exp(-k.decay*t)
+	}
+	return sum
+}
+
+// fastest returns the largest angular frequency that moves; 0 at rest.
+func (mo *motion) fastest() float64 {
+	var omega float64
+	for i := range mo.modes {
+		omega = math.Max(omega, mo.modes[i].omega)
+	}
+	return omega
+}

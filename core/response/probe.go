@@ -1,0 +1,96 @@
+package response
+
+import (
+	"math"
+
+	"hoopsheet/core/bessel"
+)
+
+// probe is the displacement at one place and instant, with its first and
+// second derivatives in x, y and t.
+type probe struct {
+	w float64
+	// d holds the slopes in x, y, t; dd the second ones in the order xx, xy,
+	// yy, xt, yt, tt.
+	d  [3]float64
+	dd [6]float64
+}
+
+// probe evaluates the motion anywhere on the sheet, the centre included.
+func (mo *motion) probe(x, y, t float64) probe {
+	// With F_m = J_m(k r) exp(i m theta), from DLMF 10.6.1-2,
+	//
+	//	dF_m/dx = k/2 (F_{m-1} - F_{m+1}),  dF_m/dy = i k/2 (F_{m-1} + F_{m+1}),
+	//
+	// for every whole m: derivatives in Cartesian coordinates without a
+	// division by r.
+	var p probe
+	r := math.Hypot(x, y)
+	turn := complex(1, 0)
+	if r > 0 {
+		turn = complex(x/r, y/r)
+	}
+	back := complex(real(turn), -imag(turn))
+	order, phase := 0, complex(1, 0) // exp(i m theta)
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		for order < k.m {
+			phase *= turn
+			order++
+		}
+		c, s := fundamental(k.omega, k.zeta, t)
+		dc, ds := -k.omega*s, k.omega*(c-2*k.zeta*s)
+		ddc := -k.omega * (k.omega*c + 2*k.zeta*dc)
+		dds := -k.omega * (k.omega*s + 2*k.zeta*ds)
+		iw := 1 / k.omega
+		// The cosine and the sine part are the real part of (a - ib) F_m.
+		q := complex(c*k.a+s*k.va*iw, -(c*k.b + s*k.vb*iw))
+		dq := complex(dc*k.a+ds*k.va*iw, -(dc*k.b + ds*k.vb*iw))
+		ddq := complex(ddc*k.a+dds*k.va*iw, -(ddc*k.b + dds*k.vb*iw))
+
+		j := besselAround(k.m, k.omega*r)
+		h := k.omega / 2
+		f := scaled(phase, j[2])
+		below, above := scaled(phase*back, j[1]), scaled(phase*turn, j[3])
+		below2, above2 := scaled(phase*back*back, j[0]), scaled(phase*turn*turn, j[4])
+		fx := scaled(below-above, h)
+		fy := complex(0, h) * (below + above)
+		outer := scaled(below2+above2, h*h)
+		fxx := outer - scaled(f, 2*h*h)
+		fyy := -outer - scaled(f, 2*h*h)
+		fxy := complex(0, h*h) * (below2 - above2)
+
+		p.w += real(q * f)
+		p.d[0] += real(q * fx)
+		p.d[1] += real(q * fy)
+		p.d[2] += real(dq * f)
+		p.dd[0] += real(q * fxx)
+		p.dd[1] += real(q * fxy)
+		p.dd[2] += real(q * fyy)
+		p.dd[3] += real(dq * fx)
+		p.dd[4] += real(dq * fy)
+		p.dd[5] += real(ddq * f)
+	}
+	return p
+}
+
+func scaled(z complex128, by float64) complex128 { return complex(real(z)*by, imag(z)*by) }
+
+// besselAround returns J_{m-2}, ... J_{m+2} at x >= 0 for m >= 0.
+func besselAround(m int, x float64) (j [5]float64) {
+	if x < 1e-9 {
+		// Only J_0 differs from zero by more than x/2.
+		if m <= 2 {
+			j[2-m] = 1
+		}
+		return j
+	}
+	j[2], j[3] = bessel.JInt(m, x), bessel.JInt(m+1, x)
+	// Downwards the recurrence is stable; the one step upwards loses what
+	// J_{m+2} is smaller than J_m, which does not matter beside J_m.
+	over := 2 / x
+	j[1] = float64(m)*over*j[2] - j[3]
+	j[0] = float64(m-1)*over*j[1] - j[2]
+	j[4] = float64(m+1)*over*j[3] - j[2]
+	return j
+}

@@ -1,0 +1,221 @@
+package response
+
+import (
+	"context"
+	"math"
+	"slices"
+
+	"hoopsheet/core/diaphragm"
+)
+
+// Motion is the answer to a Case.
+type Motion struct {
+	// Times of the frames, s, and Values, m: frame by frame, in each radius by
+	// radius.
+	Times, Values []float32
+	// HistoryTimes, s, and one list of displacements, m, per point.
+	HistoryTimes []float32
+	Histories    [][]float32
+	// Envelope is the largest |w| of all frames on the display grid, m.
+	Envelope []float32
+	Travel   Travel
+	// MissedDisplacement and MissedVelocity are the shares, 0 to 1, of the
+	// initial potential and kinetic energy outside the chosen modes;
+	// MissedEnergy that of both.
+	MissedDisplacement, MissedVelocity, MissedEnergy float64
+	// Energy at the start, J; where the initial displacement has a jump, and so
+	// no finite energy, that of the chosen modes.
+	Energy float64
+	// Period of mode (0,1), s, and its time to -60 dB; 0 without damping.
+	Period, RingDown float64
+	// Strongest lists the modes that carry most energy, largest first.
+	Strongest             []Share
+	Assumptions, Warnings []string
+}
+
+// Share is the share of the initial energy that one mode carries.
+type Share struct {
+	M, N  int
+	Share float64
+	// Frequency without damping, Hz.
+	Frequency float64
+}
+
+// start is the beginning of a motion.
+type start struct {
+	displacement, velocity       form
+	moves                        *motion
+	potential, kinetic           float64 // exact, in units of T/2; +Inf with a jump
+	keptPotential, keptKinetic   float64 // of the chosen modes
+	steepest                     float64 // largest initial slope per unit of a
+	displacementScale, velocityA float64 // m; velocity times a/c, m
+}
+
+// Respond computes the motion of a case: the ideal sheet, released from its
+// initial displacement and velocity, each of its modes with the same damping
+// ratio, by Fourier-Bessel series and closed forms in time.
+//
+// Problems are those of Case.Check and those that only show over the whole
+// sheet, such as a division by zero of a formula at the centre. The error is
+// that of ctx. report is told the share of the work done.
+func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion, []diaphragm.Problem, error) {
+	if problems := c.Check(); len(problems) > 0 {
+		return nil, problems, nil
+	}
+	begin, problems := c.start()
+	if len(problems) > 0 {
+		return nil, problems, nil
+	}
+	part := func(from, to float64) func(float64) {
+		return func(share float64) { report(from + (to-from)*share) }
+	}
+	unit := c.Sheet.Radius / c.Sheet.WaveSpeed() // s
+	pictures, err := drawFrames(ctx, c, begin.moves, unit, part(0.1, 0.5))
+	if err != nil {
+		return nil, nil, err
+	}
+	histories, err := follow(ctx, c, begin.moves, unit)
+	if err != nil {
+		return nil, nil, err
+	}
+	top, coarse, err := begin.moves.largestTravel(ctx, c.Duration/unit, pictures.best, part(0.6, 1))
+	if err != nil {
+		return nil, nil, err
+	}
+	m := &Motion{
+		Times:        pictures.times,
+		Values:       pictures.motion,
+		Envelope:     pictures.envelope,
+		HistoryTimes: histories.times,
+		Histories:    histories.values,
+		Travel:       travelOf(top, unit, c.Duration),
+		Period:       c.period(),
+		RingDown:     ringDown(2*math.Pi/c.period(), c.Zeta),
+	}
+	begin.account(m, c)
+	m.Assumptions = c.assumptions()
+	m.Warnings = c.warnings(begin, m, warned{
+		steepest:      math.Max(pictures.steepest, begin.steepest/c.Sheet.Radius),
+		cappedHistory: histories.capped,
+		coarseSearch:  coarse,
+	})
+	report(1)
+	return m, nil, nil
+}
+
+// start projects the initial values.
+func (c *Case) start() (*start, []diaphragm.Problem) {
+	basis := basisOf(c.Orders, c.Circles)
+	s := &start{
+		displacementScale: c.Displacement.Peak,
+		velocityA:         c.Velocity.Peak * c.Sheet.Radius / c.Sheet.WaveSpeed(),
+	}
+	var problems, more []diaphragm.Problem
+	s.displacement, problems = c.Displacement.form(basis, "displacement.")
+	s.velocity, more = c.Velocity.form(basis, "velocity.")
+	if problems = append(problems, more...); len(problems) > 0 {
+		return nil, problems
+	}
+	project := func(f form, scale float64) []float64 {
+		coef := make([]float64, basis.Len())
+		f.project(basis, coef)
+		for i := range coef {
+			coef[i] *= scale
+		}
+		return coef
+	}
+	s.moves = newMotion(basis, c.Zeta, project(s.displacement, s.displacementScale), project(s.velocity, s.velocityA))
+	s.keptPotential, s.keptKinetic = s.moves.energy(0)
+	n := s.displacement.norms()
+	s.potential = times(s.displacementScale*s.displacementScale, n.slope)
+	s.steepest = times(math.Abs(s.displacementScale), n.steepest)
+	s.kinetic = times(s.velocityA*s.velocityA, s.velocity.norms().square)
+	return s, nil
+}
+
+// times is the product in which nothing times anything is nothing.
+func times(scale, value float64) float64 {
+	if scale == 0 {
+		return 0
+	}
+	return scale * value
+}
+
+// account fills in energies and what they say of the modes.
+func (s *start) account(m *Motion, c *Case) {
+	m.MissedDisplacement = missed(s.keptPotential, s.potential)
+	m.MissedVelocity = missed(s.keptKinetic, s.kinetic)
+	m.MissedEnergy = missed(s.keptPotential+s.keptKinetic, s.potential+s.kinetic)
+	whole := s.potential + s.kinetic
+	if math.IsInf(whole, 1) {
+		whole = s.keptPotential + s.keptKinetic
+	}
+	m.Energy = c.Sheet.Tension / 2 * whole
+	m.Strongest = s.moves.strongest(whole, c)
+}
+
+// missed is the share of a whole that the kept part leaves out.
+func missed(kept, whole float64) float64 {
+	switch {
+	case whole == 0:
+		return 0
+	case math.IsInf(whole, 1):
+		return 1
+	}
+	return math.Min(math.Max((whole-kept)/whole, 0), 1)
+}
+
+// strongest returns the modes that carry the largest shares of the energy.
+func (mo *motion) strongest(whole float64, c *Case) []Share {
+	const most = 10
+	shares := make([]Share, 0, len(mo.modes))
+	hertz := c.Sheet.WaveSpeed() / c.Sheet.Radius / (2 * math.Pi)
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		energy := k.norm * (k.omega*k.omega*(k.a*k.a+k.b*k.b) + k.va*k.va + k.vb*k.vb)
+		if energy > 0 {
+			shares = append(shares, Share{M: k.m, N: k.n, Share: energy / whole, Frequency: k.omega * hertz})
+		}
+	}
+	slices.SortStableFunc(shares, func(p, q Share) int {
+		switch {
+		case p.Share > q.Share:
+			return -1
+		case p.Share < q.Share:
+			return 1
+		}
+		return 0
+	})
+	return slices.Clip(shares[:min(most, len(shares))])
+}
+
+// travelOf takes a candidate to SI units.
+func travelOf(top candidate, unit, duration float64) Travel {
+	t := Travel{
+		Displacement: top.value,
+		At:           Point{Radius: math.Min(top.r, 1), Angle: top.theta},
+		Time:         math.Min(top.t*unit, duration),
+	}
+	// A place within rounding of the centre has no angle.
+	if t.At.Radius < 1e-7 {
+		t.At = Point{}
+	}
+	if t.At.Angle < 0 {
+		t.At.Angle += 2 * math.Pi
+	}
+	return t
+}
+
+// ringDown returns the time, s, in which a mode of angular frequency omega
+// (rad/s) falls to -60 dB, a thousandth of its displacement; 0 without damping.
+func ringDown(omega, zeta float64) float64 {
+	rate := zeta * omega
+	if zeta > 1 {
+		// The slower of the two exponentials.
+		rate = omega / (zeta + math.Sqrt((zeta-1)*(zeta+1)))
+	}
+	if rate == 0 {
+		return 0
+	}
+	return math.Log(1000) / rate
+}
