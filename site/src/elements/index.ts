@@ -3,3 +3,4 @@ import './bar.js';
 import './modes.js';
 import './respond.js';
 import './specify.js';
+import './tap.js';
