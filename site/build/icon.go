@@ -15,16 +15,16 @@ import (
 // The mark: a hoop, its clamps as dots around it, one nodal chord as dashes across it. Lengths are in a square from
 // -16 to 16.
 const (
-	markRadius   = 9.6
-	markStroke   = 2.0
-	markClamps   = 8
-	clampCentre  = 13.9
-	clampRadius  = 1.25
-	chordTurn    = -0.55 // radians from the horizontal
-	chordOffset  = 1.6
-	chordStroke  = 1.7
-	chordDash    = 2.6
-	chordGap     = 1.9
+	markRadius   = 11.4
+	markStroke   = 2.3
+	markClamps   = 6
+	clampCentre  = 12.6
+	clampRadius  = 2.5
+	chordTurn    = -0.42 // radians from the horizontal
+	chordOffset  = 2.4
+	chordStroke  = 2.2
+	chordDash    = 3.4
+	chordGap     = 2.2
 	iconPaper    = "#fffefb"
 	iconInk      = "#1c2730"
 	iconChord    = "#0d6a68"
@@ -119,7 +119,7 @@ func (m *mark) at(x, y float64) int {
 	switch radius := math.Sqrt(x*x + y*y); {
 	case math.Abs(radius-markRadius) <= markStroke/2:
 		return 1
-	case radius > markRadius:
+	case radius > clampCentre-clampRadius:
 		for _, c := range m.clamps {
 			if (x-c[0])*(x-c[0])+(y-c[1])*(y-c[1]) <= clampRadius*clampRadius {
 				return 1

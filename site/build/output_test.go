@@ -159,7 +159,7 @@ func TestIconShowsTheMark(t *testing.T) {
 		name string
 		x    float64 // on the horizontal axis of the mark, -16 to 16
 		want [3]uint8
-	}{{"hoop", markRadius, ink}, {"clamp", -clampCentre, ink}, {"between hoop and clamp", 11.6, paper}, {"corner of the square", 20, paper}} {
+	}{{"hoop", markRadius, ink}, {"clamp", -clampCentre, ink}, {"inside the hoop, off the chord", -7, paper}, {"corner of the square", 20, paper}} {
 		r, g, b, _ := img.At(int(256+c.x*iconMaskable*16), 256).RGBA()
 		if got := [3]uint8{uint8(r >> 8), uint8(g >> 8), uint8(b >> 8)}; got != c.want {
 			t.Errorf("%s: %v, want %v", c.name, got, c.want)
