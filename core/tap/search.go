@@ -1,0 +1,146 @@
+package tap
+
+import (
+	"math"
+	"slices"
+	"sort"
+)
+
+// line is one used peak on the logarithmic scale, where a change of tension
+// shifts all modes alike: ln f = ln j + c with
+//
+//	c = ln( sqrt(T/sigma) / (2 pi a) )
+type line struct {
+	peak int     // index in the question
+	log  float64 // ln f
+	s    float64 // relative standard deviation about the ideal sheet
+	pin  int     // index of the mode it is pinned to, or -1
+}
+
+// search holds what one Read needs.
+type search struct {
+	q        Question
+	modes    []mode
+	lines    []line  // lowest first
+	c0       float64 // c of the nominal tension
+	reach    float64 // largest |c - c0| looked at
+	pinCount int
+	// Peaks without a stated uncertainty scatter by the model error alone.
+	modelError float64
+}
+
+func newSearch(q Question, o Options) *search {
+	s := &search{
+		q: q, modes: allModes(), modelError: o.ModelError,
+		c0:    math.Log(math.Sqrt(q.Nominal/q.ArealDensity) / (2 * math.Pi * q.Radius)),
+		reach: 0.5 * math.Log(o.Widest),
+	}
+	for i, p := range q.Peaks {
+		if !p.Use {
+			continue
+		}
+		l := line{peak: i, log: math.Log(p.Frequency), s: math.Hypot(o.ModelError, p.Uncertainty/p.Frequency), pin: -1}
+		if p.N > 0 {
+			l.pin = findMode(s.modes, p.M, p.N)
+			s.pinCount++
+		}
+		s.lines = append(s.lines, l)
+	}
+	slices.SortFunc(s.lines, func(a, b line) int {
+		if a.log != b.log {
+			if a.log < b.log {
+				return -1
+			}
+			return 1
+		}
+		return a.peak - b.peak
+	})
+	return s
+}
+
+func (s *search) allPinned() bool { return s.pinCount == len(s.lines) }
+
+// start is a place on the c axis where several peaks meet modes.
+type start struct {
+	c, score float64
+}
+
+const mostStarts = 300
+
+// starts finds where to fit. Every pair of a peak and a mode votes for the c at
+// which the one is the other; a window that slides along the c axis counts how
+// many peaks vote within it. The windows are ranked by a first estimate of the
+// evidence, and only the best of any neighbourhood is kept.
+func (s *search) starts() []start {
+	if s.pinCount > 0 {
+		// The pinned peaks say where; they are fitted together later.
+		sum, weight := 0.0, 0.0
+		for _, l := range s.lines {
+			if l.pin >= 0 {
+				w := 1 / (l.s * l.s)
+				sum, weight = sum+w*(l.log-s.modes[l.pin].log), weight+w
+			}
+		}
+		return []start{{c: sum / weight}}
+	}
+	type vote struct {
+		c    float64
+		line int
+	}
+	var votes []vote
+	for i, l := range s.lines {
+		for _, k := range s.modes {
+			if c := l.log - k.log; math.Abs(c-s.c0) <= s.reach {
+				votes = append(votes, vote{c, i})
+			}
+		}
+	}
+	sort.Slice(votes, func(a, b int) bool { return votes[a].c < votes[b].c })
+	spreads := make([]float64, len(s.lines))
+	for i, l := range s.lines {
+		spreads[i] = l.s
+	}
+	sort.Float64s(spreads)
+	window := 4 * spreads[len(spreads)/2]
+	top := s.lines[len(s.lines)-1].log
+	var all []start
+	counts := make([]int, len(s.lines))
+	distinct, end := 0, 0
+	for begin := range votes {
+		for end < len(votes) && votes[end].c <= votes[begin].c+window {
+			if counts[votes[end].line]++; counts[votes[end].line] == 1 {
+				distinct++
+			}
+			end++
+		}
+		c := 0.5 * (votes[begin].c + votes[end-1].c)
+		inBand := countUpTo(s.modes, top-c+0.01)
+		score := logShown(min(distinct, inBand), inBand) + float64(distinct)*math.Log(0.4/window) +
+			float64(len(s.lines)-distinct)*logForeign + s.logPrior(c)
+		all = append(all, start{c, score})
+		if counts[votes[begin].line]--; counts[votes[begin].line] == 0 {
+			distinct--
+		}
+	}
+	sort.Slice(all, func(a, b int) bool {
+		if all[a].score != all[b].score {
+			return all[a].score > all[b].score
+		}
+		return all[a].c < all[b].c
+	})
+	var kept []start
+	for _, candidate := range all {
+		near := false
+		for _, k := range kept {
+			if near = math.Abs(k.c-candidate.c) < window/2; near {
+				break
+			}
+		}
+		if !near {
+			if kept = append(kept, candidate); len(kept) == mostStarts {
+				break
+			}
+		}
+	}
+	return kept
+}
