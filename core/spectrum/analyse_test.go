@@ -308,6 +308,34 @@ func TestOpposite(t *testing.T) {
 	}
 }
 
+// TestQuiet: a soft tap and one that hardly rises are called so, a clear one is not.
+func TestQuiet(t *testing.T) {
+	for _, c := range []struct {
+		amplitude, noise float64
+		quiet            bool
+	}{{0.2, 1e-4, false}, {0.002, 1e-6, true}, {0.2, 0.03, true}} {
+		x := syntheticTap(rand.New(rand.NewPCG(51, 1)), 8000, 0.5, 2, c.noise, part{150, c.amplitude, 4})
+		rec, _ := FromSamples(x, 8000)
+		res := analyse(t, rec, Options{})
+		if hasNote(res, NoteQuiet) != c.quiet || len(res.Strikes) != 1 || math.Abs(res.Strikes[0]-0.5) > 0.01 {
+			t.Errorf("amplitude %g in noise %g: strikes %v, notes %v", c.amplitude, c.noise, res.Strikes, res.Notes)
+		}
+	}
+}
+
+func TestMains(t *testing.T) {
+	for _, c := range []struct {
+		f           float64
+		base, order int
+	}{
+		{50, 50, 1}, {49.85, 50, 1}, {49.7, 0, 0}, {60.1, 60, 1}, {120, 60, 2}, {250.4, 50, 5}, {300, 50, 6}, {360, 60, 6}, {55, 0, 0}, {3, 0, 0},
+	} {
+		if b, k := mains(c.f); b != c.base || k != c.order {
+			t.Errorf("%g Hz: order %d of %d Hz, want %d of %d", c.f, k, b, c.order, c.base)
+		}
+	}
+}
+
 // TestOddRecordings: silence, a constant, one click, the shortest stretch, full-scale squares.
 func TestOddRecordings(t *testing.T) {
 	fill := func(n int, f func(i int) float64) []float64 {

@@ -20,7 +20,6 @@ type Analyzer struct {
 	filter    []float64 // low-pass for taking every filterFor-th sample
 	filterFor int
 	shifted   []complex128
-	envelope  []float64
 	noise     []float64
 	rungs     []rung
 	masked    []bool
@@ -69,6 +68,9 @@ func (a *Analyzer) Power(dst, x []float64, padded int, w Window) []float64 {
 func (a *Analyzer) plan(n int) *fourier.FFT {
 	p := a.plans[n]
 	if p == nil {
+		if len(a.plans) >= mostPlans {
+			clear(a.plans)
+		}
 		p = fourier.NewFFT(n)
 		a.plans[n] = p
 	}
@@ -79,12 +81,22 @@ func (a *Analyzer) window(w Window, n int) []float64 {
 	key := windowKey{w, n}
 	v := a.windows[key]
 	if v == nil {
+		if len(a.windows) >= mostWindows {
+			clear(a.windows)
+		}
 		v = make([]float64, n)
 		w.Fill(v)
 		a.windows[key] = v
 	}
 	return v
 }
+
+// An Analyzer forgets its plans and windows when it has met this many lengths: recordings of ever new
+// lengths must not fill the memory.
+const (
+	mostPlans   = 4 * maxRungs
+	mostWindows = 200
+)
 
 // resize returns x with length n, new only if its capacity does not do.
 func resize(x []float64, n int) []float64 {

@@ -15,7 +15,9 @@
 //	interpolate.go   the log parabola through three bins
 //	ringdown.go      decay rate from the narrow-band envelope
 //	uncertainty.go   what noise, interpolation and neighbours do to a frequency
-//	peaks.go         the ladder of lengths: each peak read where it is read best
+//	ladder.go        spectra over a ladder of lengths, and the candidates they show
+//	candidates.go    their decay rates, and the rung on which each is read best
+//	peaks.go         candidates to peaks: ringing, steady or unclear, mains or not
 //	display.go       a spectrum with few points in which no peak vanishes
 //	analyse.go       the whole, with options and result
 //

@@ -14,7 +14,7 @@ import (
 // from is itself a median of a few hundred bins (standard deviation 4 % to 8 % of the power), and the
 // formulas are of first order in the noise. The mean error is held to 4 sqrt(1/n) uncertainties.
 func TestScatter(t *testing.T) {
-	const rate, trials = 8000.0, 300
+	const rate, trials = 8000.0, 200
 	for _, c := range []struct {
 		name    string
 		noise   float64

@@ -19,45 +19,62 @@ type ringDown struct {
 	residual float64 // rms of the envelope about the straight line, dB
 }
 
-// ringDown fits the decay rate of the tone at f in x: the samples are shifted by -f, averaged
-// under overlapping Hann windows of the given length in seconds, and a straight line is drawn
-// through the logarithm of the magnitude
+// envelope is the narrow-band envelope of one tone: y[m] = ln |z_m|, of frames of n samples, hop apart.
+type envelope struct {
+	y      []float64
+	n, hop int
+}
+
+// frameOf returns the frame and the hop for frames of about the given length in seconds.
+func frameOf(length, rate float64) (n, hop int) {
+	hop = max(1, int(length*rate/framesApart))
+	return hop * framesApart, hop
+}
+
+// follow shifts the samples by -f and averages them under overlapping Hann windows of n samples. It
+// uses the memory of old. Too short an x gives no frames.
+func (a *Analyzer) follow(old envelope, x []float64, rate, f float64, n, hop int) envelope {
+	e := envelope{y: old.y[:0], n: n, hop: hop}
+	if len(x) < n+(fewestFrames-1)*hop {
+		return e
+	}
+	a.heterodyne(x, 2*math.Pi*f/rate)
+	win := a.window(Hann, n)
+	for from := 0; from+n <= len(x); from += hop {
+		re, im := 0.0, 0.0
+		for i, v := range a.shifted[from : from+n] {
+			re += win[i] * real(v)
+			im += win[i] * imag(v)
+		}
+		e.y = append(e.y, math.Log(max(re*re+im*im, leastPower))/2)
+	}
+	return e
+}
+
+// ringDown fits the decay rate to the envelope of the tone at f: a straight line through
 //
 //	ln |z_m| = b - d t_m + Re(n_m / s_m)
 //
-// by weighted least squares, twice reweighted. noise is the variance of a sample of the white
+// by weighted least squares, reweighted three times. noise is the variance of a sample of the white
 // noise that would give the floor met at f. The uncertainty follows from the covariance of n_m
 // (frames overlap) and is widened where the residuals are larger than noise makes them, as
 // beating neighbours do. What leaks in from the other tones given (all but number self) counts as
 // noise of its own in each frame.
-func (a *Analyzer) ringDown(x []float64, rate float64, self int, f, length, noise float64, others []tone) ringDown {
+func (a *Analyzer) ringDown(e envelope, rate float64, self int, f, noise float64, others []tone) ringDown {
 	// The logarithm of a magnitude at a power ratio r has the bias E1(r)/2, under 0.002 at
 	// frameSNR, and the variance 1/(2 r): Rice, Bell Syst. Tech. J. 24 (1945) 46-156, sec. 3.10.
-	hop := max(1, int(length*rate/framesApart))
-	n := hop * framesApart
-	if len(x) < n+(fewestFrames-1)*hop {
+	if len(e.y) < fewestFrames {
 		return ringDown{}
 	}
-	a.heterodyne(x, 2*math.Pi*f/rate)
-	win := a.window(Hann, n)
-	frames := (len(x)-n)/hop + 1
-	a.envelope = resize(a.envelope, frames)
-	for m := range a.envelope {
-		re, im := 0.0, 0.0
-		for i, v := range a.shifted[m*hop : m*hop+n] {
-			re += win[i] * real(v)
-			im += win[i] * imag(v)
-		}
-		a.envelope[m] = math.Log(max(re*re+im*im, leastPower)) / 2
-	}
-	step := float64(hop) / rate
-	a.noise = resize(a.noise, frames)
+	win := a.window(Hann, e.n)
+	step, seconds := float64(e.hop)/rate, float64(e.n)/rate
+	a.noise = resize(a.noise, len(e.y))
 	white := max(noise*sumSquares(win), leastPower)
 	for m := range a.noise {
 		a.noise[m] = white
 	}
-	addLeaks(a.noise, others, self, f, float64(n)/rate, step, n)
-	fit := envelopeFit{y: a.envelope, step: step, noise: a.noise}
+	addLeaks(a.noise, others, self, f, seconds, step, e.n)
+	fit := envelopeFit{y: e.y, step: step, noise: a.noise}
 	if !fit.start() {
 		return ringDown{}
 	}
@@ -66,9 +83,8 @@ func (a *Analyzer) ringDown(x []float64, rate float64, self int, f, length, nois
 			return ringDown{}
 		}
 	}
-	r := fit.result(overlap(win, hop))
-	w := Hann.transform(r.decay*float64(n)/rate, 0)
-	r.start = 2 * math.Exp(fit.b) / (float64(n) * real(w))
+	r := fit.result(overlap(win, e.hop))
+	r.start = 2 * math.Exp(fit.b) / (float64(e.n) * real(Hann.transform(r.decay*seconds, 0)))
 	return r
 }
 

@@ -54,7 +54,7 @@ type reading struct {
 // settle sets the decay rate, and the amplitude at the start that goes with it.
 func (r *reading) settle(decay float64, w Window) {
 	r.decay = decay
-	r.amplitude = r.steady * w.steadyMoments().wg / w.moments(min(decay*r.seconds, mostDecay)).wg
+	r.amplitude = r.steady * w.terms()[0] / real(w.transform(min(decay*r.seconds, mostDecay), 0))
 }
 
 func (r reading) u() float64 {

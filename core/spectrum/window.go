@@ -1,6 +1,9 @@
 package spectrum
 
-import "math"
+import (
+	"math"
+	"sync"
+)
 
 // Window names a window function.
 type Window string
@@ -151,8 +154,24 @@ func (w Window) steadyMoments() moments {
 	return m
 }
 
+// momentSteps is the number of steps of the trapezoid rule; see TestMoments for its error.
+const momentSteps = 256
+
+// momentTables holds each window's values at the rule's places.
+var momentTables = sync.OnceValue(func() map[Window][]float64 {
+	all := map[Window][]float64{}
+	for _, w := range Windows() {
+		t := make([]float64, momentSteps+1)
+		w.Fill(t[:momentSteps])
+		t[momentSteps] = t[0] // periodic
+		all[w] = t
+	}
+	return all
+})
+
 func (w Window) integrate(c float64) moments {
-	const n = 256 // the trapezoid rule on smooth periodic windows; see TestMoments for its error
+	const n = momentSteps
+	table := momentTables()[w]
 	var m moments
 	var wgt float64
 	sum := func(f func(x, win, tone, ends float64)) {
@@ -161,8 +180,7 @@ func (w Window) integrate(c float64) moments {
 			if i == 0 || i == n {
 				ends /= 2
 			}
-			win := w.At(math.Mod(x, 1))
-			f(x, win, math.Exp(-c*x), ends)
+			f(x, table[i], math.Exp(-c*x), ends)
 		}
 	}
 	sum(func(x, win, tone, h float64) {
