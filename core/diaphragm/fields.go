@@ -74,7 +74,8 @@ func FieldByPath(path string) (Field, bool) {
 }
 
 func fieldList(lines int) []Field {
-	list := identityFields()
+	list := make([]Field, 0, 32+3*lines)
+	list = append(list, identityFields()...)
 	list = append(list, ringFields()...)
 	list = append(list, sheetFields()...)
 	list = append(list, tensionFields()...)

@@ -46,6 +46,11 @@ func (u Unit) FromSI(si float64) float64 {
 // Find looks a unit up by its symbol or another spelling of it ("um", "kg/m2")
 // within one dimension.
 func Find(d Dimension, symbol string) (Unit, bool) {
+	for _, u := range units(d) {
+		if u.Symbol == symbol {
+			return u, true
+		}
+	}
 	return find(d, key(symbol))
 }
 
