@@ -58,10 +58,12 @@ func phaseTerms(n int) int {
 	return 6
 }
 
-// phaseTail returns the sum over k of a_k(t)/s^k and its derivative in s.
-func phaseTail(a [][]float64, s, t float64) (sum, slope float64) {
+// phaseTail returns the sum over odd k of sign^((k-1)/2) a_k(t)/s^k and its
+// derivative in s, t being proportional to s^-2. The sign is 1 for J and -1 for
+// the functions of imaginary argument.
+func phaseTail(a [][]float64, s, t, sign float64) (sum, slope float64) {
 	r := 1 / s
-	r2 := r * r
+	r2 := sign * r * r
 	for i := len(a) - 1; i >= 0; i-- {
 		c := a[i]
 		k := float64(2*i + 1 + 2*(len(c)-1))
@@ -74,7 +76,7 @@ func phaseTail(a [][]float64, s, t float64) (sum, slope float64) {
 		sum = sum*r2 + p
 		slope = slope*r2 + q
 	}
-	return sum * r, -slope * r2
+	return sum * r, -slope * r * r
 }
 
 // zeroByPhase solves for the zero number n with phase (n - off) pi, n at least
@@ -92,7 +94,7 @@ func zeroByPhase(a [][]float64, nu float64, n int, off, x float64) (zero, low fl
 		sl := ((uh - p) - e + ul) / (2 * sh)
 
 		t := nu / sh
-		sum, ds := phaseTail(a, sh, t*t)
+		sum, ds := phaseTail(a, sh, t*t, 1)
 		slope := sh/x + ds*x/sh
 		ph, pl := arcTerm(nu, sh, sl)
 		rest := (th - sh + ph) + (tl - sl + pl) - sum
@@ -142,7 +144,7 @@ func atanDD(qh, ql float64) (h, l float64) {
 func phaseSlope(a [][]float64, nu, x, low float64) float64 {
 	s := math.Sqrt((x - nu + low) * (x + nu))
 	t := nu / s
-	_, ds := phaseTail(a, s, t*t)
+	_, ds := phaseTail(a, s, t*t, 1)
 	return s/x + ds*x/s
 }
 

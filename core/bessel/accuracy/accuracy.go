@@ -32,6 +32,7 @@ func Measure(tables fs.FS, stride int) ([]Region, error) {
 		points []probe
 	}{
 		{"jy.tsv.gz", cylinder},
+		{"ik.tsv.gz", modified},
 		{"zeros.tsv.gz", zeros},
 	} {
 		rows, err := readTable(tables, t.file)

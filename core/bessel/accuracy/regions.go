@@ -67,6 +67,31 @@ var cylinder = []probe{
 	j("J, all whole orders to 200", 2, both(row.whole, upTo200)),
 	jseq("JSeq, whole orders to 200", 2, upTo200),
 	jseq("JSeq, whole orders to 1000, x to 1e6", 2, func(r row) bool { return !upTo200(r) }),
+	y("Y, whole orders to 200, x to 200", 4, both(row.whole, upTo200)),
+	y("Y, real orders to 200, x to 200", 8, upTo200),
+	y("Y, orders to 1000, x to 1e6", 8, func(r row) bool { return !upTo200(r) }),
+}
+
+func y(name string, promise float64, in func(row) bool) probe {
+	return probe{
+		name: name, promise: promise, in: in, want: column(1), scale: envelope,
+		got: func(r row) float64 { return bessel.Y(r.nu, r.x) },
+	}
+}
+
+// modified holds the regions of I, K and their logarithmic derivatives.
+var modified = []probe{
+	mod("exp(-x) I, orders to 1000, x to 1e8", 0, bessel.IScaled),
+	mod("exp(x) K, orders to 1000, x to 1e8", 1, bessel.KScaled),
+	mod("I'/I, orders to 1000, x to 1e8", 2, bessel.RatioI),
+	mod("K'/K, orders to 1000, x to 1e8", 3, bessel.RatioK),
+}
+
+func mod(name string, i int, f func(nu, x float64) float64) probe {
+	return probe{
+		name: name, promise: 8, want: column(i),
+		got: func(r row) float64 { return f(r.nu, r.x) },
+	}
 }
 
 // pairOf returns the last of the first n zeros found in sequence and what
