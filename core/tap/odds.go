@@ -36,7 +36,7 @@ func (s *search) evidence(r reading) float64 {
 	k, inBand := len(r.pairs), 1+r.pairs[len(r.pairs)-1].mode
 	log := logShown(k, inBand) + s.logPrior(r.c) + math.Log(math.Sqrt(2*math.Pi)*r.sc) + float64(len(s.lines)-k)*logForeign
 	for _, p := range r.pairs {
-		log += logNormal(s.residual(p, r.c), s.lines[p.line].s)
+		log += logNormal(s.residual(p, r.c), s.lines[p.line].s, s.lines[p.line].logS)
 	}
 	return log
 }

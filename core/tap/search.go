@@ -14,7 +14,8 @@ type line struct {
 	peak int     // index in the question
 	log  float64 // ln f
 	s    float64 // relative standard deviation about the ideal sheet
-	pin  int     // index of the mode it is pinned to, or -1
+	logS float64
+	pin  int // index of the mode it is pinned to, or -1
 }
 
 // search holds what one Read needs.
@@ -40,6 +41,7 @@ func newSearch(q Question, o Options) *search {
 			continue
 		}
 		l := line{peak: i, log: math.Log(p.Frequency), s: math.Hypot(o.ModelError, p.Uncertainty/p.Frequency), pin: -1}
+		l.logS = math.Log(l.s)
 		if p.N > 0 {
 			l.pin = findMode(s.modes, p.M, p.N)
 			s.pinCount++
@@ -65,7 +67,13 @@ type start struct {
 	c, score float64
 }
 
-const mostStarts = 300
+// No more than mostStarts are fitted, and none whose estimate lies more than
+// hopeless below the best one: the estimate errs by far less, and e^-30 is
+// nothing among odds.
+const (
+	mostStarts = 300
+	hopeless   = 30
+)
 
 // starts finds where to fit. Every pair of a peak and a mode votes for the c at
 // which the one is the other; a window that slides along the c axis counts how
@@ -130,6 +138,9 @@ func (s *search) starts() []start {
 	})
 	var kept []start
 	for _, candidate := range all {
+		if candidate.score < all[0].score-hopeless {
+			break
+		}
 		near := false
 		for _, k := range kept {
 			if near = math.Abs(k.c-candidate.c) < window/2; near {
