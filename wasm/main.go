@@ -9,7 +9,6 @@ package main
 
 import (
 	"context"
-	"crypto/rand"
 	"syscall/js"
 	"time"
 
@@ -31,7 +30,7 @@ func main() {
 	case "compute":
 		answer = engine.CallBulk
 	case "store":
-		answer = newStore(databaseName, time.Now, rand.Reader).answer
+		answer = newStore(databaseName, time.Now, random{}).answer
 	default:
 		panic("hoopsheetHost.role is " + role)
 	}

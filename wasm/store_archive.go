@@ -12,6 +12,7 @@ import (
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/engine"
+	"hoopsheet/core/quantity"
 )
 
 var everything = []string{inRecords, inRevisions, inTaps, inRecordings, inSettings}
@@ -309,8 +310,8 @@ func (in *intake) takeSettings(from diaphragm.ArchiveSettings) error {
 	if err != nil || made {
 		return err
 	}
-	settings := engine.Settings{LinkAddress: from.LinkAddress, Units: engine.UnitSystem(from.Units), By: from.By}
-	if settings == firstSettings || !slices.Contains(engine.UnitSystems(), settings.Units) {
+	settings := engine.Settings{LinkAddress: from.LinkAddress, Units: quantity.System(from.Units), By: from.By}
+	if settings == firstSettings || !slices.Contains(quantity.Systems(), settings.Units) {
 		return nil
 	}
 	return in.t.putJSON(inSettings, settingsKey, settings)

@@ -17,7 +17,9 @@ import (
 // Limits on waiting, generous for a slow tablet; without them a blocked or
 // broken database would never answer.
 const (
-	openLimit        = 10 * time.Second
+	openLimit = 15 * time.Second
+	// Tabs of this tool let go as soon as they are asked to.
+	blockedLimit     = 2 * time.Second
 	transactionLimit = 30 * time.Second
 )
 
@@ -80,19 +82,19 @@ func (b *base) database() (*idb.Database, error) {
 		}
 		b.attempt = a
 	}
-	select {
-	case <-a.done:
-		if a.err != nil && b.attempt == a {
-			b.attempt = nil // the next call tries anew
+	limit, blocked, because := time.After(openLimit), a.blocked, errSlow
+	for {
+		select {
+		case <-a.done:
+			if a.err != nil && b.attempt == a {
+				b.attempt = nil // the next call tries anew
+			}
+			return a.db, a.err
+		case <-blocked:
+			limit, blocked, because = time.After(blockedLimit), nil, errBlocked
+		case <-limit:
+			return nil, because
 		}
-		return a.db, a.err
-	case <-time.After(openLimit):
-	}
-	select {
-	case <-a.blocked:
-		return nil, errBlocked
-	default:
-		return nil, errSlow
 	}
 }
 

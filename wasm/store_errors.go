@@ -4,6 +4,7 @@ package main
 
 import (
 	"errors"
+	"syscall/js"
 
 	"github.com/hack-pad/go-indexeddb/idb"
 
@@ -66,5 +67,13 @@ func connectionLost(err error) bool {
 	return is(err, "InvalidStateError") || is(err, "UnknownError") || is(err, "AbortError")
 }
 
-// is reports whether err is the DOMException of that name.
-func is(err error, name string) bool { return errors.Is(err, idb.NewDOMException(name)) }
+// is reports whether err is the DOMException of that name. What a method
+// threw comes from go-indexeddb as it was thrown, what a request failed with
+// as a DOMException.
+func is(err error, name string) bool {
+	var thrown js.Error
+	if errors.As(err, &thrown) {
+		return thrown.Value.Get("name").String() == name
+	}
+	return errors.Is(err, idb.NewDOMException(name))
+}

@@ -8,13 +8,14 @@ import (
 	"strings"
 
 	"hoopsheet/core/engine"
+	"hoopsheet/core/quantity"
 )
 
 // settingsKey is the one key of inSettings.
 const settingsKey = "settings"
 
 // firstSettings are those of a browser in which none have been made.
-var firstSettings = engine.Settings{Units: engine.UnitsSI}
+var firstSettings = engine.Settings{Units: quantity.SI}
 
 func (t *txn) readSettings() (engine.Settings, bool, error) {
 	settings := firstSettings
@@ -35,7 +36,7 @@ func (s *store) settings(*engine.NoRequest) (*engine.Settings, error) {
 }
 
 func (s *store) putSettings(request *engine.Settings) (*engine.Done, error) {
-	if !slices.Contains(engine.UnitSystems(), request.Units) {
+	if !slices.Contains(quantity.Systems(), request.Units) {
 		return nil, engine.Fail("units", engine.CodeRequest, "The units are either \"si\" or \"inch-pound\".")
 	}
 	settings := *request
