@@ -13,11 +13,13 @@ type RespondRequest struct {
 	// Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
 	Orders  int `json:"orders"`
 	Circles int `json:"circles"`
-	// Duration of the computed time, s; Frames evenly spaced over it.
+	// Duration of the computed time, s, 0 for six periods of mode (0, 1);
+	// Frames evenly spaced over it.
 	Duration float64 `json:"duration"`
 	Frames   int     `json:"frames"`
 	// Radii and Angles set the display grid: radii j/(Radii-1), angles
-	// 2 pi i/Angles.
+	// 2 pi i/Angles. Angles is even, above 2 Orders, and its half has no prime
+	// factor above 5.
 	Radii  int              `json:"radii"`
 	Angles int              `json:"angles"`
 	Points []response.Point `json:"points"`

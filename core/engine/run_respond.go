@@ -2,15 +2,15 @@ package engine
 
 import (
 	"context"
-	"strings"
 
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/modes"
 	"hoopsheet/core/response"
 )
 
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
 	c := respondCase(request)
-	if err := refuse(append(documentProblems(request.Document), c.Check()...)); err != nil {
+	if err := refuse(append(diaphragm.Validate(request.Document), c.Check()...)); err != nil {
 		return nil, err
 	}
 	motion, problems, err := response.Respond(ctx, c, progress(ctx))
@@ -50,8 +50,15 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 	return result, nil
 }
 
+// shownPeriods of mode (0, 1) are computed where no duration is asked for.
+const shownPeriods = 6
+
 func respondCase(request *RespondRequest) *response.Case {
 	doc := &request.Document
+	duration := request.Duration
+	if lowest := modes.Ideal(doc.Ring.Radius, doc.Tension.Nominal, doc.Sheet.ArealDensity(), 1); duration == 0 && len(lowest) == 1 {
+		duration = shownPeriods / lowest[0].Frequency
+	}
 	return &response.Case{
 		Sheet: response.Sheet{
 			Radius:       doc.Ring.Radius,
@@ -64,18 +71,10 @@ func respondCase(request *RespondRequest) *response.Case {
 		Velocity:     request.Velocity,
 		Orders:       request.Orders,
 		Circles:      request.Circles,
-		Duration:     request.Duration,
+		Duration:     duration,
 		Frames:       request.Frames,
 		Radii:        request.Radii,
 		Angles:       request.Angles,
 		Points:       request.Points,
 	}
 }
-
-// documentProblems lists what is wrong with the document of a request, with
-// "document." before the fields of it that a request may repeat.
-func documentProblems(doc diaphragm.Diaphragm) []Problem {
-	return diaphragm.Validate(doc)
-}
-
-var _ = strings.TrimSpace

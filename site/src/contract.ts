@@ -842,12 +842,12 @@ export interface RespondRequest {
   orders: number;
   circles: number;
   /**
-   * Duration of the computed time, s; Frames evenly spaced over it.
+   * Duration of the computed time, s, 0 for six periods of mode (0, 1); Frames evenly spaced over it.
    */
   duration: number;
   frames: number;
   /**
-   * Radii and Angles set the display grid: radii j/(Radii-1), angles 2 pi i/Angles.
+   * Radii and Angles set the display grid: radii j/(Radii-1), angles 2 pi i/Angles. Angles is even, above 2 Orders, and its half has no prime factor above 5.
    */
   radii: number;
   angles: number;

@@ -18,3 +18,8 @@ export function cautions(sentences: readonly string[]): TemplateResult[] {
 export function assumptions(sentences: readonly string[]): TemplateResult {
   return html`<details class="assumptions"><summary>What this assumes</summary><ul>${sentences.map((s) => html`<li>${s}</li>`)}</ul></details>`;
 }
+
+/** The same where nothing may be folded away: on what is handed over. */
+export function assumptionsOpen(sentences: readonly string[]): TemplateResult {
+  return html`<section class="note" aria-label="What this assumes"><p class="note-title">What this assumes</p><ul>${sentences.map((s) => html`<li>${s}</li>`)}</ul></section>`;
+}
