@@ -29,7 +29,8 @@ func (s *search) match(c float64) []pair {
 		back  int     // the link before, or -1
 	}
 	var links []link
-	best := newRunningBest(len(s.modes))
+	best := &s.best
+	best.clear(len(s.modes))
 	for i, l := range s.lines {
 		if l.pin >= 0 {
 			continue
@@ -75,12 +76,13 @@ type runningBest struct {
 	link  []int
 }
 
-func newRunningBest(n int) *runningBest {
-	b := &runningBest{make([]float64, n+1), make([]int, n+1)}
-	for i := range b.link {
-		b.link[i] = -1
+// clear makes it empty for n modes, in the memory it has.
+func (b *runningBest) clear(n int) {
+	if len(b.total) != n+1 {
+		b.total, b.link = make([]float64, n+1), make([]int, n+1)
+		return
 	}
-	return b
+	clear(b.total) // a link is read only where its total is above zero
 }
 
 // before returns the heaviest chain that ends at a mode below k; 0 and -1 where

@@ -13,9 +13,10 @@ import (
 type line struct {
 	peak int     // index in the question
 	log  float64 // ln f
-	s    float64 // relative standard deviation about the ideal sheet
-	logS float64
-	pin  int // index of the mode it is pinned to, or -1
+	// s is the relative standard deviation about the ideal sheet: the model
+	// error alone where the peak states no uncertainty; logS its logarithm.
+	s, logS float64
+	pin     int // index of the mode it is pinned to, or -1
 }
 
 // search holds what one Read needs.
@@ -26,13 +27,12 @@ type search struct {
 	c0       float64 // c of the nominal tension
 	reach    float64 // largest |c - c0| looked at
 	pinCount int
-	// Peaks without a stated uncertainty scatter by the model error alone.
-	modelError float64
+	best     runningBest // working memory of match
 }
 
 func newSearch(q Question, o Options) *search {
 	s := &search{
-		q: q, modes: allModes(), modelError: o.ModelError,
+		q: q, modes: allModes(),
 		c0:    math.Log(math.Sqrt(q.Nominal/q.ArealDensity) / (2 * math.Pi * q.Radius)),
 		reach: 0.5 * math.Log(o.Widest),
 	}
