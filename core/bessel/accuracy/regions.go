@@ -143,3 +143,21 @@ var zeros = []probe{
 		},
 	},
 }
+
+// annulus holds the roots for the four pairs of edges; nu is m, x is n there.
+var annulus = []probe{
+	annular("ZeroAnnulus, clamped at both edges", 0, bessel.Dirichlet, bessel.Dirichlet),
+	annular("ZeroAnnulusPrime, free at both edges", 1, bessel.Neumann, bessel.Neumann),
+	annular("annulus, clamped outside, free inside", 2, bessel.Dirichlet, bessel.Neumann),
+	annular("annulus, free outside, clamped inside", 3, bessel.Neumann, bessel.Dirichlet),
+}
+
+func annular(name string, i int, outer, inner bessel.Edge) probe {
+	return probe{
+		name: name, promise: 2, want: column(i),
+		got: func(r row) float64 {
+			return bessel.ZeroAnnulusEdges(int(r.nu), r.q, r.n(), outer, inner)
+		},
+		amplify: func(r row) float64 { return math.Max(1, r.q/(1-r.q)) },
+	}
+}
