@@ -74,8 +74,8 @@ func (c *Case) Check() []diaphragm.Problem {
 	if sound {
 		if c.Angles != disc.NextAngles(c.Angles) || c.Angles < disc.MinAngles(c.Orders) {
 			add("angles", diaphragm.CodeBounds, "The number of angles of the display grid is "+strconv.Itoa(c.Angles)+
-				"; modes with up to "+strconv.Itoa(c.Orders)+" nodal diameters need an even number from "+strconv.Itoa(2*c.Orders+2)+
-				" on whose half has no prime factor above 5, such as "+strconv.Itoa(disc.NextAngles(max(c.Angles, 2*c.Orders+2)))+".")
+				"; modes with up to "+strconv.Itoa(c.Orders)+" nodal diameters need an even number of at least "+strconv.Itoa(2*c.Orders+2)+
+				", whose half has no prime factor above 5, such as "+strconv.Itoa(disc.NextAngles(max(c.Angles, 2*c.Orders+2)))+".")
 		}
 		if c.Frames*c.Radii*c.Angles > MostMotion {
 			add("frames", diaphragm.CodeConflict, "Frames times radii times angles come to "+strconv.Itoa(c.Frames*c.Radii*c.Angles)+
@@ -83,7 +83,7 @@ func (c *Case) Check() []diaphragm.Problem {
 		}
 	}
 	if !(c.Zeta >= 0 && c.Zeta <= 100) {
-		add("document.damping.ratio", diaphragm.CodeBounds, "The damping ratio must be from 0 to 100.")
+		add("damping.ratio", diaphragm.CodeBounds, "The damping ratio must be from 0 to 100.")
 	}
 	if most := MostPeriods * c.period(); !(c.Duration > 0 && c.Duration <= most) {
 		add("duration", diaphragm.CodeBounds, "The duration must be above 0 and at most "+strconv.Itoa(MostPeriods)+

@@ -23,7 +23,8 @@ const mostValue = 1e100
 // newSampled analyses a formula. The message, where there is one, says at
 // which place of the sheet the formula has no use.
 func newSampled(f *Formula, b *disc.Basis) (s *sampled, message string) {
-	if message := f.flaw(); message != "" {
+	largest, message := f.survey()
+	if message != "" {
 		return nil, message
 	}
 	// Beyond the least grid of the band, so that what lies outside the band is
@@ -32,7 +33,7 @@ func newSampled(f *Formula, b *disc.Basis) (s *sampled, message string) {
 	transform := takeTransform(b, disc.MinRadii(b.M, b.N)+spare, disc.NextAngles(3*b.M+24))
 	defer keepTransform(transform)
 	grid := transform.Grid
-	s = &sampled{formula: f, basis: b, coef: make([]float64, b.Len())}
+	s = &sampled{formula: f, basis: b, coef: make([]float64, b.Len()), largest: largest}
 	values := make([]float64, grid.Len())
 	for i, r := range grid.R {
 		// Differences over a step h err by h^2/6 of the third derivative and
@@ -102,24 +103,26 @@ func slopeEnergy(b *disc.Basis, coef []float64) float64 {
 	return sum
 }
 
-// flaw looks for places without a finite value on a grid that holds the
-// centre, the rim, the axes and the diagonals. The message is empty if there
-// is none.
-func (f *Formula) flaw() string {
+// survey looks at a grid that holds the centre, the rim, the axes and the
+// diagonals. It returns the largest |f|, or a message about the first place
+// without a finite value.
+func (f *Formula) survey() (largest float64, message string) {
 	const radii, angles = 64, 48
 	for i := range radii + 1 {
 		r := float64(i) / radii
 		for k := range angles {
 			theta := 2 * math.Pi * float64(k) / angles
-			if message := badValue(f.At(r, theta), r, theta); message != "" {
+			value := f.At(r, theta)
+			if message := badValue(value, r, theta); message != "" {
 				if i == 0 {
 					message += " Where a quotient has a limit at the centre, divide by max(r, 0.000001) in place of r."
 				}
-				return message
+				return 0, message
 			}
+			largest = math.Max(largest, math.Abs(value))
 		}
 	}
-	return ""
+	return largest, ""
 }
 
 func badValue(value, r, theta float64) string {

@@ -114,6 +114,10 @@ func (s Shape) form(b *disc.Basis, prefix string) (form, []diaphragm.Problem) {
 		if message != "" {
 			return nil, []diaphragm.Problem{{Field: prefix + "formula", Code: CodeFormula, Message: message, Offset: -1}}
 		}
+		if math.Abs(s.Peak)*form.largest > mostPeak {
+			return nil, []diaphragm.Problem{{Field: prefix + "peak", Code: diaphragm.CodeBounds, Offset: -1,
+				Message: "The peak times the formula reaches " + short(math.Abs(s.Peak)*form.largest) + "; at most 1,000,000 m or m/s are computed."}}
+		}
 		return form, nil
 	}
 	return rest{}, nil
