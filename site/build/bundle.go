@@ -170,7 +170,7 @@ func (b *bundler) sheet(name, extra string, fonts api.Loader) (map[string][]byte
 	options := b.options(nil)
 	options.Stdin = &api.StdinOptions{
 		Contents:   fmt.Sprintf("@import %q;\n%s", "./"+name, extra),
-		ResolveDir: b.site.styles, Sourcefile: name, Loader: api.LoaderCSS,
+		ResolveDir: b.site.styles, Sourcefile: "with-classes-" + name, Loader: api.LoaderCSS,
 	}
 	options.Loader = map[string]api.Loader{".woff2": fonts}
 	options.EntryNames, options.AssetNames = "site-[hash]", "[name]-[hash]"

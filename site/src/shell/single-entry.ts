@@ -4,6 +4,8 @@ import 'hoopsheet:wasm_exec';
 
 import './single-open.js';
 
+import './own-session.js';
+
 import '../hoopsheet.js';
 
 import { startOffline } from './offline.js';

@@ -1,4 +1,6 @@
 // Entry of our own hosted pages: the elements, and the shell around them.
+import './own-session.js';
+
 import '../hoopsheet.js';
 
 import { session } from '../session/session.js';
