@@ -39,7 +39,7 @@ func ZeroAnnulusEdges(m int, q float64, n int, outer, inner Edge) float64 {
 	if m < 0 {
 		m = -m
 	}
-	if !(q > 0 && q < 1) || n < 1 {
+	if !(q > 0 && q < 1) || n < 1 || !validOrder(float64(m)) {
 		return math.NaN()
 	}
 	// With the phases theta of J + iY and phi of J' + iY', both continuous and

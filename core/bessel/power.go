@@ -57,7 +57,7 @@ func logDD(xh, xl float64) (h, l float64) {
 	rl := ((d-p)-pe)/c + xl/xh*(m/c)
 	s, se := twoProd(rh, rh)
 	// ln(1 + r) = r - r^2/2 + r^3 (1/3 - r/4 + ...)
-	t := rh * s * (1.0/3 - rh*(1.0/4-rh*(1.0/5-rh*(1.0/6-rh*(1.0/7-rh*(1.0/8-rh*(1.0/9-rh/10)))))))
+	t := rh * s * (1.0/3 - rh*(1.0/4-rh*(1.0/5-rh*(1.0/6-rh*(1.0/7-rh*(1.0/8-rh*(1.0/9-rh*(1.0/10-rh/11))))))))
 	row := &logTable[int(j)-23]
 	h, l = twoSum(float64(float64(e)*ln2H), row[0])
 	l += float64(e)*ln2L + row[1]

@@ -20,18 +20,19 @@ const (
 
 // phase returns cos and sin, each as a compensated number, of
 //
-//	chi = x - (nu/2 + 1/4) pi,   0 <= nu <= 4096, 0 <= x < phaseLimit,
+//	chi = x - (nu/2 + 1/4) pi,   0 <= nu < 1,
 //
-// with an absolute error of about 2^-55.
+// with an absolute error of about 2^-55; from phaseLimit on, of 2^-52.
 func phase(nu, x float64) (ch, cl, sh, sl float64) {
+	if x >= phaseLimit {
+		ch, sh = farPhase(nu, x)
+		return ch, 0, sh, 0
+	}
 	k := math.Round(x*(1/halfPiH) - nu - 0.5)
-	// x - (k + nu + 1/2) pi/2. The whole part of nu is absorbed in the
-	// quadrant, which leaves a fraction between 1/2 and 3/2.
-	whole := math.Floor(nu)
-	q := k + whole
-	r, e := twoSum(x-float64(q*halfPi1), -float64(q*halfPi2))
-	e -= float64(q * halfPi3)
-	f, fe := twoSum(nu-whole, 0.5)
+	// x - (k + nu + 1/2) pi/2
+	r, e := twoSum(x-float64(k*halfPi1), -float64(k*halfPi2))
+	e -= float64(k * halfPi3)
+	f, fe := twoSum(nu, 0.5)
 	p, pe := twoProd(f, halfPiH)
 	h, l := twoSum(r, -p)
 	l += (e - pe) - (float64(f*halfPiL) + fe*halfPiH)
@@ -46,6 +47,13 @@ func phase(nu, x float64) (ch, cl, sh, sl float64) {
 		return sh, sl, -ch, -cl
 	}
 	return ch, cl, sh, sl
+}
+
+// farPhase returns cos and sin of x - (nu/2 + 1/4) pi in plain arithmetic.
+func farPhase(nu, x float64) (c, s float64) {
+	sx, cx := math.Sincos(x)
+	sp, cp := math.Sincos((nu/2 + 0.25) * math.Pi)
+	return cx*cp + sx*sp, sx*cp - cx*sp
 }
 
 // sinCosSmall returns cos and sin of h + l for |h| <= pi/4 + 2^-20, each as a

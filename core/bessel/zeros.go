@@ -4,8 +4,8 @@ import "math"
 
 const lengthMismatch = "bessel: slices differ in length"
 
-// ZeroJ returns the n-th positive zero j_{nu,n} of J_nu, for nu >= 0 and
-// n >= 1; NaN outside. The zero of J_nu at x = 0 is not counted. Accurate to
+// ZeroJ returns the n-th positive zero j_{nu,n} of J_nu, for 0 <= nu <=
+// MaxOrder and n >= 1; NaN outside. The zero of J_nu at x = 0 is not counted. Accurate to
 // 2 ulp for nu <= 1000 and n <= 1e6, see TestAccuracy in package accuracy.
 func ZeroJ(nu float64, n int) float64 {
 	if !validOrder(nu) || n < 1 {
@@ -62,10 +62,6 @@ func ZerosJPrimeAndValue(zeros, value []float64, nu float64) {
 		panic(lengthMismatch)
 	}
 	sequence(zeros, value, nu, zeroJPrime, startZeroJPrime)
-}
-
-func validOrder(nu float64) bool {
-	return nu >= 0 && !math.IsInf(nu, 1)
 }
 
 // sequence fills zeros, and other unless it is nil, by calls of zero(nu, n,
