@@ -20,6 +20,10 @@ const (
 	mostSectionPoints = 4096
 )
 
+// notableAir is the mass of moving air, in units of the sheet's, that is worth
+// a word: it lowers a frequency by one percent.
+const notableAir = 0.02
+
 // CodeRange is the code of a number outside what a call takes.
 const CodeRange Code = "range"
 
@@ -92,7 +96,7 @@ func airCautions(doc *diaphragm.Diaphragm, result *ModesResult) []string {
 	case !known:
 		return []string{"The air behind the sheet is closed in. It is a spring and a mass, so the real frequencies " +
 			"differ from those of the ideal sheet, that of mode (0, 1) most."}
-	case share > 0.02:
+	case share > notableAir:
 		return []string{"The air that moves with mode (0, 1) has about " + rounded(share) +
 			" times the mass of the sheet that moves: expect its frequency near " +
 			strconv.Itoa(int(math.Round(100/math.Sqrt(1+share)))) +

@@ -3,14 +3,20 @@ package engine
 import (
 	"context"
 
+	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
 	"hoopsheet/core/response"
 )
 
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
+	if problems := diaphragm.Validate(request.Document); len(problems) > 0 {
+		// Without a sound sheet there is no wave speed to judge the rest by.
+		problems = append(problems, request.Displacement.Check("displacement.")...)
+		return nil, refuse(append(problems, request.Velocity.Check("velocity.")...))
+	}
 	c := respondCase(request)
-	if err := refuse(append(diaphragm.Validate(request.Document), c.Check()...)); err != nil {
+	if err := refuse(c.Check()); err != nil {
 		return nil, err
 	}
 	motion, problems, err := response.Respond(ctx, c, progress(ctx))
@@ -39,7 +45,7 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		Histories:          []History{},
 		Strongest:          []ModeShare{},
 		Assumptions:        motion.Assumptions,
-		Warnings:           motion.Warnings,
+		Warnings:           append(airWarnings(&request.Document), motion.Warnings...),
 	}
 	for i, values := range motion.Histories {
 		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values})
@@ -77,4 +83,22 @@ func respondCase(request *RespondRequest) *response.Case {
 		Angles:       request.Angles,
 		Points:       request.Points,
 	}
+}
+
+// airWarnings says what the air, which the motion leaves out, would do to it.
+func airWarnings(doc *diaphragm.Diaphragm) []string {
+	around := doc.Surroundings
+	state, err := air.Moist(around.Temperature, around.Pressure, around.Humidity)
+	if err != nil {
+		return []string{}
+	}
+	share, known := modes.AirMass(state.Density*doc.Ring.Radius/doc.Sheet.ArealDensity(), doc.Faces)
+	switch {
+	case !known:
+		return []string{"The air closed in behind the sheet is left out; it stiffens and slows the real motion, that of mode (0, 1) most."}
+	case share > notableAir:
+		return []string{"The air that moves with mode (0, 1) has about " + rounded(share) +
+			" times the mass of the sheet that moves and is left out: the real motion is slower, and a blow of given momentum moves the sheet less."}
+	}
+	return []string{}
 }
