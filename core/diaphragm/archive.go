@@ -1,10 +1,7 @@
 package diaphragm
 
 import (
-	"archive/zip"
-	"bytes"
 	"encoding/json"
-	"io"
 	"sort"
 	"strconv"
 )
@@ -84,8 +81,7 @@ func EncodeArchive(a Archive, recordings func(tapID string) ([]byte, error)) ([]
 		return nil, err
 	}
 	a.Entries = entriesWithoutNil(a.Entries)
-	var out bytes.Buffer
-	file := zip.NewWriter(&out)
+	var file zipWriter
 	total := 0
 	for _, entry := range a.Entries {
 		for _, tap := range entry.Taps {
@@ -101,7 +97,7 @@ func EncodeArchive(a Archive, recordings func(tapID string) ([]byte, error)) ([]
 					" makes it larger than one file can carry (64 MiB for a recording, 512 MiB in all). Delete recordings that are not needed.")
 			}
 			// Stored, not deflated: sampled sound hardly shrinks.
-			if err := writeMember(file, recordingName(tap.ID), zip.Store, data); err != nil {
+			if err := file.add(recordingName(tap.ID), data, false); err != nil {
 				return nil, err
 			}
 			a.Recordings = append(a.Recordings, tap.ID)
@@ -120,22 +116,13 @@ func EncodeArchive(a Archive, recordings func(tapID string) ([]byte, error)) ([]
 	if len(index) > mostIndexBytes {
 		return nil, refuse("archive", CodeTooLarge, "The archive cannot be made: more than 64 MiB of diaphragms do not fit into one file.")
 	}
-	if err := writeMember(file, archiveIndex, zip.Deflate, index); err != nil {
+	if len(a.Recordings) >= mostArchiveFiles {
+		return nil, refuse("archive", CodeTooLarge, "The archive cannot be made: more than "+strconv.Itoa(mostArchiveFiles-1)+" recordings do not fit into one file.")
+	}
+	if err := file.add(archiveIndex, index, true); err != nil {
 		return nil, err
 	}
-	if err := file.Close(); err != nil {
-		return nil, err
-	}
-	return out.Bytes(), nil
-}
-
-func writeMember(file *zip.Writer, name string, method uint16, data []byte) error {
-	member, err := file.CreateHeader(&zip.FileHeader{Name: name, Method: method})
-	if err != nil {
-		return err
-	}
-	_, err = member.Write(data)
-	return err
+	return file.close(), nil
 }
 
 // DecodeArchive reads the file of everything: the archive and its recordings
@@ -148,27 +135,27 @@ func DecodeArchive(data []byte) (Archive, map[string][]byte, error) {
 	if len(data) > mostArchiveBytes {
 		return fail(CodeTooLarge, "The file is larger than 512 MiB; no archive is.")
 	}
-	file, err := zip.NewReader(bytes.NewReader(data), int64(len(data)))
+	contents, err := zipContents(data)
 	if err != nil {
 		if KindOfFile(data) == FileArchive {
 			return fail(CodeCutShort, "The archive is cut short or damaged: its table of contents, which stands at the end, cannot be read. Copy the file again. Nothing was imported.")
 		}
 		return fail(CodeUnreadable, "This is not an archive of Hoopsheet. Nothing was imported.")
 	}
-	if len(file.File) > mostArchiveFiles {
+	if len(contents) > mostArchiveFiles {
 		return fail(CodeTooLarge, "The archive holds more than "+strconv.Itoa(mostArchiveFiles)+" files. Nothing was imported.")
 	}
-	members := map[string]*zip.File{}
-	for _, member := range file.File {
-		if members[member.Name] != nil {
-			return fail(CodeUnreadable, "The archive holds two files of one name, "+shorten(member.Name, "none")+". Nothing was imported.")
+	members := map[string]zipMember{}
+	for _, member := range contents {
+		if _, twice := members[member.name]; twice {
+			return fail(CodeUnreadable, "The archive holds two files of one name, "+shorten(member.name, "none")+". Nothing was imported.")
 		}
-		members[member.Name] = member
+		members[member.name] = member
 	}
-	if members[archiveIndex] == nil {
+	if _, found := members[archiveIndex]; !found {
 		return fail(CodeUnreadable, "This zip file holds no "+archiveIndex+", so it is not an archive of Hoopsheet. Nothing was imported.")
 	}
-	index, err := readMember(members[archiveIndex], mostIndexBytes)
+	index, err := readMember(data, members[archiveIndex], mostIndexBytes)
 	if err != nil {
 		return Archive{}, nil, err
 	}
@@ -185,11 +172,11 @@ func DecodeArchive(data []byte) (Archive, map[string][]byte, error) {
 	recordings := map[string][]byte{}
 	total := len(index)
 	for _, id := range a.Recordings {
-		member := members[recordingName(id)]
-		if member == nil || !taps[id] || recordings[id] != nil {
+		member, found := members[recordingName(id)]
+		if !found || !taps[id] || recordings[id] != nil {
 			return fail(CodeUnreadable, "The archive is incomplete: the recording of tap "+shorten(id, "without a name")+" is missing. Nothing was imported.")
 		}
-		recording, err := readMember(member, min(mostRecordingBytes, mostArchiveBytes-total))
+		recording, err := readMember(data, member, min(mostRecordingBytes, mostArchiveBytes-total))
 		if err != nil {
 			return Archive{}, nil, err
 		}
@@ -199,21 +186,16 @@ func DecodeArchive(data []byte) (Archive, map[string][]byte, error) {
 	return a, recordings, nil
 }
 
-// readMember unfolds one file of the zip, whose checksum package zip checks.
-func readMember(member *zip.File, most int) ([]byte, error) {
-	stream, err := member.Open()
-	if err == nil {
-		defer stream.Close()
-		var data []byte
-		data, err = io.ReadAll(io.LimitReader(stream, int64(most)+1))
-		if len(data) > most {
-			return nil, refuse("archive", CodeTooLarge, "The file "+shorten(member.Name, "")+" in the archive unfolds to more than is allowed. Nothing was imported.")
-		}
-		if err == nil {
-			return data, nil
-		}
+// readMember unfolds one file of the zip.
+func readMember(data []byte, member zipMember, most int) ([]byte, error) {
+	if member.size > most {
+		return nil, refuse("archive", CodeTooLarge, "The file "+shorten(member.name, "")+" in the archive unfolds to more than is allowed. Nothing was imported.")
 	}
-	return nil, refuse("archive", CodeAltered, "The archive is damaged: the file "+shorten(member.Name, "")+" in it cannot be read. Copy the file again. Nothing was imported.")
+	content, err := member.read(data)
+	if err != nil {
+		return nil, refuse("archive", CodeAltered, "The archive is damaged: the file "+shorten(member.name, "")+" in it cannot be read. Copy the file again. Nothing was imported.")
+	}
+	return content, nil
 }
 
 // The forms in which hoopsheet.json is read: the outer Document, as it was

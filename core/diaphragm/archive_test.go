@@ -257,11 +257,9 @@ func writeArchiveSeeds(t *testing.T) {
 		"whole-1.zip": whole, "cut-short.zip": whole[:len(whole)*2/3], "altered.zip": altered, "empty-1.zip": encodeArchive(t, Archive{}, nil),
 		"newer.zip":     zipOf(member{archiveIndex, []byte(`{"format":"hoopsheet archive","version":2}`)}),
 		"other-zip.zip": zipOf(member{"word/document.xml", []byte("<x/>")}),
-		"bomb.zip":      zipOf(member{archiveIndex, bytes.Repeat([]byte(" "), 8<<20)}),
+		"bomb.zip":      zipOf(member{archiveIndex, bytes.Repeat([]byte(" "), 256<<10)}),
 	} {
-		if err := os.WriteFile(filepath.Join(archivesDir, name), data, 0o644); err != nil {
-			t.Fatal(err)
-		}
+		writeSeed(t, filepath.Join(archivesDir, name), data)
 	}
 }
 

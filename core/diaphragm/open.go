@@ -5,12 +5,8 @@ import (
 	"strconv"
 )
 
-// The largest document accepted, bytes of JSON, and the most lines to keep
-// clear of.
-const (
-	mostDocumentBytes = 1 << 20
-	mostLines         = 1000
-)
+// mostDocumentBytes is the largest document accepted, bytes of JSON.
+const mostDocumentBytes = 1 << 20
 
 // OpenDocument reads a document that came from outside, as JSON, written by
 // this version or an older one, and refuses what Validate finds wrong with it.
@@ -45,13 +41,12 @@ func ReadDocument(data []byte) (Diaphragm, error) {
 		return Diaphragm{}, err
 	}
 	switch {
-	case !soundID(doc.ID):
+	case doc.ID != "" && !soundID(doc.ID):
 		return Diaphragm{}, refuse("document", CodeUnreadable, what+" has no proper id: 1 to 64 letters, digits, - or _ are expected.")
 	case doc.Revision < 0:
 		return Diaphragm{}, refuse("document", CodeUnreadable, what+" counts a negative number of revisions.")
-	case len(doc.Avoid.Lines) > mostLines:
-		return Diaphragm{}, refuse("avoid.lines", CodeTooLarge, what+" lists "+strconv.Itoa(len(doc.Avoid.Lines))+
-			" lines to keep clear of; at most "+strconv.Itoa(mostLines)+" are read.")
+	case len(doc.Avoid.Lines) > MostLines:
+		return Diaphragm{}, &Refusal{Problems: []Problem{tooManyLines(len(doc.Avoid.Lines))}}
 	case !knownFace(doc.Faces.Upper.Kind):
 		return Diaphragm{}, refuse("faces.upper.kind", CodeUnreadable, what+" names a kind of upper face that is not known: "+shorten(string(doc.Faces.Upper.Kind), "none")+".")
 	case !knownFace(doc.Faces.Lower.Kind):

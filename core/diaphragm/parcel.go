@@ -79,15 +79,8 @@ func DecodeParcel(data []byte) (Parcel, error) {
 
 // encodeBody writes a parcel as one line of JSON.
 func encodeBody(p Parcel, file parcelFile, what string) ([]byte, error) {
-	for _, f := range p.Figures {
-		if math.IsNaN(f.Value) || math.IsInf(f.Value, 0) {
-			return nil, refuse("figures", CodeUnreadable, what+" cannot be made: the figure "+shorten(f.ID, "without a name")+" is not a finite number.")
-		}
-	}
-	for _, k := range p.Peaks {
-		if !soundPeak(k) {
-			return nil, refuse("peaks", CodeUnreadable, what+" cannot be made: "+peakSentence)
-		}
+	if err := checkParcel(p, what, " cannot be made: "); err != nil {
+		return nil, err
 	}
 	p = withoutNil(p)
 	document, err := encodeLine(p.Document)
@@ -117,28 +110,39 @@ func decodeBody(data []byte, what string) (Parcel, error) {
 	}
 	p := withoutNil(file.Parcel)
 	p.Document = document
-	if len(p.Figures) > mostFigures || len(p.Peaks) > mostPeaks {
-		return Parcel{}, refuse("parcel", CodeTooLarge, what+" holds more than "+strconv.Itoa(mostFigures)+" figures or peaks; no hand-over does.")
-	}
-	for _, f := range p.Figures {
-		if f.ID == "" || len(f.ID) > 64 {
-			return Parcel{}, refuse("figures", CodeUnreadable, what+" holds a figure without a proper name.")
-		}
-	}
-	for _, k := range p.Peaks {
-		if !soundPeak(k) {
-			return Parcel{}, refuse("peaks", CodeUnreadable, what+" cannot be read: "+peakSentence)
-		}
-	}
-	for _, when := range []string{p.Tapped, p.Sent} {
-		if _, err := time.Parse(time.RFC3339, when); when != "" && err != nil {
-			return Parcel{}, refuse("parcel", CodeUnreadable, what+" holds "+shorten(when, "")+", which is not a time.")
-		}
+	if err := checkParcel(p, what, " cannot be read: "); err != nil {
+		return Parcel{}, err
 	}
 	return p, nil
 }
 
-const peakSentence = "a peak must have a frequency above 0 Hz, an uncertainty of 0 Hz or more, and a mode with m from 0 and n from 1."
+// checkParcel checks all but the document. What is wrong stands after what and
+// verb.
+func checkParcel(p Parcel, what, verb string) error {
+	if len(p.Figures) > mostFigures || len(p.Peaks) > mostPeaks {
+		return refuse("parcel", CodeTooLarge, what+verb+"it has more than "+strconv.Itoa(mostFigures)+" figures or peaks, and no hand-over does.")
+	}
+	for _, f := range p.Figures {
+		if f.ID == "" || len(f.ID) > 64 {
+			return refuse("figures", CodeUnreadable, what+verb+"a figure has no proper name.")
+		}
+		if math.IsNaN(f.Value) || math.IsInf(f.Value, 0) {
+			return refuse("figures", CodeUnreadable, what+verb+"the figure "+shorten(f.ID, "without a name")+" is not a finite number.")
+		}
+	}
+	for _, k := range p.Peaks {
+		if !soundPeak(k) {
+			return refuse("peaks", CodeUnreadable, what+verb+"a peak must have a frequency above 0 Hz, an uncertainty of 0 Hz or more, "+
+				"and a mode with m from 0 and n from 1.")
+		}
+	}
+	for _, when := range []string{p.Tapped, p.Sent} {
+		if _, err := time.Parse(time.RFC3339, when); when != "" && err != nil {
+			return refuse("parcel", CodeUnreadable, what+verb+"it holds "+shorten(when, "nothing")+", which is not a time.")
+		}
+	}
+	return nil
+}
 
 func soundPeak(k ChosenPeak) bool {
 	return k.Frequency > 0 && k.Frequency <= math.MaxFloat64 && k.Uncertainty >= 0 && k.Uncertainty <= math.MaxFloat64 &&
