@@ -77,7 +77,7 @@ export class Curve {
       height: options.height,
       scales: { x: { time: false }, y: range ? { range: [range[0], range[1]] } : {} },
       axes: [axis(options.xLabel), axis(options.yLabel)],
-      legend: { show: options.series.length > 1 },
+      legend: { show: options.series.length > 1, live: false },
       cursor: { drag: { x: false, y: false } },
       series: [
         { label: options.xLabel },

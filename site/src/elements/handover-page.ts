@@ -4,6 +4,7 @@ import { html, nothing, type TemplateResult } from 'lit';
 import type { FigureRow, GroupName, HandOverPage } from '../contract.js';
 import { assumptionsOpen, cautions } from './notes.js';
 import { figure } from './number-text.js';
+import { when } from './when.js';
 
 const groupTitles: Readonly<Record<GroupName, string>> = {
   identity: 'Name and place', ring: 'Ring', sheet: 'Sheet', tension: 'Tension', faces: 'Faces', surroundings: 'Air and service',
@@ -40,9 +41,4 @@ export function handOverView(page: HandOverPage, received: boolean): TemplateRes
 function figureRow(f: FigureRow, received: boolean): TemplateResult {
   return html`<tr data-figure=${f.id}><th scope="row">${f.name}</th><td class="number">${f.sent}</td>
     ${received ? html`<td class="number">${f.now}${f.differs ? html` <span class="chip hit">differs</span>` : nothing}</td>` : nothing}<td class="unit">${f.unit}</td></tr>`;
-}
-
-export function when(time: string): string {
-  const date = new Date(time);
-  return Number.isNaN(date.getTime()) ? time : date.toLocaleString('en-GB', { dateStyle: 'medium', timeStyle: 'short' });
 }

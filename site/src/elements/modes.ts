@@ -9,14 +9,15 @@ import { session } from '../session/session.js';
 import { derivedTable } from './derived.js';
 import './field.js';
 import './mode-drawing.js';
-import { assumptions, caution, cautions } from './notes.js';
-import { figure, percent } from './number-text.js';
+import { assumptions, caution } from './notes.js';
+import { brief, figure, percent } from './number-text.js';
 import { sharedStyle } from './style.js';
 import './table-actions.js';
 import type { ShownTable } from './table-copy.js';
 
 /** The fields that move the modes most stand beside the drawing; the others are on Specify. */
 const shownFields = ['ring.radius', 'tension.nominal', 'sheet.thickness'];
+const shownDerived = ['sigma', 'rho', 'mass-ratio', 'stress-share'];
 const counts = [12, 24, 48, 100, 200];
 
 @customElement('hoop-modes')
@@ -93,9 +94,9 @@ export class HoopModes extends LitElement {
         <div>
           <h2>The diaphragm</h2>
           ${rows.map((r) => html`<hoop-field .row=${r} terse data-field=${r.field}></hoop-field>`)}
-          ${derivedTable(session.derived.filter((d) => d.group === 'sheet' || d.group === 'surroundings' || d.group === 'tension'))}
+          ${derivedTable(session.derived.filter((d) => shownDerived.includes(d.id)))}
           ${this.refusal ? html`<p class="error" role="alert">${this.refusal}</p>` : nothing}
-          ${this.result ? this.airNote(this.result) : nothing}
+          ${(this.result?.cautions ?? []).map((c) => caution(c, 'Read this first'))}
         </div>
         <div class="drawing">
           <h2>Mode (${this.chosen.m}, ${this.chosen.n})</h2>
@@ -104,12 +105,6 @@ export class HoopModes extends LitElement {
         </div>
       </div></section>
       ${this.result ? this.table(this.result) : nothing}`;
-  }
-
-  private airNote(result: ModesResult): TemplateResult {
-    return html`${result.massRatio > 0.05 ? caution(html`These are frequencies of the sheet alone. Air
-      weighs ${figure(result.massRatio, 2)} times the sheet here (<var>ρa</var>/<var>σ</var>), it moves along, and the built diaphragm
-      rings lower than listed. Use them to compare, not to accept.`, 'Read this first') : nothing}${cautions(result.cautions)}`;
   }
 
   private table(result: ModesResult): TemplateResult {
@@ -150,7 +145,7 @@ function nearest(mode: Mode): TemplateResult {
 }
 
 function words(distance: Distance): string {
-  return `${distance.line} ${figure(distance.lineFrequency)} Hz, ${percent(Math.abs(distance.relative), 2)} ${distance.relative < 0 ? 'below' : 'above'}`;
+  return `${distance.line} ${brief(distance.lineFrequency)} Hz, ${percent(Math.abs(distance.relative), 2)} ${distance.relative < 0 ? 'below' : 'above'}`;
 }
 
 function shownTable(modes: readonly Mode[]): ShownTable {

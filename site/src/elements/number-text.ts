@@ -17,6 +17,11 @@ export function figure(value: number, digits = 4): string {
   return value.toFixed(decimals).replace('-', '−');
 }
 
+/** The same without zeros that say nothing, for figures that a person typed. */
+export function brief(value: number, digits = 5): string {
+  return figure(value, digits).replace(/(\.\d*?)0+(?=$| )/, '$1').replace(/\.(?=$| )/, '');
+}
+
 /** A share as percent, with a sign where asked. */
 export function percent(share: number, digits = 2, signed = false): string {
   const value = share * 100;

@@ -11,6 +11,7 @@ import './device-storage.js';
 import './settings.js';
 import { sharedStyle } from './style.js';
 import { saveFile } from './table-copy.js';
+import { when } from './when.js';
 
 @customElement('hoop-records')
 export class HoopRecords extends LitElement {
@@ -235,9 +236,4 @@ function importWords(done: ImportResult): string {
     `${done.taps} tap${done.taps === 1 ? '' : 's'}`,
   ];
   return `${parts.filter((p) => p !== '').join(', ')}. ${done.notes.join(' ')}`;
-}
-
-function when(time: string): string {
-  const date = new Date(time);
-  return Number.isNaN(date.getTime()) ? '' : date.toLocaleString('en-GB', { dateStyle: 'medium', timeStyle: 'short' });
 }

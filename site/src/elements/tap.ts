@@ -17,6 +17,7 @@ import './table-actions.js';
 import type { ShownTable } from './table-copy.js';
 import './typed.js';
 import { TypedTexts } from './typed-texts.js';
+import { when } from './when.js';
 
 const temperatureItems = [
   { field: 'airTemperature', name: 'air temperature', symbol: 't' },
@@ -390,9 +391,4 @@ export class HoopTap extends LitElement {
       </table></div>` : nothing}
     </section>`;
   }
-}
-
-function when(taken: string): string {
-  const date = new Date(taken);
-  return Number.isNaN(date.getTime()) ? taken : date.toLocaleString('en-GB', { dateStyle: 'medium', timeStyle: 'short' });
 }
