@@ -21,7 +21,7 @@ export class HoopListen extends LitElement {
   static override styles = [
     sharedStyle,
     css`
-      .big { display: grid; gap: 10px; }
+      .big { display: grid; grid-template-columns: minmax(0, 1fr); gap: 10px; }
       .big > * { min-height: 64px; font-size: 1.12em; width: 100%; }
       input[type='file'] { padding: 14px 0; }
       .over { outline: 3px dashed var(--focus); }
