@@ -2,7 +2,7 @@ package tap
 
 import (
 	"math"
-	"slices"
+	"sort"
 )
 
 // reading is one way to read the peaks, while the search goes on.
@@ -22,10 +22,10 @@ func (s *search) refine(c float64) (reading, bool) {
 		if len(pairs) == 0 {
 			return reading{}, false
 		}
-		slices.SortFunc(pairs, func(a, b pair) int { return a.mode - b.mode })
+		sort.Slice(pairs, func(a, b int) bool { return pairs[a].mode < pairs[b].mode })
 		r := reading{pairs: pairs}
 		r.c, r.sc = s.fit(pairs)
-		if slices.Equal(pairs, last) {
+		if samePairs(pairs, last) {
 			r.logEvidence = s.evidence(r)
 			return r, true
 		}
@@ -57,8 +57,12 @@ func (s *search) residual(p pair, c float64) float64 {
 }
 
 // fitsBadly reports whether the residuals are larger than the stated scatter
-// allows: their chi-squared lies above its 99.9 % point.
+// allows, their chi-squared lying above its 99.9 % point, or whether modes set
+// by the person leave most of the other peaks without one.
 func (s *search) fitsBadly(r reading) bool {
+	if s.pinCount > 0 && len(r.pairs) < len(s.lines)-len(r.pairs) {
+		return true
+	}
 	nu := float64(len(r.pairs) - 1)
 	if nu < 1 {
 		return false

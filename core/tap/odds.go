@@ -112,7 +112,7 @@ func merge(found []reading) []reading {
 	for _, r := range found {
 		again := false // found from another start already
 		for i := 0; i < len(different) && !again; i++ {
-			again = samePairs(different[i], r)
+			again = samePairs(different[i].pairs, r.pairs)
 		}
 		if !again {
 			different = append(different, r)
@@ -131,12 +131,12 @@ next:
 	return kept
 }
 
-func samePairs(a, b reading) bool {
-	if len(a.pairs) != len(b.pairs) {
+func samePairs(a, b []pair) bool {
+	if len(a) != len(b) {
 		return false
 	}
-	for i := range a.pairs {
-		if a.pairs[i] != b.pairs[i] {
+	for i := range a {
+		if a[i] != b[i] {
 			return false
 		}
 	}

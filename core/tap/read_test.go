@@ -128,6 +128,13 @@ func TestReadPins(t *testing.T) {
 	if math.Abs(a.Readings[0].Tension/want-1) > 0.02 {
 		t.Errorf("with a wrong pin read as %g, want about %g", a.Readings[0].Tension, want)
 	}
+	// A wrong pin that leaves most peaks without a mode is a poor reading.
+	peaks = peaksOf(200, lowestModes[:5]...)
+	peaks[1].Frequency *= 1.09
+	peaks[1].M, peaks[1].N = 6, 1
+	if a = mustRead(t, question(peaks)); !a.Poor || a.Verdict != VerdictUndecided {
+		t.Errorf("a lone pin: %+v", a)
+	}
 	// With the right pin two peaks are enough to choose.
 	peaks = peaksOf(200, ModeName{0, 1}, ModeName{1, 1})
 	peaks[0].M, peaks[0].N = 0, 1
@@ -190,7 +197,7 @@ func TestReadSeeded(t *testing.T) {
 		stated         bool
 	}{
 		{"noise 0.2 %, stated", 500, 0.002, 0, true},
-		{"noise 0.2 %, not stated, and a foreign peak", 200, 0.002, 1, false},
+		{"noise 0.2 %, not stated, and a foreign peak", 120, 0.002, 1, false},
 	} {
 		random := rand.New(rand.NewPCG(2026, 8))
 		var chosen, right, covered int

@@ -2,7 +2,6 @@ package tap
 
 import (
 	"math"
-	"slices"
 	"sort"
 )
 
@@ -48,15 +47,7 @@ func newSearch(q Question, o Options) *search {
 		}
 		s.lines = append(s.lines, l)
 	}
-	slices.SortFunc(s.lines, func(a, b line) int {
-		if a.log != b.log {
-			if a.log < b.log {
-				return -1
-			}
-			return 1
-		}
-		return a.peak - b.peak
-	})
+	sort.SliceStable(s.lines, func(a, b int) bool { return s.lines[a].log < s.lines[b].log })
 	return s
 }
 
