@@ -133,7 +133,7 @@ func checkParcel(p Parcel, what, verb string) error {
 	for _, k := range p.Peaks {
 		if !soundPeak(k) {
 			return refuse("peaks", CodeUnreadable, what+verb+"a peak must have a frequency above 0 Hz, an uncertainty of 0 Hz or more, "+
-				"and a mode with m from 0 and n from 1.")
+				"and a mode with m from 0 and n from 1, or none (m and n both 0).")
 		}
 	}
 	for _, when := range []string{p.Tapped, p.Sent} {
@@ -146,7 +146,7 @@ func checkParcel(p Parcel, what, verb string) error {
 
 func soundPeak(k ChosenPeak) bool {
 	return k.Frequency > 0 && k.Frequency <= math.MaxFloat64 && k.Uncertainty >= 0 && k.Uncertainty <= math.MaxFloat64 &&
-		k.M >= 0 && k.M <= mostOrder && k.N >= 1 && k.N <= mostOrder
+		(k.M >= 0 && k.M <= mostOrder && k.N >= 1 && k.N <= mostOrder || k.M == 0 && k.N == 0)
 }
 
 func withoutNil(p Parcel) Parcel {

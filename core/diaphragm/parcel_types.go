@@ -20,7 +20,8 @@ type Figure struct {
 	Value float64 `json:"value"`
 }
 
-// ChosenPeak is a measured peak read as mode (M, N).
+// ChosenPeak is a measured peak that the person read as mode (M, N); both are
+// 0 where the reading was left to the page.
 type ChosenPeak struct {
 	// Frequency and its standard uncertainty, Hz.
 	Frequency   float64 `json:"frequency"`

@@ -51,10 +51,10 @@ type ReceiveResult struct {
 type HandOverPage struct {
 	Document diaphragm.Diaphragm `json:"document"`
 	// Specification rows as name and value in words.
-	Specification []SpecificationRow     `json:"specification"`
-	Figures       []FigureRow            `json:"figures"`
-	Peaks         []diaphragm.ChosenPeak `json:"peaks"`
-	Tapped        string                 `json:"tapped"`
+	Specification []SpecificationRow `json:"specification"`
+	Figures       []FigureRow        `json:"figures"`
+	Peaks         []HandedPeak       `json:"peaks"`
+	Tapped        string             `json:"tapped"`
 	// SentEngine and NowEngine are the versions that computed the figures.
 	SentEngine string `json:"sentEngine"`
 	NowEngine  string `json:"nowEngine"`
@@ -64,6 +64,16 @@ type HandOverPage struct {
 	Assumptions []string `json:"assumptions"`
 	Cautions    []string `json:"cautions"`
 	Disclaimers []string `json:"disclaimers"`
+}
+
+// HandedPeak is a chosen peak with the mode it is read as; N is 0 where the
+// reading is open.
+type HandedPeak struct {
+	// Frequency and its standard uncertainty, Hz.
+	Frequency   float64 `json:"frequency"`
+	Uncertainty float64 `json:"uncertainty"`
+	M           int     `json:"m"`
+	N           int     `json:"n"`
 }
 
 // SpecificationRow is one specified quantity, formatted for reading.

@@ -16,10 +16,10 @@ const handedModes = 12
 // computeFigures gives the figures of a hand-over: areal density, wave speed,
 // the lowest modes and, where peaks were chosen, the tension they give. The
 // verdict is a sentence, empty without peaks.
-func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []diaphragm.ChosenPeak) (figures []diaphragm.Figure, verdict string, err error) {
+func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []diaphragm.ChosenPeak) (figures []diaphragm.Figure, read []HandedPeak, verdict string, err error) {
 	table, err := runModes(ctx, &ModesRequest{Document: document, Count: handedModes})
 	if err != nil {
-		return nil, "", err
+		return nil, nil, "", err
 	}
 	figures = append(figures,
 		diaphragm.Figure{ID: "sigma", Value: table.ArealDensity},
@@ -30,7 +30,7 @@ func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []d
 		figures = append(figures, diaphragm.Figure{ID: "f." + strconv.Itoa(mode.M) + "." + strconv.Itoa(mode.N), Value: mode.Frequency})
 	}
 	if len(peaks) == 0 {
-		return figures, "", nil
+		return figures, nil, "", nil
 	}
 	request := &TapRequest{Document: document}
 	for _, p := range peaks {
@@ -38,7 +38,15 @@ func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []d
 	}
 	reading, err := runTap(ctx, request)
 	if err != nil {
-		return nil, "", err
+		return nil, nil, "", err
+	}
+	for _, p := range peaks {
+		read = append(read, HandedPeak{Frequency: p.Frequency, Uncertainty: p.Uncertainty, M: p.M, N: p.N})
+	}
+	if reading.Chosen {
+		for _, match := range reading.Readings[0].Matches {
+			read[match.Peak].M, read[match.Peak].N = match.M, match.N
+		}
 	}
 	if len(reading.Readings) > 0 {
 		best := reading.Readings[0]
@@ -48,7 +56,7 @@ func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []d
 			diaphragm.Figure{ID: "tension-high", Value: best.High},
 		)
 	}
-	return figures, string(reading.Verdict) + ": " + reading.Reason, nil
+	return figures, read, string(reading.Verdict) + ": " + reading.Reason, nil
 }
 
 // figure says how a figure is shown, in SI units.

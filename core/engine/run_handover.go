@@ -22,7 +22,7 @@ func runSend(ctx context.Context, request *SendRequest) (*SendResult, error) {
 	if err := refuse(diaphragm.Validate(request.Document)); err != nil {
 		return nil, err
 	}
-	figures, verdict, err := computeFigures(ctx, request.Document, request.Peaks)
+	figures, read, verdict, err := computeFigures(ctx, request.Document, request.Peaks)
 	if err != nil {
 		return nil, err
 	}
@@ -49,7 +49,7 @@ func runSend(ctx context.Context, request *SendRequest) (*SendResult, error) {
 		AddressNote: addressNote(request.Address),
 		Parcel:      Blob{Bytes: file},
 		FileName:    fileName(request.Document.Name),
-		Page:        handOverPage(parcel, figures, verdict),
+		Page:        handOverPage(parcel, figures, read, verdict),
 	}
 	if len(link) <= mostLinkCharacters {
 		result.Link = link
@@ -68,11 +68,11 @@ func runReceive(ctx context.Context, request *ReceiveRequest) (*ReceiveResult, e
 	if err != nil {
 		return nil, asError(err, "link")
 	}
-	now, verdict, err := computeFigures(ctx, parcel.Document, parcel.Peaks)
+	now, read, verdict, err := computeFigures(ctx, parcel.Document, parcel.Peaks)
 	if err != nil {
 		return nil, err
 	}
-	result := &ReceiveResult{Page: handOverPage(parcel, now, verdict)}
+	result := &ReceiveResult{Page: handOverPage(parcel, now, read, verdict)}
 	for _, row := range result.Page.Figures {
 		if row.Differs {
 			result.Differences++
@@ -82,12 +82,12 @@ func runReceive(ctx context.Context, request *ReceiveRequest) (*ReceiveResult, e
 }
 
 // handOverPage sets the figures as sent beside those computed now.
-func handOverPage(parcel diaphragm.Parcel, now []diaphragm.Figure, verdict string) HandOverPage {
+func handOverPage(parcel diaphragm.Parcel, now []diaphragm.Figure, read []HandedPeak, verdict string) HandOverPage {
 	return HandOverPage{
 		Document:      parcel.Document,
 		Specification: specificationRows(parcel.Document),
 		Figures:       figureRows(parcel.Figures, now),
-		Peaks:         parcel.Peaks,
+		Peaks:         read,
 		Tapped:        parcel.Tapped,
 		SentEngine:    parcel.Engine,
 		NowEngine:     Version,

@@ -115,7 +115,7 @@ export interface Choice {
   name: string;
 }
 /**
- * ChosenPeak is a measured peak read as mode (M, N).
+ * ChosenPeak is a measured peak that the person read as mode (M, N); both are 0 where the reading was left to the page.
  */
 export interface ChosenPeak {
   /**
@@ -358,7 +358,7 @@ export interface HandOverPage {
    */
   specification: SpecificationRow[];
   figures: FigureRow[];
-  peaks: ChosenPeak[];
+  peaks: HandedPeak[];
   tapped: string;
   /**
    * SentEngine and NowEngine are the versions that computed the figures.
@@ -373,6 +373,18 @@ export interface HandOverPage {
   assumptions: string[];
   cautions: string[];
   disclaimers: string[];
+}
+/**
+ * HandedPeak is a chosen peak with the mode it is read as; N is 0 where the reading is open.
+ */
+export interface HandedPeak {
+  /**
+   * Frequency and its standard uncertainty, Hz.
+   */
+  frequency: number;
+  uncertainty: number;
+  m: number;
+  n: number;
 }
 /**
  * History is the displacement of one point against time.
@@ -1086,7 +1098,7 @@ export interface Shape {
    */
   width: number;
   /**
-   * Formula in r (0 to 1), theta (rad), x and y (r cos theta, r sin theta).
+   * Formula in r (0 to 1), theta (rad, from 0 to below 2 pi), x and y (r cos theta, r sin theta).
    */
   formula: string;
 }

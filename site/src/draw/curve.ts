@@ -25,6 +25,8 @@ export interface CurveOptions {
   readonly height: number;
   /** Fixed range of y; free where left out. */
   readonly yRange?: readonly [number, number];
+  /** Fixed range of x; all of the data where left out. */
+  readonly xRange?: readonly [number, number] | undefined;
   /** Called after each drawing, to add marks in canvas pixels. */
   readonly after?: (plot: uPlot) => void;
 }
@@ -35,10 +37,12 @@ export type CurveData = readonly [Float32Array | number[], ...(Float32Array | nu
 export class Curve {
   private plot: uPlot | null = null;
   private theme = '';
+  private xRange: readonly [number, number] | undefined;
 
   constructor(private readonly host: HTMLElement) {}
 
   show(options: CurveOptions, data: CurveData): void {
+    this.xRange = options.xRange;
     const width = Math.max(160, this.host.clientWidth);
     const theme = colour(this.host, 'ink') + options.series.length + options.xLabel + options.yLabel;
     if (this.plot && theme !== this.theme) {
@@ -75,7 +79,7 @@ export class Curve {
     return {
       width,
       height: options.height,
-      scales: { x: { time: false }, y: range ? { range: [range[0], range[1]] } : {} },
+      scales: { x: { time: false, range: (_plot, least, most) => [this.xRange?.[0] ?? least, this.xRange?.[1] ?? most] }, y: range ? { range: [range[0], range[1]] } : {} },
       axes: [axis(options.xLabel), axis(options.yLabel)],
       legend: { show: options.series.length > 1, live: false },
       cursor: { drag: { x: false, y: false } },

@@ -1,6 +1,6 @@
 /** The recording and its spectrum, drawn, with the peaks numbered. */
 import { css, html, LitElement, svg, type TemplateResult } from 'lit';
-import { customElement, property, query } from 'lit/decorators.js';
+import { customElement, property, query, state } from 'lit/decorators.js';
 
 import type { PeaksResult } from '../contract.js';
 import { Curve, curveStyle } from '../draw/curve.js';
@@ -25,6 +25,7 @@ export class HoopSpectrum extends LitElement {
 
   @property({ attribute: false }) result: PeaksResult | null = null;
   @property({ attribute: false }) frequencies: readonly number[] = [];
+  @state() private whole = false;
   @query('#curve') private host!: HTMLElement | null;
   private curve: Curve | null = null;
   private readonly redraw = (): void => this.draw();
@@ -58,6 +59,7 @@ export class HoopSpectrum extends LitElement {
       yLabel: 'level, dB below the largest',
       height: 280,
       yRange: [-90, 8],
+      xRange: this.range(result),
       series: [{ label: 'spectrum', colour: 'ink', width: 1.2 }, { label: 'noise floor', colour: 'soft', dash: [4, 4] }],
       after: (plot) => {
         const { ctx } = plot;
@@ -72,6 +74,13 @@ export class HoopSpectrum extends LitElement {
         ctx.restore();
       },
     }, [result.frequencies, result.levels, result.floor]);
+  }
+
+  /** The part with the peaks, a little beyond the highest; the whole where asked for. */
+  private range(result: PeaksResult): readonly [number, number] | undefined {
+    const highest = Math.max(0, ...this.frequencies);
+    const last = result.frequencies[result.frequencies.length - 1] ?? 0;
+    return this.whole || highest === 0 ? undefined : [0, Math.min(last, 1.4 * highest)];
   }
 
   private wave(): TemplateResult {
@@ -95,6 +104,7 @@ export class HoopSpectrum extends LitElement {
   }
 
   protected override render(): TemplateResult {
-    return html`${this.wave()}<div id="curve"></div>`;
+    return html`${this.wave()}<div id="curve"></div>
+      <div class="actions"><button type="button" aria-pressed=${this.whole ? 'true' : 'false'} @click=${() => { this.whole = !this.whole; }}>Whole spectrum</button></div>`;
   }
 }
