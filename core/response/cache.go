@@ -11,7 +11,7 @@ import (
 // depend only on the modes and the grid, which stay while a person changes the
 // shapes, so the last few are kept.
 var (
-	keptBases      = shelf[*disc.Basis]{most: 4}
+	keptBases      = shelf[*disc.Basis]{most: 8}
 	keptTransforms = shelf[*disc.Transform]{most: 2}
 	keptTables     = shelf[*disc.Table]{most: 4}
 )

@@ -6,6 +6,7 @@ import (
 	"errors"
 	"math"
 	"os"
+	"slices"
 	"strings"
 	"testing"
 )
@@ -265,5 +266,23 @@ func TestFrameDoesNotAllocate(t *testing.T) {
 	f := newFrame(begin.moves, takeTable(begin.moves.basis, []float64{0, 0.5, 1}, 80))
 	if n := testing.AllocsPerRun(5, func() { f.at(0.3) }); n != 0 {
 		t.Errorf("%v allocations a frame", n)
+	}
+}
+
+func TestRespondTwiceAtOnce(t *testing.T) {
+	// Kept tables have work space that two computations must not share.
+	want := respond(t, benchCase())
+	results := make(chan *Motion)
+	for range 3 {
+		go func() {
+			m, _, _ := Respond(context.Background(), benchCase(), func(float64) {})
+			results <- m
+		}()
+	}
+	for range 3 {
+		m := <-results
+		if m == nil || m.Travel != want.Travel || !slices.Equal(m.Values, want.Values) {
+			t.Error("computations at once disturb each other")
+		}
 	}
 }

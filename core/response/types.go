@@ -42,7 +42,8 @@ type Shape struct {
 	// Width is the radius of the pad, bump or patch in units of the ring
 	// radius, 0 < Width <= 1.
 	Width float64 `json:"width"`
-	// Formula in r (0 to 1), theta (rad), x and y (r cos theta, r sin theta).
+	// Formula in r (0 to 1), theta (rad, from 0 to below 2 pi), x and y
+	// (r cos theta, r sin theta).
 	Formula string `json:"formula"`
 }
 
