@@ -68,6 +68,12 @@ func logDD(xh, xl float64) (h, l float64) {
 	return fastTwoSum(h, l)
 }
 
+// logHalfDD returns ln(x/2), also where x/2 would underflow.
+func logHalfDD(x float64) (h, l float64) {
+	h, l = logDD(x, 0)
+	return addDD(h, l, -ln2H, -ln2L)
+}
+
 // stirlingMin is the smallest argument of the Stirling series below, whose
 // first term left out is then below 2^-64.
 const stirlingMin = 16
@@ -81,12 +87,15 @@ func stirlingTail(z float64) float64 {
 }
 
 // prefix returns (x/2)^nu / Gamma(nu+1) = (h + l) 2^k for nu >= 0 and x > 0,
-// to about 2^-60, with 1/2 < h < 32.
+// to about 2^-60; h is 0 where the value is far below the range.
 func prefix(nu, x float64) (h, l float64, k int) {
 	var gh, gl float64
 	if nu >= stirlingMin {
 		// exp(nu (ln(x/(2 nu)) + 1) - tail) / sqrt(2 pi nu)
 		th := x / (2 * nu)
+		if th < 0x1p-900 { // its sixteenth power is far below the range
+			return 0, 0, 0
+		}
 		p, pe := twoProd(th, 2*nu)
 		tl := ((x - p) - pe) / (2 * nu)
 		h, l = logDD(th, tl)
@@ -105,7 +114,7 @@ func prefix(nu, x float64) (h, l float64, k int) {
 		zh, zl = twoSum(nu, j)
 		fh, fl = mulDD(fh, fl, zh, zl)
 	}
-	h, l = logDD(0.5*x, 0)
+	h, l = logHalfDD(x)
 	h, l = mulDD(h, l, nu, 0)
 	gh, gl = logDD(zh, zl)
 	gh, gl = addDD(gh, gl, -1, 0)

@@ -36,7 +36,7 @@ func temmeGamma(mu float64) (g1, g2 float64) {
 func temmeStart(mu, x float64) (f, p, q float64) {
 	// Temme, J. Comput. Phys. 19 (1975) 324, eq. 3.
 	g1, g2 := temmeGamma(mu)
-	lh, ll := logDD(0.5*x, 0)
+	lh, ll := logHalfDD(x)
 	lh, ll = -lh, -ll
 	sh, sl := mulDD(lh, ll, mu, 0)
 	up := scaleExp(expDD(sh, sl))
