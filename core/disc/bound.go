@@ -10,8 +10,8 @@ import "math"
 //
 // with laplacian = (integral of (Laplacian f)^2)^(1/2) over the disc given by
 // the caller, L the same of the series with the given coefficients, and C a
-// constant of the band, about 1/sqrt(4 pi) over the smallest zero left out. It
-// is a theorem for exact coefficients; those of Analyse are exact for what the
+// constant of the band, 0.2 to 0.6 over the smallest zero left out. It is a
+// theorem for exact coefficients; those of Analyse are exact for what the
 // grid resolves, so use a grid finer than MinRadii and MinAngles ask (twice, say)
 // for an f outside the band. The result is 0 if laplacian is below L.
 //

@@ -11,7 +11,7 @@ import "math"
 //
 //	u_j(r) = c_j r^m (1-r^2)^nu P_j^(m,nu)(1-2r^2),   c_j = j! / (2^nu Gamma(j+nu+1)),
 //
-// scaled so that the Hankel transform (DLMF 10.22.56 extended) is
+// scaled so that the Hankel transform (held by TestHankelTransformOfShapes) is
 //
 //	integral_0^1 u_j(r) J_m(kr) r dr = J_b(k) / k^(nu+1).
 //

@@ -1,6 +1,10 @@
 package disc
 
-import "hoopsheet/core/bessel"
+import (
+	"math"
+
+	"hoopsheet/core/bessel"
+)
 
 // pair is a cosine and a sine value; the two share every radial factor.
 type pair struct{ c, s float64 }
@@ -19,20 +23,24 @@ type panel struct {
 // less than 1e-22 of the largest, far below its rounding.
 const panelFloor = 0x1p-80
 
-// radialTable is J_m(j_mn r_i) for all orders of a basis at given radii.
+// radialTable is J_m(j_mn r_i), or a slope of it, for all orders of a basis at given radii.
 type radialTable struct {
 	nr     int
 	orders [][]panel // orders[m][n/4]
 }
 
+// radialFunc is a function of order m, a zero z of J_m and a radius that, inside
+// the turning point z r = m, falls off towards the centre.
+type radialFunc func(m int, z, r float64) float64
+
 // newRadialTable evaluates the table. Radii must rise.
-func newRadialTable(b *Basis, radii []float64) *radialTable {
+func newRadialTable(b *Basis, radii []float64, f radialFunc) *radialTable {
 	t := &radialTable{nr: len(radii), orders: make([][]panel, b.M+1)}
 	for m := range t.orders {
 		z := b.zeros[m*b.N : (m+1)*b.N]
 		for len(z) > 0 {
 			k := min(4, len(z))
-			t.orders[m] = append(t.orders[m], newPanel(m, z[:k], radii))
+			t.orders[m] = append(t.orders[m], newPanel(m, z[:k], radii, f))
 			z = z[k:]
 		}
 	}
@@ -59,21 +67,21 @@ func (t *radialTable) value(m, n, i int) float64 {
 
 // newPanel works from the rim inwards: once the largest of the four, the last,
 // is below the floor inside its turning point, the rest is smaller still.
-func newPanel(m int, z []float64, radii []float64) panel {
+func newPanel(m int, z, radii []float64, f radialFunc) panel {
 	q := make([]quad, len(radii))
 	last := z[len(z)-1]
 	lo := len(radii)
 	for lo > 0 {
 		r := radii[lo-1]
-		v := atZero(m, last, r)
-		if last*r < float64(m) && v < panelFloor { // v > 0 there
+		v := f(m, last, r)
+		if last*r < float64(m) && math.Abs(v) < panelFloor {
 			break
 		}
 		lo--
 		e := &q[lo]
 		put := [...]*float64{&e.a, &e.b, &e.c, &e.d}
 		for i, zi := range z[:len(z)-1] {
-			*put[i] = atZero(m, zi, r)
+			*put[i] = f(m, zi, r)
 		}
 		*put[len(z)-1] = v
 	}

@@ -16,6 +16,7 @@ type reference struct {
 	Forms      [][]any // family, m, i, j, p, value or "inf"
 	Mass       [][]any // family, m, i, j, value
 	Coupling   [][]any // family, m, j, q, value
+	Sound      [][]any // family, m, i, j, k0, real, imaginary
 	GammaRatio [][]float64
 	Power      [][]float64
 }
@@ -29,6 +30,18 @@ func loadReference(t *testing.T) *reference {
 	var ref reference
 	if err := json.Unmarshal(data, &ref); err != nil {
 		t.Fatal(err)
+	}
+	for _, c := range []struct {
+		name      string
+		got, want int
+	}{
+		{"shapes", len(ref.Shapes), 756}, {"hankel", len(ref.Hankel), 15}, {"forms", len(ref.Forms), 840},
+		{"mass", len(ref.Mass), 15}, {"coupling", len(ref.Coupling), 80}, {"sound", len(ref.Sound), 24},
+		{"gammaRatio", len(ref.GammaRatio), 10}, {"power", len(ref.Power), 36},
+	} {
+		if c.got != c.want {
+			t.Fatalf("reference.json has %d rows of %s, want %d", c.got, c.name, c.want)
+		}
 	}
 	return &ref
 }

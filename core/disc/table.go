@@ -21,15 +21,15 @@ type Table struct {
 // 0 <= r <= 1 (the radii are copied). ntheta is even, at least 2M+2, with no
 // prime factor of ntheta/2 above 5: see MinAngles and NextAngles.
 func NewTable(b *Basis, radii []float64, ntheta int) *Table {
+	return newTable(b, radii, ntheta, atZero)
+}
+
+func newTable(b *Basis, radii []float64, ntheta int, f radialFunc) *Table {
 	for i, r := range radii {
 		if !(r >= 0 && r <= 1) || i > 0 && r < radii[i-1] {
 			panic(errRadius)
 		}
 	}
-	return newTable(b, append([]float64(nil), radii...), ntheta)
-}
-
-func newTable(b *Basis, radii []float64, ntheta int) *Table {
 	if ntheta < 2*b.M+2 {
 		panic(errFewAngles)
 	}
@@ -40,9 +40,9 @@ func newTable(b *Basis, radii []float64, ntheta int) *Table {
 	stride := len(radii) + 3
 	return &Table{
 		Basis:  b,
-		R:      radii,
+		R:      append([]float64(nil), radii...),
 		NTheta: ntheta,
-		radial: newRadialTable(b, radii),
+		radial: newRadialTable(b, radii, f),
 		fft:    fft,
 		orders: make([]pair, (b.M+1)*stride),
 		stride: stride,
@@ -58,8 +58,8 @@ func (t *Table) Len() int { return len(t.R) * t.NTheta }
 //	dst[i*NTheta+k] = sum over m, n of J_m(j_mn R[i]) [a_mn cos(m theta_k) + b_mn sin(m theta_k)].
 //
 // The rounding error is a few 1e-16 of the sum of sizes of the coefficients; on
-// the rim the result is exactly 0. It panics unless len(dst) = Len() and len(coef) = Basis.Len(). It does not
-// allocate.
+// the rim the result is exactly 0. It panics unless len(dst) = Len() and
+// len(coef) = Basis.Len(). It does not allocate.
 func (t *Table) Synthesise(dst, coef []float64) {
 	b := t.Basis
 	if len(dst) != t.Len() || len(coef) != b.Len() {

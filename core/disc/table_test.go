@@ -11,7 +11,7 @@ import (
 // Table and Points against the plain double sum.
 func TestSynthesisAgainstPlainSum(t *testing.T) {
 	rng := rand.New(rand.NewPCG(6, 1))
-	for _, band := range bands[:len(bands)-1] {
+	for _, band := range bands[:5] {
 		b := NewBasis(band.M, band.N)
 		c := randomCoef(b, rng)
 		// A sine of order 0 must be ignored.
@@ -59,8 +59,8 @@ func TestSynthesisAgainstPlainSum(t *testing.T) {
 // worse than at a far finer one.
 func TestMinRadiiIsEnough(t *testing.T) {
 	rng := rand.New(rand.NewPCG(2, 9))
-	for M := 0; M <= 40; M += 5 {
-		for _, N := range []int{1, 2, 3, 5, 9, 17, 30} {
+	for M := 0; M <= 36; M += 6 {
+		for _, N := range []int{1, 2, 3, 6, 12, 24} {
 			b := NewBasis(M, N)
 			c := randomCoef(b, rng)
 			tr := NewTransformOf(b, 0, 0)
@@ -86,7 +86,7 @@ func TestMinRadiiIsEnough(t *testing.T) {
 func TestPanelFloor(t *testing.T) {
 	b := NewBasis(60, 6)
 	g := NewGrid(80, 2)
-	tab := newRadialTable(b, g.R)
+	tab := newRadialTable(b, g.R, atZero)
 	left := 0
 	for m := 0; m <= b.M; m++ {
 		for n := 1; n <= b.N; n++ {

@@ -39,7 +39,7 @@ func NewTransformOf(b *Basis, nr, ntheta int) *Transform {
 		panic(errFewRadii)
 	}
 	g := NewGrid(nr, ntheta)
-	return &Transform{Basis: b, Grid: g, table: newTable(b, g.R, ntheta)}
+	return &Transform{Basis: b, Grid: g, table: newTable(b, g.R, ntheta, atZero)}
 }
 
 // Synthesise writes the function with these coefficients at the samples of
