@@ -56,7 +56,11 @@ func (s *store) create(request *engine.CreateRequest) (*engine.OpenedRecord, err
 	case engine.CreateDemo:
 		doc = diaphragm.Demo("", "")
 	case engine.CreateBlank:
-		doc = diaphragm.Blank("", "")
+		var limits diaphragm.Limits
+		if request.Limits != nil {
+			limits = *request.Limits
+		}
+		doc = limits.Start("", "")
 	case engine.CreateDocument:
 		if request.Document == nil {
 			return nil, engine.Fail("document", engine.CodeRequest, "The request gives no document to make the diaphragm from.")

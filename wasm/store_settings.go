@@ -40,6 +40,7 @@ func (s *store) putSettings(request *engine.Settings) (*engine.Done, error) {
 		return nil, engine.Fail("units", engine.CodeRequest, "The units are either \"si\" or \"inch-pound\".")
 	}
 	settings := *request
+	settings.Chosen = true
 	settings.LinkAddress = strings.TrimSpace(settings.LinkAddress)
 	settings.By = strings.TrimSpace(settings.By)
 	err := s.base.write([]string{inSettings}, func(t *txn) error { return t.putJSON(inSettings, settingsKey, settings) })

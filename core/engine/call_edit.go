@@ -3,6 +3,7 @@ package engine
 import (
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/quantity"
+	"hoopsheet/core/sheet"
 )
 
 // EditRequest changes fields of a document by what a person typed. Without
@@ -18,6 +19,8 @@ type EditRequest struct {
 	// System is the one that fields without a chosen unit are shown in; empty
 	// for SI.
 	System quantity.System `json:"system"`
+	// Materials of the team, offered before the catalogue.
+	Materials []sheet.Material `json:"materials,omitempty"`
 }
 
 // EditResult is the changed document and all that a form needs to show it.

@@ -49,6 +49,8 @@ type CreateRequest struct {
 	Name string     `json:"name"`
 	// Document is used with CreateDocument only.
 	Document *diaphragm.Diaphragm `json:"document,omitempty"`
+	// Limits that an empty one starts with.
+	Limits *diaphragm.Limits `json:"limits,omitempty"`
 }
 
 // CreateFrom says what a new diaphragm starts from.
@@ -173,6 +175,8 @@ type ImportResult struct {
 
 // Settings are the choices of this browser.
 type Settings struct {
+	// Chosen is true where somebody has made choices in this browser.
+	Chosen bool `json:"chosen"`
 	// LinkAddress is the address that hand-over links start with; empty for
 	// the address of the page.
 	LinkAddress string `json:"linkAddress"`

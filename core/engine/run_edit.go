@@ -16,12 +16,15 @@ func runEdit(_ context.Context, request *EditRequest) (*EditResult, error) {
 		}
 		system = quantity.SI
 	}
-	document, drafts, units, problems := diaphragm.Apply(request.Document, request.Drafts, request.Units, request.Edits, system)
+	edits := teamEdits(request.Edits, request.Materials)
+	document, drafts, units, problems := diaphragm.Apply(request.Document, request.Drafts, request.Units, edits, system)
+	rows := diaphragm.Rows(document, drafts, units, system, edits...)
+	offerMaterials(rows, request.Materials)
 	return &EditResult{
 		Document: document,
 		Drafts:   drafts,
 		Units:    units,
-		Rows:     diaphragm.Rows(document, drafts, units, system, request.Edits...),
+		Rows:     rows,
 		Derived:  derive(document, system),
 		Problems: problems,
 		Cautions: cautions(document),

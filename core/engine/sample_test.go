@@ -47,6 +47,7 @@ func sampleRequests(t *testing.T) map[string]string {
 		"about": `{}`,
 		"demo":  `{}`,
 		"read":  `{"items":[{"field":"x","name":"height","text":"0.9 mil","dimension":"length","unit":"mm","low":0,"high":0}]}`,
+		"team":  `{"text":"{\"units\":\"si\"}"}`,
 		"edit":  `{"document":` + doc + `,"drafts":{},"units":{},"edits":[{"field":"sheet.thickness","action":"set","text":"23 um"}],"system":"si"}`,
 		"modes": `{"document":` + doc + `,"count":24}`,
 		"shape": `{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41}`,

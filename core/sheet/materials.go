@@ -4,22 +4,22 @@ package sheet
 // a first design; a certificate for the roll in hand replaces them.
 type Material struct {
 	// ID names the material for programs; it never changes.
-	ID string
+	ID string `json:"id"`
 	// Name is the generic name, as it stands in a list.
-	Name string
+	Name string `json:"name"`
 	// Density rho, kg/m^3.
-	Density float64
+	Density float64 `json:"density"`
 	// E is the in-plane modulus of elasticity, Pa.
-	E float64
+	E float64 `json:"e"`
 	// Nu is Poisson's ratio.
-	Nu float64
+	Nu float64 `json:"nu"`
 	// CTE is the coefficient of thermal expansion near room temperature, 1/K.
-	CTE float64
+	CTE float64 `json:"cte"`
 	// AllowableStress is a long-term membrane stress, Pa. It is a common
 	// practice, never a code value; Source says what it was derived from.
-	AllowableStress float64
+	AllowableStress float64 `json:"allowableStress"`
 	// Source says where each figure comes from, in sentences.
-	Source string
+	Source string `json:"source"`
 }
 
 // Materials lists the catalogue in the order in which it is offered.

@@ -136,6 +136,10 @@ export interface CreateRequest {
    * Document is used with CreateDocument only.
    */
   document?: Diaphragm;
+  /**
+   * Limits that an empty one starts with.
+   */
+  limits?: Limits;
 }
 /**
  * Damping is what is known or assumed of the decay.
@@ -257,6 +261,10 @@ export interface EditRequest {
    * System is the one that fields without a chosen unit are shown in; empty for SI.
    */
   system: System;
+  /**
+   * Materials of the team, offered before the catalogue.
+   */
+  materials?: Material[];
 }
 /**
  * EditResult is the changed document and all that a form needs to show it.
@@ -422,6 +430,23 @@ export interface KeepRequest {
   note: string;
 }
 /**
+ * Limits are requirements that a new diaphragm starts with.
+ */
+export interface Limits {
+  /**
+   * Tolerance of the tension, relative; 0 for the usual one.
+   */
+  tolerance: number;
+  /**
+   * Lowest frequency that a mode may have, Hz; 0 for none.
+   */
+  lowest: number;
+  /**
+   * Lines to keep clear of.
+   */
+  lines: Line[];
+}
+/**
  * Line is one frequency to keep clear of.
  */
 export interface Line {
@@ -469,6 +494,43 @@ export interface Match {
    * Tension that this peak alone gives, N/m.
    */
   tension: number;
+}
+/**
+ * Material is one entry of the catalogue. The figures are typical values for a first design; a certificate for the roll in hand replaces them.
+ */
+export interface Material {
+  /**
+   * ID names the material for programs; it never changes.
+   */
+  id: string;
+  /**
+   * Name is the generic name, as it stands in a list.
+   */
+  name: string;
+  /**
+   * Density rho, kg/m^3.
+   */
+  density: number;
+  /**
+   * E is the in-plane modulus of elasticity, Pa.
+   */
+  e: number;
+  /**
+   * Nu is Poisson's ratio.
+   */
+  nu: number;
+  /**
+   * CTE is the coefficient of thermal expansion near room temperature, 1/K.
+   */
+  cte: number;
+  /**
+   * AllowableStress is a long-term membrane stress, Pa. It is a common practice, never a code value; Source says what it was derived from.
+   */
+  allowableStress: number;
+  /**
+   * Source says where each figure comes from, in sentences.
+   */
+  source: string;
 }
 /**
  * Mode is one line of the table.
@@ -1067,6 +1129,10 @@ export interface SendResult {
  */
 export interface Settings {
   /**
+   * Chosen is true where somebody has made choices in this browser.
+   */
+  chosen: boolean;
+  /**
    * LinkAddress is the address that hand-over links start with; empty for the address of the page.
    */
   linkAddress: string;
@@ -1316,6 +1382,40 @@ export interface TapSession {
   microphone: string;
 }
 /**
+ * Team is what a team that hosts the pages puts beside them: its materials, the limits that new diaphragms start with, its units and the address of its links. Everything may be left out.
+ */
+export interface Team {
+  /**
+   * Materials stand before the catalogue.
+   */
+  materials: Material[];
+  /**
+   * Units of fields on devices where nobody has chosen; empty for SI.
+   */
+  units: System;
+  /**
+   * LinkAddress that hand-over links start with where the device has none.
+   */
+  linkAddress: string;
+  limits: Limits;
+}
+/**
+ * TeamRequest reads the file that a team puts beside the pages.
+ */
+export interface TeamRequest {
+  /**
+   * Text of defaults.json.
+   */
+  text: string;
+}
+/**
+ * TeamResult is what the file says; what is wrong in it is left out.
+ */
+export interface TeamResult {
+  team: Team;
+  problems: Problem[];
+}
+/**
  * Tension is the specified line tension.
  */
 export interface Tension {
@@ -1351,6 +1451,8 @@ export interface CallMap {
   "demo": { request: NoRequest; result: DemoResult };
   /** Reads typed quantities such as "0.9 mil" into SI values. */
   "read": { request: ReadRequest; result: ReadResult };
+  /** Reads the file defaults.json that a team puts beside the pages. */
+  "team": { request: TeamRequest; result: TeamResult };
   /** Changes fields of a diaphragm by what was typed, and gives the rows of its form. */
   "edit": { request: EditRequest; result: EditResult };
   /** Lists the modes of the ideal sheet with their distance to the lines to keep clear of. */

@@ -99,7 +99,7 @@ export class HoopHandover extends LitElement {
     }
     const bench = session.recall('tap', emptyBench());
     const peaks = bench.peaks.map(asPeak).filter((p) => p.use);
-    const address = session.settings.linkAddress || pageHref('hand-over').split('#')[0]?.split('?')[0] || '';
+    const address = session.linkAddress || pageHref('hand-over').split('#')[0]?.split('?')[0] || '';
     const key = JSON.stringify([document, peaks, address]);
     if (key === this.asked) {
       return;

@@ -70,7 +70,7 @@ export class HoopRecords extends LitElement {
 
   private async create(from: 'demo' | 'blank'): Promise<void> {
     await session.flush();
-    await session.take(await engine.store('records.create', { from, name: '' }));
+    await session.take(await engine.store('records.create', { from, name: '', limits: session.team.team.limits }));
     await this.list();
   }
 

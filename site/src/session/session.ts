@@ -11,6 +11,7 @@ import { engine } from '../engine/client.js';
 import type { Diaphragm, DerivedRow, Done, Edit, EditResult, OpenedRecord, Problem, RevisionInfo, Row, Saved, Settings } from '../contract.js';
 import { SaveRequest } from '../shell/save-request.js';
 import { addressDiaphragm, addressedDiaphragm, lastDiaphragm, rememberDiaphragm } from './remembered.js';
+import { noTeam, readTeam, type TeamChoices } from './team.js';
 import { Tabs, type TabNews } from './tabs.js';
 
 /** Pause after the last change before the working copy is written, ms. */
@@ -50,7 +51,8 @@ export class Session extends EventTarget {
   message = '';
   /** True when another tab has this diaphragm open. */
   shared = false;
-  settings: Settings = { linkAddress: '', units: 'si', by: '' };
+  settings: Settings = { chosen: false, linkAddress: '', units: 'si', by: '' };
+  team: TeamChoices = noTeam;
 
   private drafts: Record<string, string> = {};
   private units: Record<string, string> = {};
@@ -92,10 +94,11 @@ export class Session extends EventTarget {
   }
 
   private async openFirst(): Promise<void> {
-    const settings = await engine.store('settings.get', {});
+    const [settings, team] = await Promise.all([engine.store('settings.get', {}), readTeam()]);
     if (settings.kind === 'result') {
       this.settings = settings.result;
     }
+    this.team = team;
     const asked = addressedDiaphragm();
     const id = asked || lastDiaphragm();
     if (id !== '') {
@@ -140,11 +143,21 @@ export class Session extends EventTarget {
     this.tell();
   }
 
+  /** Units that fields are first shown in: this browser's choice, else the team's. */
+  get system(): Settings['units'] {
+    return this.settings.chosen ? this.settings.units : this.team.team.units || this.settings.units;
+  }
+
+  /** Address that hand-over links start with, where one is chosen. */
+  get linkAddress(): string {
+    return this.settings.linkAddress || this.team.team.linkAddress;
+  }
+
   /** Keeps the choices of this browser and shows fields accordingly. */
   async changeSettings(settings: Settings): Promise<StoreAnswer<Done>> {
     const answer = await engine.store('settings.put', settings);
     if (answer.kind === 'result') {
-      this.settings = settings;
+      this.settings = { ...settings, chosen: true };
       await this.refresh();
     }
     return answer;
@@ -232,7 +245,8 @@ export class Session extends EventTarget {
       drafts: this.drafts,
       units: this.units,
       edits,
-      system: this.settings.units,
+      system: this.system,
+      materials: this.team.team.materials,
     }, { quick: true });
   }
 
