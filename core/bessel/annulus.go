@@ -186,9 +186,3 @@ func unitPhase(m, x float64, e Edge) (c, s, slope float64) {
 	modulus := math.Hypot(j, y)
 	return j / modulus, y / modulus, weight * 2 / (math.Pi * x) / modulus / modulus
 }
-
-// lessDD returns q a - b.
-func lessDD(qh, ql, ah, al, bh, bl float64) (h, l float64) {
-	h, l = mulDD(qh, ql, ah, al)
-	return addDD(h, l, -bh, -bl)
-}

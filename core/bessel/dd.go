@@ -30,9 +30,22 @@ func addDD(ah, al, bh, bl float64) (h, l float64) {
 	return fastTwoSum(h, l+(al+bl))
 }
 
+// extreme is a bound within which products and quotients of compensated
+// numbers neither overflow nor lose their low parts, on every platform.
+const extreme = 0x1p900
+
+// isExtreme tells whether x > 0 or 1/x is beyond it. What then remains of a
+// function is its leading term, for which plain arithmetic does.
+func isExtreme(x float64) bool {
+	return x > extreme || x < 1/extreme
+}
+
 // invDD returns 1/x as a compensated number.
 func invDD(x float64) (h, l float64) {
 	h = 1 / x
+	if isExtreme(x) {
+		return h, 0
+	}
 	p, e := twoProd(h, x)
 	return h, ((1 - p) - e) * h
 }
@@ -42,4 +55,10 @@ func divDD(ah, al, bh, bl float64) (h, l float64) {
 	h = ah / bh
 	p, e := twoProd(h, bh)
 	return h, (((ah - p) - e) + (al - h*bl)) / bh
+}
+
+// lessDD returns q a - b.
+func lessDD(qh, ql, ah, al, bh, bl float64) (h, l float64) {
+	h, l = mulDD(qh, ql, ah, al)
+	return addDD(h, l, -bh, -bl)
 }

@@ -19,6 +19,9 @@ const debyeMin = 40
 
 // debyeRoot returns s = sqrt(x^2 + nu^2) as a compensated number.
 func debyeRoot(nu, x float64) (h, l float64) {
+	if x > 0x1p100 { // nu^2/x is nothing
+		return x, 0
+	}
 	ph, pl := twoProd(x, x)
 	qh, ql := twoProd(nu, nu)
 	ph, pl = addDD(ph, pl, qh, ql)
@@ -41,11 +44,12 @@ func debyeSum(a [][]float64, nu, sh, sl float64) (sum, bh, bl float64) {
 // 0 or 1.
 func debyeExp(nu, x, sh, sl, sum, shift float64) (h, l float64) {
 	h, l = addDD(sh, sl, -shift*x, 0)
-	if nu > 0 {
-		// nu asinh(nu/x) = nu ln((nu + s)/x)
+	if nu > 0 && x <= 0x1p100 {
+		// nu asinh(nu/x) = nu (ln(nu + s) - ln x)
 		uh, ul := addDD(sh, sl, nu, 0)
-		uh, ul = divDD(uh, ul, x, 0)
 		uh, ul = logDD(uh, ul)
+		vh, vl := logDD(x, 0)
+		uh, ul = addDD(uh, ul, -vh, -vl)
 		uh, ul = mulDD(uh, ul, nu, 0)
 		h, l = addDD(h, l, -uh, -ul)
 	}

@@ -62,6 +62,9 @@ func hankelPQ(nu, x float64) (p, q float64) {
 // hankelFactor returns sqrt(2/(pi x)) as a compensated number.
 func hankelFactor(x float64) (h, l float64) {
 	const twoOverPiH, twoOverPiL = 0x1.45f306dc9c883p-1, -0x1.6b01ec5417056p-55
+	if x > extreme {
+		return math.Sqrt(twoOverPiH / x), 0
+	}
 	// 2/(pi x) = vh + vl, then one Newton step on the square root.
 	vh := twoOverPiH / x
 	p, e := twoProd(vh, x)

@@ -61,6 +61,8 @@ func RatioI(nu, x float64) float64 {
 		return math.Inf(1)
 	case math.IsInf(x, 1):
 		return 1
+	case x < 1/extreme:
+		return nu/x + x/2
 	case useDebye(nu, x):
 		return ratioDebye(nu, x, 1)
 	}

@@ -106,11 +106,18 @@ func validOrder(nu float64) bool {
 // jAndDerivative returns J_nu(x) and J'_nu(x) for nu >= 0 and finite x > 0.
 func jAndDerivative(nu, x float64) (j, d float64) {
 	ah, al, bh, bl := jPair(nu, x)
-	qh := nu / x
-	p, e := twoProd(qh, x)
-	ql := ((nu - p) - e) / x
-	ph, pl := mulDD(qh, ql, ah, al)
-	h, l := addDD(ph, pl, -bh, -bl)
+	switch {
+	case x > extreme:
+		return ah + al, -bh
+	case x < 1/extreme && nu > 0:
+		// (nu/x) (x/2)^nu / Gamma(nu+1), where J may have underflowed
+		h, l, k := prefix(nu, x)
+		return ah + al, math.Ldexp((h+l)*(nu/(x*0x1p200)), k+200)
+	case nu == 0:
+		return ah + al, -(bh + bl)
+	}
+	qh, ql := divDD(nu, 0, x, 0)
+	h, l := lessDD(qh, ql, ah, al, bh, bl)
 	return ah + al, h + l
 }
 

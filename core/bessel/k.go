@@ -51,6 +51,13 @@ func RatioK(nu, x float64) float64 {
 	// K'/K = nu/x - K_{nu+1}/K_nu; the difference is at least a third of its
 	// terms, and both are compensated.
 	ah, al, bh, bl := kPair(nu, x)
+	switch {
+	case !(bh < growLimit):
+		// So small an x that K_{nu-1} is nothing in K' = -(nu/x) K - K_{nu-1}.
+		return -nu / x
+	case x < 1/extreme:
+		return nu/x - bh/ah
+	}
 	bh, bl = divDD(bh, bl, ah, al)
 	ch, cl := divDD(nu, 0, x, 0)
 	ch, cl = addDD(ch, cl, -bh, -bl)
@@ -103,8 +110,11 @@ func kPair(nu, x float64) (ah, al, bh, bl float64) {
 		h, l := step(mh, ml, ih, il, bh, bl, -ah, -al)
 		ah, al, bh, bl = bh, bl, h, l
 	}
-	if !(ah < 0x1p1000) {
+	if !(ah < growLimit) {
 		ah, al = math.Inf(1), 0
+	}
+	if !(bh < growLimit) {
+		bh, bl = math.Inf(1), 0
 	}
 	return ah, al, bh, bl
 }

@@ -40,9 +40,15 @@ func YPrime(nu, x float64) float64 {
 		return 0
 	}
 	ah, al, bh, bl := yPair(nu, x)
+	switch {
+	case x > extreme || nu == 0:
+		return unscale(-bh, -bl)
+	case x < 1/extreme:
+		// -Y_{nu+1} is twice the derivative, but overflows before it.
+		return unscale(nu/x*-ah, 0)
+	}
 	ch, cl := divDD(nu, 0, x, 0)
-	ch, cl = mulDD(ch, cl, ah, al)
-	h, l := addDD(ch, cl, -bh, -bl)
+	h, l := lessDD(ch, cl, ah, al, bh, bl)
 	if math.IsNaN(h) { // both terms overflowed; Y_{nu+1} is the larger
 		return math.Inf(1)
 	}
@@ -52,6 +58,10 @@ func YPrime(nu, x float64) float64 {
 // growScale is taken out of growing recurrences, so that they neither overflow
 // before their result does nor lose the low parts to underflow.
 const growScale = 900
+
+// growLimit is the size of a scaled number from which on it certainly is out of
+// range, though products with it are not.
+const growLimit = 0x1p900
 
 // unscale returns (h + l) 2^growScale.
 func unscale(h, l float64) float64 {
@@ -69,10 +79,10 @@ func yPair(nu, x float64) (ah, al, bh, bl float64) {
 	}
 	const s = 1.0 / (1 << 450) / (1 << 450)
 	ah, al, bh, bl = up(mu, n, x, s*ah, s*al, s*bh, s*bl)
-	if !(math.Abs(ah) < 0x1p900) {
+	if !(math.Abs(ah) < growLimit) {
 		ah, al = math.Inf(-1), 0
 	}
-	if !(math.Abs(bh) < 0x1p900) {
+	if !(math.Abs(bh) < growLimit) {
 		bh, bl = math.Inf(-1), 0
 	}
 	return ah, al, bh, bl
