@@ -1,0 +1,185 @@
+package modes
+
+import (
+	"cmp"
+	"errors"
+	"math"
+	"slices"
+
+	"hoopsheet/core/diaphragm"
+)
+
+// Real is a diaphragm as it stands, in SI units.
+type Real struct {
+	Radius       float64 // of the ring, m
+	Tension      float64 // line tension T, N/m
+	ArealDensity float64 // sigma, kg/m^2
+	Stiffness    float64 // bending stiffness D = E h^3/(12 (1 - nu^2)), N m
+	Poisson      float64 // nu, counts with a supported rim
+	Rim          Rim     // RimClamped if empty
+	Upper, Lower Face
+	// LossFactor of the sheet's material; it acts on the bending energy only,
+	// because tension stores energy without loss.
+	LossFactor float64
+	// Remainder is the damping ratio that is assumed or measured and not
+	// computed: clamps, leaks, the ring.
+	Remainder float64
+}
+
+// Effects says which effects are taken into account.
+type Effects struct {
+	Stiffness bool
+	Fluid     bool // mass of the fluid on open and baffled faces
+	Sound     bool // its finite speed of sound, hence radiation
+	Cavity    bool
+}
+
+// AllEffects has every effect on.
+func AllEffects() Effects { return Effects{true, true, true, true} }
+
+// Request says which modes are wanted.
+type Request struct {
+	// MaxM and MaxN bound the nodal diameters and circles; 12 and 8 if both are
+	// zero.
+	MaxM, MaxN int
+	// Count, if positive, keeps the lowest so many; MaxFrequency, if positive,
+	// those up to so many Hz.
+	Count        int
+	MaxFrequency float64
+	Effects      Effects
+}
+
+// Bounds of a request.
+const (
+	MaxDiameters = 40
+	MaxCircles   = 20
+)
+
+// Solution holds the modes of a diaphragm, lowest first, and the orders they
+// were solved in.
+type Solution struct {
+	Real  Real
+	Modes []RealMode
+	// Complete is the frequency, Hz, up to which no mode is missing.
+	Complete float64
+	Notes    []Note
+
+	orders []*wetOrder
+}
+
+// Note is an assumption near its limit, by code.
+type Note string
+
+// The notes.
+const (
+	// NoteThinEdge: a clamped edge acts as a ring smaller by sqrt(D/T).
+	NoteThinEdge Note = "thin-edge"
+	// NoteBeyondSound: modes above MaxSoundNumber are left at their values in
+	// still fluid.
+	NoteBeyondSound Note = "beyond-sound"
+)
+
+// Solve returns the modes of a diaphragm.
+func Solve(real Real, request Request) (*Solution, error) {
+	if err := checkReal(real, request.Effects); err != nil {
+		return nil, err
+	}
+	if request.MaxM == 0 && request.MaxN == 0 {
+		request.MaxM, request.MaxN = 12, 8
+	}
+	if request.MaxM < 0 || request.MaxM > MaxDiameters || request.MaxN < 1 || request.MaxN > MaxCircles {
+		return nil, errors.New("the nodal diameters asked for must be 0 to 40 and the nodal circles 1 to 20")
+	}
+	s := &Solution{Real: real, Complete: math.Inf(1)}
+	plan := newWetPlan(real, request.Effects)
+	if plan.thin {
+		s.Notes = append(s.Notes, NoteThinEdge)
+	}
+	beyond := false
+	for m := 0; m <= request.MaxM; m++ {
+		o := plan.order(m, request.MaxN+1)
+		s.orders = append(s.orders, o)
+		o.solveStill(request.MaxN + 1)
+		for n := 1; n <= request.MaxN; n++ {
+			mode := plan.mode(o, n)
+			beyond = beyond || mode.BeyondSound
+			s.Modes = append(s.Modes, mode)
+		}
+		s.Complete = math.Min(s.Complete, frequencyOf(o.values[request.MaxN]))
+	}
+	next := plan.order(request.MaxM+1, 1)
+	next.solveStill(1)
+	s.Complete = math.Min(s.Complete, frequencyOf(next.values[0]))
+	if beyond {
+		s.Notes = append(s.Notes, NoteBeyondSound)
+	}
+	slices.SortStableFunc(s.Modes, func(a, b RealMode) int { return cmp.Compare(a.Frequency, b.Frequency) })
+	if request.MaxFrequency > 0 {
+		s.Modes = slices.DeleteFunc(s.Modes, func(m RealMode) bool { return m.Frequency > request.MaxFrequency })
+	}
+	if request.Count > 0 && len(s.Modes) > request.Count {
+		s.Modes = s.Modes[:request.Count]
+	}
+	return s, nil
+}
+
+func frequencyOf(theta float64) float64 { return 1 / (2 * math.Pi * math.Sqrt(theta)) }
+
+// checkReal says in a sentence what is wrong with a diaphragm.
+func checkReal(r Real, e Effects) error {
+	switch {
+	case !positive(r.Radius):
+		return errors.New("the radius must be a positive number of metres")
+	case !positive(r.ArealDensity):
+		return errors.New("the areal density must be a positive number of kg/m^2")
+	case !(r.Stiffness >= 0) || math.IsInf(r.Stiffness, 0):
+		return errors.New("the bending stiffness must be zero or a positive number of N m")
+	case !positive(r.Tension) && !(r.Tension == 0 && r.Stiffness > 0 && e.Stiffness):
+		return errors.New("the tension must be a positive number of N/m")
+	case r.Rim != "" && r.Rim != RimClamped && r.Rim != RimSupported:
+		return errors.New("the rim must be clamped or supported")
+	case r.Rim == RimSupported && !(r.Poisson >= -0.9 && r.Poisson < 1):
+		return errors.New("Poisson's ratio must be at least -0.9 and below 1")
+	case !(r.LossFactor >= 0 && r.LossFactor <= 1):
+		return errors.New("the loss factor of the sheet must be from 0 to 1")
+	case !(r.Remainder >= 0 && r.Remainder < 1):
+		return errors.New("the remaining damping ratio must be at least 0 and below 1")
+	case (r.Upper.Kind == diaphragm.FaceOpen) != (r.Lower.Kind == diaphragm.FaceOpen):
+		return errors.New("both faces must be open or neither, because the fluid passes around the rim")
+	case r.Upper.Kind == diaphragm.FaceOpen && (r.Upper.Density != r.Lower.Density || r.Upper.SoundSpeed != r.Lower.SoundSpeed):
+		return errors.New("open faces must have the same fluid on both sides")
+	}
+	for i, f := range []Face{r.Upper, r.Lower} {
+		if err := checkFace(f, [2]string{"upper", "lower"}[i]); err != nil {
+			return err
+		}
+	}
+	return nil
+}
+
+func checkFace(f Face, name string) error {
+	switch f.Kind {
+	case diaphragm.FaceVacuum, "":
+		return nil
+	case diaphragm.FaceOpen, diaphragm.FaceBaffled, diaphragm.FaceCavity:
+	default:
+		return errors.New("the " + name + " face must be vacuum, open, baffled or cavity")
+	}
+	switch {
+	case !(f.Density >= 0) || math.IsInf(f.Density, 0):
+		return errors.New("the density of the fluid at the " + name + " face must be zero or a positive number of kg/m^3")
+	case f.Density > 0 && !(f.SoundSpeed > 0):
+		return errors.New("the speed of sound at the " + name + " face must be a positive number of m/s")
+	case !(f.Viscosity >= 0) || math.IsInf(f.Viscosity, 0):
+		return errors.New("the kinematic viscosity at the " + name + " face must be zero or a positive number of m^2/s")
+	case f.Kind == diaphragm.FaceCavity && !positive(f.Depth):
+		return errors.New("the depth of the cavity at the " + name + " face must be a positive number of metres")
+	case f.Kind == diaphragm.FaceCavity:
+		return errors.New("a cavity at the " + name + " face is not among the effects that can be computed")
+	case f.WallDistance != 0:
+		return errors.New("a wall at the " + name + " face is not among the effects that can be computed")
+	case !(f.WallDistance >= 0):
+		return errors.New("the distance of the wall from the " + name + " face must be zero or a positive number of metres")
+	}
+	return nil
+}
