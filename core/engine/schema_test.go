@@ -15,33 +15,30 @@ import (
 	"hoopsheet/core/diaphragm"
 )
 
-// contractSchemas gives the resolved schema of a type of the generated
+// contractSchema gives the resolved schema of a type of the generated
 // contract by its name.
-func contractSchemas(t *testing.T) func(name string) *jsonschema.Resolved {
+func contractSchema(t *testing.T, name string) *jsonschema.Resolved {
 	t.Helper()
 	text, err := os.ReadFile(filepath.Join("..", "..", "site", "contract", "contract.schema.json"))
 	if err != nil {
 		t.Fatal(err)
 	}
-	return func(name string) *jsonschema.Resolved {
-		t.Helper()
-		var contract struct {
-			Schema string                        `json:"$schema"`
-			Defs   map[string]*jsonschema.Schema `json:"$defs"`
-		}
-		if err := json.Unmarshal(text, &contract); err != nil {
-			t.Fatal(err)
-		}
-		if contract.Defs[name] == nil {
-			t.Fatalf("the contract has no type %s", name)
-		}
-		root := &jsonschema.Schema{Schema: contract.Schema, Ref: "#/$defs/" + name, Defs: contract.Defs}
-		resolved, err := root.Resolve(nil)
-		if err != nil {
-			t.Fatalf("%s: %v", name, err)
-		}
-		return resolved
+	var contract struct {
+		Schema string                        `json:"$schema"`
+		Defs   map[string]*jsonschema.Schema `json:"$defs"`
 	}
+	if err := json.Unmarshal(text, &contract); err != nil {
+		t.Fatal(err)
+	}
+	if contract.Defs[name] == nil {
+		t.Fatalf("the contract has no type %s: run make generate", name)
+	}
+	root := &jsonschema.Schema{Schema: contract.Schema, Ref: "#/$defs/" + name, Defs: contract.Defs}
+	resolved, err := root.Resolve(nil)
+	if err != nil {
+		t.Fatalf("%s: %v", name, err)
+	}
+	return resolved
 }
 
 func checkAgainst(t *testing.T, schema *jsonschema.Resolved, text []byte) {
@@ -58,18 +55,32 @@ func checkAgainst(t *testing.T, schema *jsonschema.Resolved, text []byte) {
 // TestCallsAgainstTheirSchemas holds a real request and the result it gets
 // against the committed JSON Schema, for every call.
 func TestCallsAgainstTheirSchemas(t *testing.T) {
-	schema := contractSchemas(t)
 	requests := sampleRequests(t)
 	for _, c := range Calls() {
 		t.Run(c.Name, func(t *testing.T) {
 			request := []byte(requests[c.Name])
-			checkAgainst(t, schema(c.Request.Name()), request)
+			checkAgainst(t, contractSchema(t, c.Request.Name()), request)
 			response, err := Call(context.Background(), c.Name, request)
 			if err != nil {
 				t.Fatal(err)
 			}
-			checkAgainst(t, schema(c.Result.Name()), response)
+			checkAgainst(t, contractSchema(t, c.Result.Name()), response)
 		})
+	}
+}
+
+// TestSchemasRefuse makes sure that the schemas are not so loose that anything
+// passes.
+func TestSchemasRefuse(t *testing.T) {
+	for _, bad := range []string{`{}`, `{"m":0.5}`, `[]`, `null`,
+		`{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41,"unheardOf":1}`} {
+		var instance any
+		if err := json.Unmarshal([]byte(bad), &instance); err != nil {
+			t.Fatal(err)
+		}
+		if err := contractSchema(t, "ShapeRequest").Validate(instance); err == nil {
+			t.Errorf("%s passes", bad)
+		}
 	}
 }
 
@@ -83,14 +94,13 @@ func TestRefusalAgainstItsSchema(t *testing.T) {
 	if fault != nil {
 		t.Fatal(fault)
 	}
-	checkAgainst(t, contractSchemas(t)("Error"), text)
+	checkAgainst(t, contractSchema(t, "Error"), text)
 }
 
 // TestStoreCallsAgainstTheirSchemas does it for the calls of the store: each
 // type is filled as the store and the pages fill it, and written by the
 // encoder that both use.
 func TestStoreCallsAgainstTheirSchemas(t *testing.T) {
-	schema := contractSchemas(t)
 	for _, c := range StoreCalls() {
 		for _, kind := range []reflect.Type{c.Request, c.Result} {
 			t.Run(c.Name+"/"+kind.Name(), func(t *testing.T) {
@@ -98,7 +108,7 @@ func TestStoreCallsAgainstTheirSchemas(t *testing.T) {
 				if err != nil {
 					t.Fatal(err)
 				}
-				checkAgainst(t, schema(kind.Name()), text)
+				checkAgainst(t, contractSchema(t, kind.Name()), text)
 			})
 		}
 	}
