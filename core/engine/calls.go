@@ -7,6 +7,7 @@ func calls() []call {
 		define("about", "Says what this engine is and which calls it answers.", runAbout),
 		define("demo", "Gives the demonstration diaphragm, whose data are invented.", runDemo),
 		define("read", "Reads typed quantities such as \"0.9 mil\" into SI values.", runRead),
+		define("check", "Computes published values again and compares them.", runCheck),
 		define("team", "Reads the file defaults.json that a team puts beside the pages.", runTeam),
 		define("edit", "Changes fields of a diaphragm by what was typed, and gives the rows of its form.", runEdit),
 		define("modes", "Lists the modes of the ideal sheet with their distance to the lines to keep clear of.", runModes),

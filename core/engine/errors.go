@@ -22,6 +22,9 @@ const (
 	CodeInternal    Code = "internal"
 )
 
+// Codes lists the codes that the door itself gives.
+func Codes() []Code { return []Code{CodeUnknownCall, CodeRequest, CodeInternal, CodeRange} }
+
 // Error is what a refused call returns: one or more problems.
 type Error struct {
 	Problems []Problem `json:"problems"`

@@ -47,6 +47,7 @@ func sampleRequests(t *testing.T) map[string]string {
 		"about": `{}`,
 		"demo":  `{}`,
 		"read":  `{"items":[{"field":"x","name":"height","text":"0.9 mil","dimension":"length","unit":"mm","low":0,"high":0}]}`,
+		"check": `{"checks":[{"group":"g","name":"n","quantity":"zero-j","arguments":[0,1],"expected":"2.4048","source":"s"}]}`,
 		"team":  `{"text":"{\"units\":\"si\"}"}`,
 		"edit":  `{"document":` + doc + `,"drafts":{},"units":{},"edits":[{"field":"sheet.thickness","action":"set","text":"23 um"}],"system":"si"}`,
 		"modes": `{"document":` + doc + `,"count":24}`,

@@ -1,5 +1,6 @@
 // Command contract writes the JSON Schema of every type that crosses the
-// boundary between the engine and the pages. It is a host program and is never
+// boundary between the engine and the pages, and the list of calls for the
+// page on scripting. It is a host program and is never
 // linked into the WebAssembly.
 //
 // It reads the engine's list of calls, asks google/jsonschema-go for the
@@ -10,6 +11,7 @@ package main
 
 import (
 	"encoding/json"
+	"errors"
 	"flag"
 	"fmt"
 	"os"
@@ -19,11 +21,12 @@ import (
 
 func main() {
 	out := flag.String("out", "site/contract/contract.schema.json", "file to write")
+	page := flag.String("page", "site/pages/generated/calls.md", "page to write")
 	root := flag.String("root", ".", "top of the repository, for doc comments")
 	flag.Parse()
 	schema, err := Build(*root, engine.Calls(), engine.StoreCalls())
 	if err == nil {
-		err = write(*out, schema)
+		err = errors.Join(write(*out, schema), os.WriteFile(*page, []byte(Page(schema)), 0o644))
 	}
 	if err != nil {
 		fmt.Fprintln(os.Stderr, "contract:", err)

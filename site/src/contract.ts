@@ -108,6 +108,53 @@ export interface CallLine {
   summary: string;
 }
 /**
+ * Check is one published value.
+ */
+export interface Check {
+  group: string;
+  name: string;
+  /**
+   * Quantity names what is computed, Arguments in SI units are its own.
+   */
+  quantity: string;
+  arguments: number[];
+  /**
+   * Expected as printed. Half a unit of its last digit is allowed, times Slack where that is given, and one ulp.
+   */
+  expected: string;
+  slack?: number;
+  source: string;
+}
+/**
+ * CheckOutcome is the comparison of one value.
+ */
+export interface CheckOutcome {
+  /**
+   * Computed to two digits more than printed.
+   */
+  computed: string;
+  difference: number;
+  allowed: number;
+  agrees: boolean;
+  /**
+   * Problem says why nothing was computed; empty otherwise.
+   */
+  problem: string;
+}
+/**
+ * CheckRequest compares published values with what the engine computes.
+ */
+export interface CheckRequest {
+  checks: Check[];
+}
+/**
+ * CheckResult holds one outcome for each check, in order.
+ */
+export interface CheckResult {
+  outcomes: CheckOutcome[];
+  agreeing: number;
+}
+/**
  * Choice is one option of a field.
  */
 export interface Choice {
@@ -1451,6 +1498,8 @@ export interface CallMap {
   "demo": { request: NoRequest; result: DemoResult };
   /** Reads typed quantities such as "0.9 mil" into SI values. */
   "read": { request: ReadRequest; result: ReadResult };
+  /** Computes published values again and compares them. */
+  "check": { request: CheckRequest; result: CheckResult };
   /** Reads the file defaults.json that a team puts beside the pages. */
   "team": { request: TeamRequest; result: TeamResult };
   /** Changes fields of a diaphragm by what was typed, and gives the rows of its form. */

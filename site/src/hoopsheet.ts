@@ -5,3 +5,4 @@
 import './elements/index.js';
 
 export { buildId } from './shipped.js';
+export { engine } from './engine/client.js';

@@ -2,6 +2,7 @@
 import './bar.js';
 import './handover.js';
 import './modes.js';
+import './numbers.js';
 import './records.js';
 import './respond.js';
 import './specify.js';

@@ -7,7 +7,7 @@ const triangle = svg`<svg class="icon" viewBox="0 0 24 24" aria-hidden="true"><p
 
 /** A caution about harm, or about a figure that must not be trusted. */
 export function caution(content: unknown, title = 'Caution'): TemplateResult {
-  return html`<aside class="note caution"><p class="note-title">${triangle} ${title}</p><p>${content}</p></aside>`;
+  return html`<div class="note caution" role="note"><p class="note-title">${triangle} ${title}</p><p>${content}</p></div>`;
 }
 
 export function cautions(sentences: readonly string[]): TemplateResult[] {

@@ -1,0 +1,95 @@
+package engine
+
+import (
+	"context"
+	"math"
+
+	"hoopsheet/core/air"
+	"hoopsheet/core/bessel"
+	"hoopsheet/core/modes"
+	"hoopsheet/core/response"
+	"hoopsheet/core/tap"
+)
+
+// quantityOf is one quantity that published values give.
+type quantityOf struct {
+	name      string
+	arguments int
+	compute   func(a []float64) float64
+}
+
+// checkable lists the quantities of the call "check". Each is computed by the
+// function that the pages use, not by one of its own.
+var checkable = []quantityOf{
+	{"zero-j", 2, func(a []float64) float64 { return bessel.ZeroJ(a[0], int(a[1])) }},
+	{"zero-j-prime", 2, func(a []float64) float64 { return bessel.ZeroJPrime(a[0], int(a[1])) }},
+	{"zero-annulus", 3, func(a []float64) float64 { return bessel.ZeroAnnulus(int(a[0]), a[1], int(a[2])) }},
+	{"frequency-ratio", 2, func(a []float64) float64 { return unitMode(a[0], a[1]).Frequency / unitMode(0, 1).Frequency }},
+	{"frequency-number", 2, func(a []float64) float64 { return unitMode(a[0], a[1]).Frequency }},
+	{"nodal-circle", 3, func(a []float64) float64 { return circle(unitMode(a[0], a[1]), int(a[2])) }},
+	{"air-density", 3, func(a []float64) float64 { return air.Density(a[0], a[1], a[2], air.CarbonDioxide) }},
+	{"sound-speed", 4, func(a []float64) float64 { return air.SoundSpeed(a[0], a[1], a[2], a[3]) }},
+	{"bulge-motion", 2, bulgeMotion},
+	{"conformance", 3, func(a []float64) float64 {
+		return tap.ConformanceProbability(a[0], a[1], math.Inf(-1), a[2], 0)
+	}},
+	{"false-acceptance", 1, func(a []float64) float64 { return 1 - tap.StudentCDF(a[0], 0) }},
+}
+
+// evaluate computes a quantity; the problem is a sentence, empty where there
+// is a value.
+func evaluate(name string, arguments []float64) (value float64, problem string) {
+	for _, q := range checkable {
+		if q.name != name {
+			continue
+		}
+		if len(arguments) != q.arguments {
+			return 0, "The quantity " + quote(name) + " takes another number of arguments."
+		}
+		value = q.compute(arguments)
+		if math.IsNaN(value) || math.IsInf(value, 0) {
+			return 0, "The quantity " + quote(name) + " has no value for these arguments."
+		}
+		return value, ""
+	}
+	return 0, "There is no quantity named " + quote(name) + "."
+}
+
+// unitMode is mode (m, n) of the sheet of unit radius, tension and areal
+// density, among the lowest 400; the zero Mode where it is not.
+func unitMode(m, n float64) modes.Mode {
+	for _, mode := range modes.Ideal(1, 1, 1, mostModes) {
+		if float64(mode.M) == m && float64(mode.N) == n {
+			return mode
+		}
+	}
+	return modes.Mode{}
+}
+
+func circle(mode modes.Mode, k int) float64 {
+	if k < 1 || k > len(mode.CircleRadii) {
+		return math.NaN()
+	}
+	return mode.CircleRadii[k-1]
+}
+
+// bulgeMotion is the displacement at radius r and time t of the sheet of unit
+// radius and wave speed that is let go from 1 - r^2; NaN where it cannot be had.
+func bulgeMotion(a []float64) float64 {
+	motion, problems, err := response.Respond(context.Background(), &response.Case{
+		Sheet:        response.Sheet{Radius: 1, Tension: 1, ArealDensity: 1},
+		Displacement: response.Shape{Kind: response.ShapeBulge, Peak: 1},
+		Velocity:     response.Shape{Kind: response.ShapeRest},
+		Circles:      response.MostCircles,
+		Duration:     a[1],
+		Frames:       2,
+		Radii:        2,
+		Angles:       4,
+		Points:       []response.Point{{Radius: a[0]}},
+	}, func(float64) {})
+	if err != nil || len(problems) > 0 {
+		return math.NaN()
+	}
+	history := motion.Histories[0]
+	return float64(history[len(history)-1])
+}
