@@ -3,8 +3,8 @@ package bessel
 import "math"
 
 // JSeq fills dst with J_0(x), J_1(x), ... J_{len(dst)-1}(x) in one stable sweep
-// of the recurrence in compensated arithmetic: about 15 ns an order, in time
-// proportional to the larger of len(dst) and x where len(dst) > x.
+// of the recurrence in compensated arithmetic. The time is proportional to
+// len(dst), plus some seventy orders where x < 25 or len(dst) > x.
 //
 // Domain, limits, signs and accuracy are those of JInt; the length is not
 // bounded by MaxOrder. It does not allocate.

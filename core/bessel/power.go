@@ -64,7 +64,7 @@ func logDD(xh, xl float64) (h, l float64) {
 	h, pe = twoSum(h, rh)
 	l += pe
 	h, pe = twoSum(h, -0.5*s)
-	l += pe + (rl*(1-rh) - 0.5*se + t)
+	l += pe + (rl*(1-rh*(1-rh)) - 0.5*se + t)
 	return fastTwoSum(h, l)
 }
 

@@ -50,3 +50,31 @@ func TestPublishedZeros(t *testing.T) {
 		checkPublished(t, "ZeroJPrime", ZeroJPrime(c.nu, c.n), c.want, c.nu, c.n)
 	}
 }
+
+// J'_m(j_{m,n}), A&S Table 9.5, to the digits recomputed with mpmath.
+func TestPublishedSlopes(t *testing.T) {
+	for m, want := range [][]float64{
+		{-0.51914749728947, 0.34026480655837, -0.27145229992838, 0.23245983136472, -0.206546433078},
+		{-0.40275939570255, 0.30011575252613, -0.24970487705784, 0.21835940724787, -0.19646537146866},
+		{-0.33966874277373, 0.2713825894146, -0.23244312885108, 0.20654074939869, -0.1877264150473},
+	} {
+		zeros, slope := make([]float64, len(want)), make([]float64, len(want))
+		ZerosJAndDerivative(zeros, slope, float64(m))
+		for n := range want {
+			if math.Abs(slope[n]-want[n]) > 5e-15 { // half a unit of the last digit
+				t.Errorf("J'(%d) at zero %d is %.15f, table has %.15f", m, n+1, slope[n], want[n])
+			}
+		}
+	}
+}
+
+// Large-order expansion of the first zero, DLMF 10.21.40 and A&S 9.5.14, with
+// its coefficients recomputed: at nu = 1e4 the first term left out, of order
+// nu^(-3), is below 1e-12.
+func TestLargeOrderExpansion(t *testing.T) {
+	const nu = 1e4
+	c := math.Cbrt(nu)
+	want := nu + 1.8557570814892*c + 1.0331503036492/c - 0.0039740570689507/nu -
+		0.090762742004126/(nu*c*c) + 0.043338515672056/(nu*nu*c)
+	checkPublished(t, "ZeroJ", ZeroJ(nu, 1), want, nu, 1)
+}
