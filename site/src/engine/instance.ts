@@ -36,16 +36,12 @@ export function startInWorker(module: WebAssembly.Module, role: Role, listen: Li
  */
 export async function startOnPage(module: WebAssembly.Module, role: Role, listen: Listener): Promise<Instance> {
   const { runGo } = await import('./run.js');
-  let ended = false;
-  const take = runGo(module, role, (message) => {
-    if (!ended) {
-      listen(message);
-    }
-  });
+  // Through a port, so that messages arrive as from a worker: never before the caller holds what is returned here.
+  const { port1, port2 } = new MessageChannel();
+  port2.onmessage = (event: MessageEvent<FromEngine>) => listen(event.data);
+  const take = runGo(module, role, (message, transfer) => port1.postMessage(message, transfer));
   return {
     send: take,
-    end: () => {
-      ended = true;
-    },
+    end: () => port2.close(),
   };
 }
