@@ -30,8 +30,8 @@ export function handOverView(page: HandOverPage, received: boolean): TemplateRes
       <div class="table-scroll"><table><thead><tr><th scope="col" class="number">frequency</th><th scope="col" class="number">standard uncertainty</th><th scope="col">read as (<var>m</var>, <var>n</var>)</th></tr></thead>
       <tbody>${page.peaks.map((p) => html`<tr><td class="number">${figure(p.frequency, 6)} Hz</td><td class="number">${p.uncertainty > 0 ? `${figure(p.uncertainty, 2)} Hz` : '–'}</td><td>${p.n > 0 ? `(${p.m}, ${p.n})` : 'left open'}</td></tr>`)}</tbody></table></div></section>` : nothing}
     <section class="panel" aria-labelledby="spec-title"><h2 id="spec-title">Specification</h2>
-      ${groups.map((g) => html`<table class="spec"><caption>${groupTitles[g]}</caption><tbody>${page.specification.filter((s) => s.group === g).map((s) => html`<tr>
-        <td class="symbol">${s.symbol}</td><th scope="row">${s.name}</th><td class="value">${s.text} <span class="unit">${s.unit}</span></td></tr>`)}</tbody></table>`)}
+      <div class="specs">${groups.map((g) => html`<table class="spec"><caption>${groupTitles[g]}</caption><tbody>${page.specification.filter((s) => s.group === g).map((s) => html`<tr>
+        <td class="symbol">${s.symbol}</td><th scope="row">${s.name}</th><td class="value">${s.text} <span class="unit">${s.unit}</span></td></tr>`)}</tbody></table>`)}</div>
     </section>
     ${cautions(page.cautions)}
     ${assumptionsOpen(page.assumptions)}

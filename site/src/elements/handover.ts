@@ -27,11 +27,17 @@ export class HoopHandover extends LitElement {
       .spec .value { text-align: end; font-variant-numeric: tabular-nums; overflow-wrap: anywhere; white-space: pre-line; }
       .spec th { width: 46%; }
       @media print {
+        :host { font-size: 8.6pt; line-height: 1.25; }
         .prepare { display: none; }
-        :host { font-size: 9.5pt; line-height: 1.3; }
-        th, td { padding: 2pt 4pt; }
-        .spec { columns: 1; }
-        h2 { font-size: 12pt; margin: 6pt 0 3pt; }
+        .panel { padding: 4pt 8pt; margin-bottom: 6pt; }
+        .panel, table { break-inside: auto; }
+        th, td { padding: 1.2pt 4pt; }
+        h2 { font-size: 11.5pt; margin: 4pt 0 2pt; }
+        p, ul { margin: 0 0 3pt; }
+        .note { padding: 3pt 8pt; margin: 4pt 0; max-width: none; }
+        .specs { columns: 2; column-gap: 18pt; }
+        .spec { break-inside: avoid; margin-bottom: 4pt; }
+        .spec .symbol { width: 2.2em; }
       }
     `,
   ];

@@ -30,6 +30,11 @@ export class HoopModes extends LitElement {
       .count { display: flex; align-items: center; gap: 8px; flex-wrap: wrap; }
       .count select { width: auto; }
       details { margin-top: 12px; }
+      @media print {
+        .choose { display: inline !important; border: 0; padding: 0; min-height: 0; background: none; box-shadow: none; }
+        td, th { padding: 2pt 4pt; }
+        .count { display: none; }
+      }
       summary { min-height: 44px; padding: 9px 0; cursor: pointer; color: var(--teal); }
     `,
   ];
