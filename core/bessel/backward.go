@@ -2,8 +2,8 @@ package bessel
 
 import "math"
 
-// startTiny starts a backward recurrence. The largest value it grows to is
-// startTiny times the inverse of the smallest ratio kept, exp(760).
+// startTiny starts a backward recurrence, which may then grow by a factor of
+// exp(1300), far more than the range of J.
 const startTiny = 0x1p-1000
 
 // underflowExponent is the Debye exponent xi beyond which J_n(x) < 2^-1090 is
@@ -77,12 +77,10 @@ func underflowOrder(x float64) int {
 	return int(nu) + 2
 }
 
-// intBackward returns J_n(x) and J_{n+1}(x), x > 0, normalised as seqBackward.
+// intBackward returns J_n(x) and J_{n+1}(x), normalised as seqBackward, where x
+// is beyond the power series and J_n far from underflow.
 func intBackward(n int, x float64) (ah, al, bh, bl float64) {
 	m := max(startAbove(n+1, x), decayOrder(x))
-	if top := underflowOrder(x); m > top {
-		m = top
-	}
 	ih, il := invDD(x)
 	var sh, sl, oh, ol, ph, pl float64
 	ch, cl := startTiny, 0.0
@@ -174,7 +172,7 @@ func neumannTerm(lam, lamLow, j, ch, cl, sh, sl float64) (h, l float64) {
 // realDown returns J_nu and J_{nu+1} for nu = mu + n > x >= hankelMin: down to
 // mu, normalised there by the larger of Hankel's J_mu and J_{mu+1}.
 func realDown(mu float64, n int, x float64) (ah, al, bh, bl float64) {
-	m := min(startAbove(n+1, x), underflowOrder(x))
+	m := startAbove(n+1, x)
 	ih, il := invDD(x)
 	var oh, ol float64
 	ch, cl := startTiny, 0.0

@@ -2,6 +2,7 @@ package bessel
 
 import (
 	"math"
+	"strconv"
 	"testing"
 )
 
@@ -54,3 +55,83 @@ func BenchmarkJSeq200(b *testing.B) {
 }
 
 var sink float64
+
+// BenchmarkJ times single values, one for each method and growing with the
+// order: the time is flat where no recurrence is needed and proportional to the
+// number of orders passed elsewhere.
+func BenchmarkJ(b *testing.B) {
+	for _, c := range []struct {
+		name  string
+		nu, x float64
+	}{
+		{"series", 30.3, 5},
+		{"whole/x=10", 5, 10},
+		{"real/x=10", 5.3, 10},
+		{"whole/x=40", 5, 40},
+		{"real/x=40", 5.3, 40},
+		{"above/whole", 60, 50},
+		{"above/real", 60.3, 50},
+		{"order=50", 50.3, 2000},
+		{"order=100", 100.3, 2000},
+		{"order=200", 200.3, 2000},
+		{"order=400", 400.3, 2000},
+		{"order=800", 800.3, 2000},
+		{"above/order=200", 200.3, 180},
+		{"above/order=400", 400.3, 360},
+		{"above/order=800", 800.3, 720},
+	} {
+		b.Run(c.name, func(b *testing.B) {
+			for b.Loop() {
+				sink += J(c.nu, c.x)
+			}
+		})
+	}
+}
+
+// BenchmarkJSeqGrowth doubles the length four times.
+func BenchmarkJSeqGrowth(b *testing.B) {
+	for n := 50; n <= 800; n *= 2 {
+		dst := make([]float64, n)
+		b.Run("n="+strconv.Itoa(n), func(b *testing.B) {
+			for b.Loop() {
+				JSeq(dst, 1000)
+			}
+		})
+	}
+}
+
+// BenchmarkZerosGrowth doubles the number of zeros four times. The first ten
+// cost more each than the rest, so the time per zero falls.
+func BenchmarkZerosGrowth(b *testing.B) {
+	for n := 25; n <= 400; n *= 2 {
+		dst := make([]float64, n)
+		b.Run("n="+strconv.Itoa(n), func(b *testing.B) {
+			for b.Loop() {
+				ZerosJ(dst, 10)
+			}
+		})
+	}
+}
+
+// BenchmarkOthers times one call of each of the other functions.
+func BenchmarkOthers(b *testing.B) {
+	for _, c := range []struct {
+		name string
+		f    func() float64
+	}{
+		{"Y", func() float64 { return Y(7.3, 12) }},
+		{"I", func() float64 { return IScaled(7.3, 12) }},
+		{"K", func() float64 { return KScaled(7.3, 12) }},
+		{"RatioI", func() float64 { return RatioI(7, 60) }},
+		{"RatioK", func() float64 { return RatioK(7, 60) }},
+		{"ZeroJ", func() float64 { return ZeroJ(7, 3) }},
+		{"ZeroJPrime", func() float64 { return ZeroJPrime(7, 30) }},
+		{"ZeroAnnulus", func() float64 { return ZeroAnnulus(7, 0.3, 3) }},
+	} {
+		b.Run(c.name, func(b *testing.B) {
+			for b.Loop() {
+				sink += c.f()
+			}
+		})
+	}
+}

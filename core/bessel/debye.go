@@ -8,10 +8,14 @@ import "math"
 //	I_nu(x) = exp(B)/sqrt(2 pi x B'),   K_nu(x) = exp(-B) sqrt(pi/(2 x B')),
 //	I'_nu(x) = exp(C) s/sqrt(2 pi x^3 C'),
 //
-// where B and C are nu eta = s - nu asinh(nu/x) plus sums of odd powers of
-// 1/s: the sums of zerophase.go for imaginary argument (DLMF 10.41.3-6, put in
-// exponential form; B' and C' then follow from the Wronskian). They serve for
-// every nu >= 0, since s alone has to be large.
+// and with s = sqrt(nu^2 - x^2), nu well above x,
+//
+//	J_nu(x) = exp(B)/sqrt(2 pi x B').
+//
+// B and C are s - nu ln((nu + s)/x) plus sums of odd powers of 1/s: the sums of
+// zerophase.go for imaginary argument (DLMF 10.41.3-6 and 10.19.3, put in
+// exponential form; B' and C' then follow from the Wronskian). They serve I and
+// K for every nu >= 0, since s alone has to be large; for J, s^3/nu^2 has to be.
 
 // debyeMin is the smallest s at which the first term left out, a_13/s^13, is
 // below 2^-56: a_13 is at most 2e4 for 0 <= (nu/s)^2 <= 1.
@@ -45,15 +49,19 @@ func debyeSum(a [][]float64, nu, sh, sl float64) (sum, bh, bl float64) {
 func debyeExp(nu, x, sh, sl, sum, shift float64) (h, l float64) {
 	h, l = addDD(sh, sl, -shift*x, 0)
 	if nu > 0 && x <= 0x1p100 {
-		// nu asinh(nu/x) = nu (ln(nu + s) - ln x)
-		uh, ul := addDD(sh, sl, nu, 0)
-		uh, ul = logDD(uh, ul)
-		vh, vl := logDD(x, 0)
-		uh, ul = addDD(uh, ul, -vh, -vl)
+		uh, ul := logRatio(nu, x, sh, sl)
 		uh, ul = mulDD(uh, ul, nu, 0)
 		h, l = addDD(h, l, -uh, -ul)
 	}
 	return addDD(h, l, sum, 0)
+}
+
+// logRatio returns ln((nu + s)/x).
+func logRatio(nu, x, sh, sl float64) (h, l float64) {
+	sh, sl = addDD(sh, sl, nu, 0)
+	sh, sl = logDD(sh, sl)
+	h, l = logDD(x, 0)
+	return addDD(sh, sl, -h, -l)
 }
 
 // iDebye returns exp(-shift x) I_nu(x) for s >= debyeMin.

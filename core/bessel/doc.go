@@ -34,7 +34,9 @@
 //	x^2 <= 2 (nu+1)      power series; its factor by logarithms  series.go, power.go
 //	x >= 25, nu <= x     Hankel's expansion at mu and mu + 1,     hankel.go, trig.go
 //	                     then the recurrence upwards              recurrence.go
-//	nu > x, xi > 760     zero: below the range
+//	nu > x, nu >= 40,    Debye's expansion, at nu or at an order  jdebye.go
+//	x >= 60 or nu above  above where it holds; from there the     debye.go
+//	decayOrder(x)        recurrence downwards
 //	nu whole             recurrence down from above, normalised   backward.go
 //	                     by J_0 + 2 J_2 + 2 J_4 + ... = 1
 //	x >= 25              recurrence down to mu, normalised by     backward.go

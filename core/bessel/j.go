@@ -37,6 +37,10 @@ func J(nu, x float64) float64 {
 		h, l := jSeries(nu, x)
 		return h + l
 	}
+	if nu >= debyeMin && nu > float64(decayOrder(x)) {
+		h, l := jDebye(nu, 0, x)
+		return h + l
+	}
 	h, l, _, _ := jPair(nu, x)
 	return h + l
 }
@@ -133,8 +137,8 @@ func jPair(nu, x float64) (ah, al, bh, bl float64) {
 	case x >= hankelMin && nu <= x:
 		ah, al, bh, bl = hankelJ(mu, x)
 		return up(mu, n, x, ah, al, bh, bl)
-	case nu > x+1 && debyeExponent(nu, x) > underflowExponent:
-		return 0, 0, 0, 0
+	case useDebyeDown(nu, x):
+		return jDebyeDown(mu, n, x)
 	case mu == 0:
 		return intBackward(n, x)
 	case x >= hankelMin:

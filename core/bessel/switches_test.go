@@ -215,3 +215,25 @@ func TestDecayOrder(t *testing.T) {
 		}
 	}
 }
+
+func TestDebyeDownAgainstOthers(t *testing.T) {
+	for x := 20.0; x < 160; x += 4.7 {
+		for n := int(max(x, debyeMin)) + 1; n < 320; n += 7 {
+			for _, mu := range []float64{0, 0.3125, 0.875} {
+				nu := float64(n) + mu
+				ch, cl, dh, dl := jDebyeDown(mu, n, x)
+				var ah, al, bh, bl float64
+				switch {
+				case mu == 0:
+					ah, al, bh, bl = intBackward(n, x)
+				case x >= hankelMin:
+					ah, al, bh, bl = realDown(mu, n, x)
+				default:
+					ah, al, bh, bl = realBackward(mu, n, x)
+				}
+				within(t, "Debye, recurrence", nu, x, ch+cl, ah+al, twoMethods*(ah+al))
+				within(t, "Debye, recurrence, next order", nu+1, x, dh+dl, bh+bl, twoMethods*(bh+bl))
+			}
+		}
+	}
+}
