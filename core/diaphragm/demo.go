@@ -2,7 +2,9 @@ package diaphragm
 
 import (
 	"reflect"
+	"slices"
 
+	"hoopsheet/core/air"
 	"hoopsheet/core/sheet"
 )
 
@@ -68,9 +70,42 @@ func SameContent(a, b Diaphragm) bool {
 }
 
 func content(doc Diaphragm) Diaphragm {
+	doc = cloned(doc)
 	doc.Revision = 0
-	if len(doc.Avoid.Lines) == 0 {
-		doc.Avoid.Lines = nil
+	return doc
+}
+
+// normal brings what can be written in two ways to one: the list of lines is
+// never nil, other empty lists are, and what is meant by "" is not spelt out.
+func normal(doc Diaphragm) Diaphragm {
+	if doc.Avoid.Lines == nil {
+		doc.Avoid.Lines = []Line{}
+	}
+	if len(doc.Tension.Harmonics) == 0 {
+		doc.Tension.Harmonics = nil
+	}
+	if len(doc.Attached.Patches) == 0 {
+		doc.Attached.Patches = nil
+	}
+	if len(doc.Attached.Strips) == 0 {
+		doc.Attached.Strips = nil
+	}
+	if doc.Tension.Rim == RimClamped {
+		doc.Tension.Rim = ""
+	}
+	for _, face := range []*Face{&doc.Faces.Upper, &doc.Faces.Lower} {
+		if face.Fluid == air.FluidAir {
+			face.Fluid = ""
+		}
 	}
 	return doc
+}
+
+// cloned is the normal form of a document that shares nothing with it.
+func cloned(doc Diaphragm) Diaphragm {
+	doc.Avoid.Lines = slices.Clone(doc.Avoid.Lines)
+	doc.Tension.Harmonics = slices.Clone(doc.Tension.Harmonics)
+	doc.Attached.Patches = slices.Clone(doc.Attached.Patches)
+	doc.Attached.Strips = slices.Clone(doc.Attached.Strips)
+	return normal(doc)
 }

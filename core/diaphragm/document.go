@@ -3,12 +3,23 @@
 // edit, and the codec of the links that carry it.
 //
 // Every stored value is in SI units (m, kg, s, K, Pa, N/m); units are chosen
-// at the edge, for show, by package quantity.
+// at the edge, for show, by package quantity. Directions count anticlockwise
+// from the right in the plan.
 package diaphragm
+
+import "hoopsheet/core/air"
 
 // Schema is the version of the document that this program writes. Documents of
 // a later version are refused in words; older ones are migrated by Open.
 const Schema = 1
+
+// The largest numbers of entries of the document's lists.
+const (
+	MostLines     = 24
+	MostHarmonics = 8
+	MostPatches   = 8
+	MostStrips    = 8
+)
 
 // Diaphragm is one document: what a workshop builds and an inspector checks.
 type Diaphragm struct {
@@ -27,6 +38,7 @@ type Diaphragm struct {
 	Ring         Ring         `json:"ring"`
 	Sheet        Sheet        `json:"sheet"`
 	Tension      Tension      `json:"tension"`
+	Attached     Attached     `json:"attached,omitzero"`
 	Faces        Faces        `json:"faces"`
 	Surroundings Surroundings `json:"surroundings"`
 	Avoid        Avoid        `json:"avoid"`
@@ -37,6 +49,13 @@ type Diaphragm struct {
 type Ring struct {
 	// Radius is the inner, free radius of the sheet, m.
 	Radius float64 `json:"radius"`
+	// HubRadius is the radius of a fixed hub in the middle, m; 0 for none.
+	HubRadius float64 `json:"hubRadius,omitempty"`
+	// OutOfRound is half the difference of the semi-axes of the ring, m: they
+	// are Radius + OutOfRound and Radius - OutOfRound. 0 for a round ring.
+	OutOfRound float64 `json:"outOfRound,omitempty"`
+	// OutOfRoundAngle is the direction of the longer axis, rad.
+	OutOfRoundAngle float64 `json:"outOfRoundAngle,omitempty"`
 	// Clamps is the number of clamps around the rim; 0 means not stated.
 	Clamps int `json:"clamps"`
 	// CTE is the ring's coefficient of thermal expansion, 1/K.
@@ -62,14 +81,65 @@ type Sheet struct {
 	CTE float64 `json:"cte"`
 	// AllowableStress is the largest permitted membrane stress, Pa.
 	AllowableStress float64 `json:"allowableStress"`
+	// LossFactor eta of the material, 0 to 1: the share of its elastic energy
+	// that is lost per radian. It acts on bending only, because tension stores
+	// energy without loss.
+	LossFactor float64 `json:"lossFactor,omitempty"`
 }
 
-// Tension is the specified line tension.
+// Tension is the specified line tension and how it differs around the rim.
 type Tension struct {
-	// Nominal line tension T, N/m, at the temperature of Surroundings.
+	// Nominal line tension T, N/m, at the temperature of Surroundings: the mean
+	// over all directions.
 	Nominal float64 `json:"nominal"`
 	// Tolerance is the permitted relative deviation, 0.1 for ten percent.
 	Tolerance float64 `json:"tolerance"`
+	// Rim says how the edge of the sheet is held; empty means RimClamped.
+	Rim Rim `json:"rim,omitempty"`
+	// Bonded is true where the sheet is glued or welded to the rim, so that it
+	// cannot slide along it; false where it slides while it is tensioned.
+	Bonded bool `json:"bonded,omitempty"`
+	// WeftRatio q is the weft tension of a fabric over its warp tension; 0 or 1
+	// where both are the same. With the mean T the warp tension is 2 T/(1 + q)
+	// and the weft tension 2 T q/(1 + q).
+	WeftRatio float64 `json:"weftRatio,omitempty"`
+	// WarpAngle is the direction of the warp, rad.
+	WarpAngle float64 `json:"warpAngle,omitempty"`
+	// Harmonics of the tension around the rim, at most MostHarmonics.
+	Harmonics []Harmonic `json:"harmonics,omitempty"`
+}
+
+// Rim says how the edge of the sheet is held against bending.
+type Rim string
+
+// The kinds of rim.
+const (
+	RimClamped   Rim = "clamped"   // neither travel nor slope
+	RimSupported Rim = "supported" // no travel, free to turn
+)
+
+// Rims lists every kind of rim in the order in which it is offered.
+func Rims() []Rim { return []Rim{RimClamped, RimSupported} }
+
+// OrClamped is the rim itself, or RimClamped where none is given.
+func (r Rim) OrClamped() Rim {
+	if r == "" {
+		return RimClamped
+	}
+	return r
+}
+
+// Harmonic is one part of uneven tension: the pull of the rim at angle theta is
+//
+//	T [1 + Epsilon cos(Order (theta - Angle))].
+type Harmonic struct {
+	// Order k is the number of tight places around the rim, 2 or more; 1 exists
+	// with a bonded rim only, because a sliding one would be out of balance.
+	Order int `json:"order"`
+	// Epsilon is the relative amplitude, 0 <= Epsilon < 1.
+	Epsilon float64 `json:"epsilon"`
+	// Angle of a tight place, rad.
+	Angle float64 `json:"angle"`
 }
 
 // Faces says what lies on each side of the sheet.
@@ -81,8 +151,18 @@ type Faces struct {
 // Face is one side of the sheet.
 type Face struct {
 	Kind FaceKind `json:"kind"`
+	// Fluid at this face; empty means air. Not used by FaceVacuum.
+	Fluid air.FluidName `json:"fluid,omitempty"`
+	// Wall is the distance of a parallel wall or floor, m; 0 for none. Used by
+	// FaceBaffled only.
+	Wall float64 `json:"wall,omitempty"`
 	// Depth of a cavity behind this face, m; used by FaceCavity only.
 	Depth float64 `json:"depth,omitempty"`
+	// VentArea is the cross-section of a vent or leak of the cavity, m^2, 0 for
+	// none, and VentLength the length of the passage, m, without end
+	// corrections. Used by FaceCavity only.
+	VentArea   float64 `json:"ventArea,omitempty"`
+	VentLength float64 `json:"ventLength,omitempty"`
 }
 
 // FaceKind says how the fluid on one side of the sheet is bounded.

@@ -50,13 +50,6 @@ func newEditor(doc Diaphragm, drafts, units map[string]string, system quantity.S
 	return e
 }
 
-// cloned copies what a document shares with its copies; the list of lines is
-// never nil.
-func cloned(doc Diaphragm) Diaphragm {
-	doc.Avoid.Lines = append([]Line{}, doc.Avoid.Lines...)
-	return doc
-}
-
 func (e *editor) fail(field string, code Code, message string) {
 	e.problems = append(e.problems, Problem{Field: field, Code: code, Message: message, Offset: -1})
 }

@@ -105,8 +105,8 @@ func TestBadTextLosesNothing(t *testing.T) {
 		}
 		for _, text := range texts {
 			before := demoState()
-			before.doc.Faces.Upper = Face{FaceCavity, 0.1}
-			before.doc.Faces.Lower = Face{FaceCavity, 0.1}
+			before.doc.Faces.Upper = Face{Kind: FaceCavity, Depth: 0.1}
+			before.doc.Faces.Lower = Face{Kind: FaceCavity, Depth: 0.1}
 			after := before.apply(set(f.Path, text))
 			if !SameContent(before.doc, after.doc) {
 				t.Errorf("%s: %.30q changed the document", f.Path, text)
@@ -162,7 +162,7 @@ func TestDraftsWaitForOtherFields(t *testing.T) {
 		t.Errorf("%+v", r)
 	}
 	s = s.apply(set("faces.lower.depth", "120"))
-	if s.doc.Faces.Lower != (Face{FaceCavity, 0.12}) || len(s.drafts) > 0 || len(s.problems) > 0 {
+	if s.doc.Faces.Lower != (Face{Kind: FaceCavity, Depth: 0.12}) || len(s.drafts) > 0 || len(s.problems) > 0 {
 		t.Errorf("%+v %v %v", s.doc.Faces, s.drafts, s.problems)
 	}
 	// The depth of a cavity cannot be emptied.

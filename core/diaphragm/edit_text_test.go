@@ -14,7 +14,7 @@ func TestUnitsChangeNoValue(t *testing.T) {
 			continue
 		}
 		s := demoState()
-		s.doc.Faces.Upper, s.doc.Faces.Lower = Face{FaceCavity, 0.123456789}, Face{FaceCavity, 1.0 / 3}
+		s.doc.Faces.Upper, s.doc.Faces.Lower = Face{Kind: FaceCavity, Depth: 0.123456789}, Face{Kind: FaceCavity, Depth: 1.0 / 3}
 		s.doc.Sheet.MeasuredArealDensity, s.doc.Ring.Radius = 0.07, 1.0/3
 		want := *f.number(&s.doc)
 		for _, symbol := range f.Units {

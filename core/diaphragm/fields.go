@@ -43,9 +43,6 @@ type Field struct {
 	shown func(doc *Diaphragm, drafts map[string]string) bool
 }
 
-// MostLines is the largest number of lines to keep clear of.
-const MostLines = 24
-
 // Fields lists every editable field in page order, with the fields of one line
 // to keep clear of, whose number is 0. FieldsOf lists those of a document.
 func Fields() []Field { return fieldList(1) }

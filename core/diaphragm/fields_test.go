@@ -131,7 +131,7 @@ func TestSpecificationLines(t *testing.T) {
 	if _, there := find(list, "depth of the upper cavity"); there {
 		t.Error("the depth of no cavity is listed")
 	}
-	doc.Faces.Upper = Face{FaceCavity, 0.12}
+	doc.Faces.Upper = Face{Kind: FaceCavity, Depth: 0.12}
 	if got, _ := find(SpecificationLines(doc, nil, quantity.SI), "depth of the upper cavity"); got.Text != "120" || got.Unit != "mm" {
 		t.Errorf("%+v", got)
 	}

@@ -52,10 +52,7 @@ func ReadDocument(data []byte) (Diaphragm, error) {
 	case !knownFace(doc.Faces.Lower.Kind):
 		return Diaphragm{}, refuse("faces.lower.kind", CodeUnreadable, what+" names a kind of lower face that is not known: "+shorten(string(doc.Faces.Lower.Kind), "none")+".")
 	}
-	if doc.Avoid.Lines == nil {
-		doc.Avoid.Lines = []Line{}
-	}
-	return doc, nil
+	return normal(doc), nil
 }
 
 // migration changes the members of a document from one schema to the next; it

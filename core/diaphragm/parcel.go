@@ -156,9 +156,7 @@ func withoutNil(p Parcel) Parcel {
 	if p.Peaks == nil {
 		p.Peaks = []ChosenPeak{}
 	}
-	if p.Document.Avoid.Lines == nil {
-		p.Document.Avoid.Lines = []Line{}
-	}
+	p.Document = normal(p.Document)
 	return p
 }
 

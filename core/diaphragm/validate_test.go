@@ -153,7 +153,7 @@ func TestConflictsBetweenFields(t *testing.T) {
 		{"open on both", func(d *Diaphragm) { d.Faces = Faces{Face{Kind: FaceOpen}, Face{Kind: FaceOpen}} }, "", "", ""},
 		{"cavity without depth", func(d *Diaphragm) { d.Faces.Lower.Kind = FaceCavity }, "faces.lower.depth", CodeEmpty,
 			"The lower face is a cavity, whose depth is needed; type the depth of the lower cavity."},
-		{"cavity with depth", func(d *Diaphragm) { d.Faces.Lower = Face{FaceCavity, 0.1} }, "", "", ""},
+		{"cavity with depth", func(d *Diaphragm) { d.Faces.Lower = Face{Kind: FaceCavity, Depth: 0.1} }, "", "", ""},
 		{"no kind", func(d *Diaphragm) { d.Faces.Upper.Kind = "" }, "faces.upper.kind", CodeChoice,
 			"Upper face cannot be nothing; choose open, baffled, cavity or vacuum."},
 		{"unknown kind", func(d *Diaphragm) { d.Faces.Upper.Kind = "water" }, "faces.upper.kind", CodeChoice,

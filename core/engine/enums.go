@@ -3,6 +3,7 @@ package engine
 import (
 	"reflect"
 
+	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
 	"hoopsheet/core/quantity"
@@ -24,6 +25,8 @@ func Enums() map[reflect.Type][]string {
 		reflect.TypeFor[diaphragm.FaceKind]():  words(diaphragm.FaceKinds()),
 		reflect.TypeFor[diaphragm.FieldKind](): words(diaphragm.FieldKinds()),
 		reflect.TypeFor[diaphragm.GroupName](): words(diaphragm.GroupNames()),
+		reflect.TypeFor[diaphragm.Rim]():       words(diaphragm.Rims()),
+		reflect.TypeFor[air.FluidName]():       words(air.FluidNames()),
 		reflect.TypeFor[response.ShapeKind]():  words(response.ShapeKinds()),
 		reflect.TypeFor[tap.Verdict]():         words(tap.Verdicts()),
 	}

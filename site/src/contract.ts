@@ -47,6 +47,10 @@ export type FaceKind = 'open' | 'baffled' | 'cavity' | 'vacuum';
  */
 export type FieldKind = 'text' | 'long-text' | 'quantity' | 'count' | 'choice' | 'material';
 /**
+ * FluidName names a fluid that lies at a face of a diaphragm.
+ */
+export type FluidName = 'air' | 'nitrogen' | 'helium' | 'sulfur-hexafluoride' | 'water';
+/**
  * GroupName names the panel part in which a field stands.
  */
 export type GroupName =
@@ -59,6 +63,10 @@ export type Kind = 'ringing' | 'steady' | 'unclear';
  * Numbers is a large array of a result. In JSON it is an array of numbers; in the worker it crosses as a transferred Float32Array and the JSON holds [].
  */
 export type Numbers = Float32Array;
+/**
+ * Rim says how the edge of the sheet is held against bending.
+ */
+export type Rim = 'clamped' | 'supported';
 /**
  * ShapeKind names a form of initial displacement or velocity.
  */
@@ -89,6 +97,19 @@ export interface About {
 export interface ArchiveFile {
   name: string;
   file: Blob;
+}
+/**
+ * Attached is what the sheet carries beside its own mass.
+ */
+export interface Attached {
+  /**
+   * Patches, at most MostPatches.
+   */
+  patches?: Patch[];
+  /**
+   * Strips, at most MostStrips.
+   */
+  strips?: Strip[];
 }
 /**
  * Avoid lists the frequencies to keep clear of.
@@ -245,6 +266,7 @@ export interface Diaphragm {
   ring: Ring;
   sheet: Sheet;
   tension: Tension;
+  attached?: Attached;
   faces: Faces;
   surroundings: Surroundings;
   avoid: Avoid;
@@ -347,9 +369,22 @@ export interface Error {
 export interface Face {
   kind: FaceKind;
   /**
+   * Fluid at this face; empty means air. Not used by FaceVacuum.
+   */
+  fluid?: FluidName;
+  /**
+   * Wall is the distance of a parallel wall or floor, m; 0 for none. Used by FaceBaffled only.
+   */
+  wall?: number;
+  /**
    * Depth of a cavity behind this face, m; used by FaceCavity only.
    */
   depth?: number;
+  /**
+   * VentArea is the cross-section of a vent or leak of the cavity, m^2, 0 for none, and VentLength the length of the passage, m, without end corrections. Used by FaceCavity only.
+   */
+  ventArea?: number;
+  ventLength?: number;
 }
 /**
  * Faces says what lies on each side of the sheet.
@@ -440,6 +475,23 @@ export interface HandedPeak {
   uncertainty: number;
   m: number;
   n: number;
+}
+/**
+ * Harmonic is one part of uneven tension: the pull of the rim at angle theta is T [1 + Epsilon cos(Order (theta - Angle))].
+ */
+export interface Harmonic {
+  /**
+   * Order k is the number of tight places around the rim, 2 or more; 1 exists with a bonded rim only, because a sliding one would be out of balance.
+   */
+  order: number;
+  /**
+   * Epsilon is the relative amplitude, 0 <= Epsilon < 1.
+   */
+  epsilon: number;
+  /**
+   * Angle of a tight place, rad.
+   */
+  angle: number;
 }
 /**
  * History is the displacement of one point against time.
@@ -690,6 +742,29 @@ export interface OpenedRecord {
   stamp: number;
   unkept: boolean;
   revisions: RevisionInfo[];
+}
+/**
+ * Patch is a round thing on the sheet: a sensor, a target, a repair.
+ */
+export interface Patch {
+  name: string;
+  /**
+   * Radius is the distance of its middle from the centre in units of the ring radius, and Angle its direction, rad.
+   */
+  radius: number;
+  angle: number;
+  /**
+   * Size is the patch's own radius, m.
+   */
+  size: number;
+  /**
+   * Mass that it adds, kg.
+   */
+  mass: number;
+  /**
+   * Rigid is true for a stiff patch, false for one that bends with the sheet.
+   */
+  rigid: boolean;
 }
 /**
  * Peak is one measured ringing frequency.
@@ -1055,6 +1130,18 @@ export interface Ring {
    */
   radius: number;
   /**
+   * HubRadius is the radius of a fixed hub in the middle, m; 0 for none.
+   */
+  hubRadius?: number;
+  /**
+   * OutOfRound is half the difference of the semi-axes of the ring, m: they are Radius + OutOfRound and Radius - OutOfRound. 0 for a round ring.
+   */
+  outOfRound?: number;
+  /**
+   * OutOfRoundAngle is the direction of the longer axis, rad.
+   */
+  outOfRoundAngle?: number;
+  /**
    * Clamps is the number of clamps around the rim; 0 means not stated.
    */
   clamps: number;
@@ -1296,6 +1383,10 @@ export interface Sheet {
    * AllowableStress is the largest permitted membrane stress, Pa.
    */
   allowableStress: number;
+  /**
+   * LossFactor eta of the material, 0 to 1: the share of its elastic energy that is lost per radian. It acts on bending only, because tension stores energy without loss.
+   */
+  lossFactor?: number;
 }
 /**
  * SpecificationRow is one specified quantity, formatted for reading.
@@ -1306,6 +1397,25 @@ export interface SpecificationRow {
   name: string;
   text: string;
   unit: string;
+}
+/**
+ * Strip is a straight strip across the sheet along a chord: a seam, a double overlap, a tape.
+ */
+export interface Strip {
+  name: string;
+  /**
+   * Offset is the distance of its middle line from the centre in units of the ring radius, and Angle the direction in which it lies off the centre, rad: at right angles to the strip, also where Offset is 0.
+   */
+  offset: number;
+  angle: number;
+  /**
+   * Width, m.
+   */
+  width: number;
+  /**
+   * Mass that the whole strip adds within the ring, kg.
+   */
+  mass: number;
 }
 /**
  * Surroundings is the state of the air and the range of service.
@@ -1463,17 +1573,37 @@ export interface TeamResult {
   problems: Problem[];
 }
 /**
- * Tension is the specified line tension.
+ * Tension is the specified line tension and how it differs around the rim.
  */
 export interface Tension {
   /**
-   * Nominal line tension T, N/m, at the temperature of Surroundings.
+   * Nominal line tension T, N/m, at the temperature of Surroundings: the mean over all directions.
    */
   nominal: number;
   /**
    * Tolerance is the permitted relative deviation, 0.1 for ten percent.
    */
   tolerance: number;
+  /**
+   * Rim says how the edge of the sheet is held; empty means RimClamped.
+   */
+  rim?: Rim;
+  /**
+   * Bonded is true where the sheet is glued or welded to the rim, so that it cannot slide along it; false where it slides while it is tensioned.
+   */
+  bonded?: boolean;
+  /**
+   * WeftRatio q is the weft tension of a fabric over its warp tension; 0 or 1 where both are the same. With the mean T the warp tension is 2 T/(1 + q) and the weft tension 2 T q/(1 + q).
+   */
+  weftRatio?: number;
+  /**
+   * WarpAngle is the direction of the warp, rad.
+   */
+  warpAngle?: number;
+  /**
+   * Harmonics of the tension around the rim, at most MostHarmonics.
+   */
+  harmonics?: Harmonic[];
 }
 /**
  * Travel is the largest displacement found, with its place and time.
