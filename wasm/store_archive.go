@@ -314,6 +314,7 @@ func (in *intake) takeSettings(from diaphragm.ArchiveSettings) error {
 	if settings == firstSettings || !slices.Contains(quantity.Systems(), settings.Units) {
 		return nil
 	}
+	settings.Chosen = true
 	return in.t.putJSON(inSettings, settingsKey, settings)
 }
 

@@ -101,7 +101,7 @@ func TestExportImportElsewhere(t *testing.T) {
 	if !reflect.DeepEqual(gotList, wantList) {
 		t.Errorf("the list came over as\n%+v, want\n%+v", gotList, wantList)
 	}
-	if got := ask[engine.Settings](t, to, "settings.get", struct{}{}); got.By != "R. Field" || got.Units != "inch-pound" {
+	if got := ask[engine.Settings](t, to, "settings.get", struct{}{}); !got.Chosen || got.By != "R. Field" || got.Units != "inch-pound" {
 		t.Errorf("the settings came over as %+v", got)
 	}
 

@@ -33,6 +33,7 @@ type base struct {
 	// one thread and no preemption: between two waits nobody else changes it.
 	attempt *opening
 
+	endings *endings
 	blocked js.Func // listener of "blocked"; this is the request
 	gone    js.Func // listener of "close" and "versionchange"; this is the database
 }
@@ -44,14 +45,21 @@ type opening struct {
 	request js.Value
 	// blocked is closed when another connection is in the way.
 	blocked chan struct{}
-	// done is closed when db or err is set.
-	done chan struct{}
-	db   *idb.Database
-	err  error
+	// done is closed when connection or err is set.
+	done       chan struct{}
+	connection *connection
+	err        error
+}
+
+// connection is an open database, as go-indexeddb and as JavaScript has it.
+type connection struct {
+	db      *idb.Database
+	raw     js.Value
+	endings *endings
 }
 
 func newBase(name string, steps []step) *base {
-	b := &base{name: name, steps: steps}
+	b := &base{name: name, steps: steps, endings: newEndings()}
 	b.blocked = js.FuncOf(func(this js.Value, _ []js.Value) any {
 		if a := b.attempt; a != nil && a.request.Equal(this) {
 			select {
@@ -73,7 +81,7 @@ func newBase(name string, steps []step) *base {
 }
 
 // database returns the open connection.
-func (b *base) database() (*idb.Database, error) {
+func (b *base) database() (*connection, error) {
 	a := b.attempt
 	if a == nil {
 		var err error
@@ -89,7 +97,7 @@ func (b *base) database() (*idb.Database, error) {
 			if a.err != nil && b.attempt == a {
 				b.attempt = nil // the next call tries anew
 			}
-			return a.db, a.err
+			return a.connection, a.err
 		case <-blocked:
 			limit, blocked, because = time.After(blockedLimit), nil, errBlocked
 		case <-limit:
@@ -107,7 +115,7 @@ func (b *base) begin() (*opening, error) {
 	}
 	a := &opening{request: request, blocked: make(chan struct{}), done: make(chan struct{})}
 	request.Call("addEventListener", "blocked", b.blocked)
-	factory, err := idb.WrapFactory(alreadyOpening(request))
+	factory, err := idb.WrapFactory(js.ValueOf(map[string]any{"open": returning(request)}))
 	if err != nil {
 		return nil, err
 	}
@@ -132,14 +140,14 @@ func (b *base) begin() (*opening, error) {
 		case err != nil:
 			a.err = err
 		default:
-			jsDB := request.Get("result")
-			jsDB.Call("addEventListener", "versionchange", b.gone)
-			jsDB.Call("addEventListener", "close", b.gone)
-			if a.err = b.fill(db); a.err != nil {
+			c := &connection{db: db, raw: request.Get("result"), endings: b.endings}
+			c.raw.Call("addEventListener", "versionchange", b.gone)
+			c.raw.Call("addEventListener", "close", b.gone)
+			if a.err = b.fill(c); a.err != nil {
 				_ = db.Close() // so that it is in nobody's way
 				return
 			}
-			a.db = db
+			a.connection = c
 		}
 	}()
 	return a, nil
@@ -161,7 +169,7 @@ func (b *base) upgrade(db *idb.Database, from uint) (err error) {
 }
 
 // fill runs the fill parts of the steps that have not been filled.
-func (b *base) fill(db *idb.Database) error {
+func (b *base) fill(c *connection) error {
 	pending := false
 	for _, s := range b.steps {
 		pending = pending || s.fill != nil
@@ -169,11 +177,11 @@ func (b *base) fill(db *idb.Database) error {
 	if !pending {
 		return nil
 	}
-	names, err := db.ObjectStoreNames()
+	names, err := c.db.ObjectStoreNames()
 	if err != nil {
 		return err
 	}
-	return runOn(db, true, names, func(t *txn) error {
+	return runOn(c, true, names, func(t *txn) error {
 		filled := 0
 		if value, err := t.get(inState, "filled"); err != nil {
 			return err
@@ -208,35 +216,26 @@ func openRequest(name string, version int) (request js.Value, err error) {
 	return factory.Call("open", name, version), nil
 }
 
-// alreadyOpening is an object whose method "open" returns the given request.
-func alreadyOpening(request js.Value) js.Value {
-	object := js.Global().Get("Object")
-	itself := object.Get("prototype").Get("valueOf").Call("bind", request)
-	factory := object.New()
-	factory.Set("open", itself)
-	return factory
-}
-
 // run does work in one transaction over the named object stores, on a fresh
 // connection if the old one turns out to be lost. The work may therefore be
 // done twice, the first time without effect.
 func (b *base) run(write bool, names []string, work func(*txn) error) error {
 	for again := false; ; again = true {
-		db, err := b.database()
+		c, err := b.database()
 		if err != nil {
 			if again && connectionLost(err) {
 				return errLost
 			}
 			return err
 		}
-		err = runOn(db, write, names, work)
+		err = runOn(c, write, names, work)
 		var own *engine.Error
 		if err == nil || errors.As(err, &own) || !connectionLost(err) || again {
 			return err
 		}
-		if b.attempt != nil && b.attempt.db == db {
+		if b.attempt != nil && b.attempt.connection == c {
 			b.attempt = nil
-			_ = db.Close() // so that it is in nobody's way
+			_ = c.db.Close() // so that it is in nobody's way
 		}
 	}
 }

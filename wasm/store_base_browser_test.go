@@ -46,7 +46,7 @@ func TestLostConnectionIsMadeAgain(t *testing.T) {
 	s := freshStore(t)
 	o := createDemo(t, s, "")
 	closed := s.base.attempt
-	if err := closed.db.Close(); err != nil {
+	if err := closed.connection.db.Close(); err != nil {
 		t.Fatal(err)
 	}
 	ask[engine.Saved](t, s, "records.save", saveOf(o))
@@ -71,7 +71,7 @@ func TestDeletedDatabase(t *testing.T) {
 func TestBlockedUpgrade(t *testing.T) {
 	s := freshStore(t)
 	createDemo(t, s, "Old")
-	if err := s.base.attempt.db.Close(); err != nil {
+	if err := s.base.attempt.connection.db.Close(); err != nil {
 		t.Fatal(err)
 	}
 	old := rawOpen(t, s.base.name, len(schema))
@@ -190,6 +190,23 @@ func TestErrorRollsBack(t *testing.T) {
 	})
 	if !errors.Is(err, errAbsent) {
 		t.Errorf("the error came out as %v", err)
+	}
+	ask[engine.OpenedRecord](t, s, "records.open", ref(id))
+}
+
+// A transaction that ends without an error of its own, but not by completing,
+// is no success.
+func TestAbortIsAnError(t *testing.T) {
+	s := freshStore(t)
+	id := createDemo(t, s, "").Document.ID
+	err := s.base.write([]string{inRecords}, func(x *txn) error {
+		if err := x.remove(inRecords, id); err != nil {
+			return err
+		}
+		return x.t.Abort()
+	})
+	if err == nil {
+		t.Error("an aborted transaction counts as completed")
 	}
 	ask[engine.OpenedRecord](t, s, "records.open", ref(id))
 }

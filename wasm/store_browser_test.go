@@ -358,7 +358,7 @@ func TestSettings(t *testing.T) {
 	refused(t, s, engine.CodeRequest, "settings.put", engine.Settings{Units: "furlong"})
 	settings.By, settings.Units, settings.LinkAddress = "R. Field", "inch-pound", " https://example.org/tool/handover.html "
 	ask[engine.Done](t, s, "settings.put", settings)
-	settings.LinkAddress = "https://example.org/tool/handover.html"
+	settings.Chosen, settings.LinkAddress = true, "https://example.org/tool/handover.html"
 	if got := ask[engine.Settings](t, s, "settings.get", struct{}{}); got != settings {
 		t.Errorf("settings %+v, want %+v", got, settings)
 	}

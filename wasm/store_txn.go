@@ -20,21 +20,11 @@ type txn struct{ t *idb.Transaction }
 
 // runOn does work in one transaction and returns when it has completed. If the
 // work returns an error or panics, the transaction is rolled back.
-func runOn(db *idb.Database, write bool, names []string, work func(*txn) error) error {
-	options := idb.TransactionOptions{Mode: idb.TransactionReadOnly}
-	if write {
-		options = idb.TransactionOptions{Mode: idb.TransactionReadWrite, Durability: idb.DurabilityStrict}
-	}
-	t, err := db.TransactionWithOptions(options, names[0], names[1:]...)
+func runOn(c *connection, write bool, names []string, work func(*txn) error) error {
+	t, finished, err := c.transaction(write, names)
 	if err != nil {
 		return err
 	}
-	// Await must listen before the transaction can finish, else it would wait
-	// for ever; and it must have a context without an end, since it may not
-	// answer at all when its context ends.
-	finished := make(chan error, 1)
-	go func() { finished <- t.Await(context.Background()) }()
-
 	type outcome struct {
 		err   error
 		fault any
@@ -48,16 +38,15 @@ func runOn(db *idb.Database, write bool, names []string, work func(*txn) error) 
 			}
 			done <- o
 		}()
-		if o.err = work(&txn{t}); o.err != nil {
-			// Fails where the error has ended the transaction already.
-			if t.Abort() == nil {
-				<-finished
-			} else if cause := t.Err(); is(o.err, "AbortError") && cause != nil {
-				o.err = cause // the request only suffered from it
-			}
+		if o.err = work(&txn{t}); o.err == nil {
+			o.err = <-finished
 			return
 		}
-		o.err = <-finished
+		// Abort fails where the error has ended the transaction already.
+		_ = t.Abort()
+		if cause := <-finished; is(o.err, "AbortError") && cause != nil {
+			o.err = cause // the request only suffered from it
+		}
 	}()
 	select {
 	case o := <-done:
@@ -70,6 +59,86 @@ func runOn(db *idb.Database, write bool, names []string, work func(*txn) error) 
 		_ = t.Abort()
 		return errSlow
 	}
+}
+
+// transaction begins a transaction. finished gives nil when it has completed,
+// and why when it was aborted.
+//
+// It is begun and listened to here, because go-indexeddb takes one that was
+// aborted without an error for completed, and waits for ever for one that has
+// ended before it listens.
+func (c *connection) transaction(write bool, names []string) (_ *idb.Transaction, finished <-chan error, err error) {
+	defer func() {
+		fault := recover()
+		if thrown, ok := fault.(js.Error); ok {
+			err = thrown
+		} else if fault != nil {
+			panic(fault)
+		}
+	}()
+	list := make([]any, len(names))
+	for i, name := range names {
+		list[i] = name
+	}
+	arguments := []any{list, "readonly"}
+	if write {
+		arguments = []any{list, "readwrite", map[string]any{"durability": "strict"}}
+	}
+	raw := c.raw.Call("transaction", arguments...)
+	finished = c.endings.of(raw)
+	// Let go-indexeddb find the transaction when it asks for one.
+	c.raw.Set("transaction", returning(raw))
+	t, err := c.db.Transaction(idb.TransactionReadOnly, names[0])
+	c.raw.Delete("transaction")
+	return t, finished, err
+}
+
+// returning is a JavaScript function that returns the given object.
+func returning(object js.Value) js.Value {
+	return js.Global().Get("Object").Get("prototype").Get("valueOf").Call("bind", object)
+}
+
+// endings tells how transactions ended, with one listener for all of them.
+type endings struct {
+	listener js.Func
+	waiting  map[int]chan<- error
+	last     int
+}
+
+// numbered is the property by which a transaction is known in waiting.
+const numbered = "hoopsheetNumber"
+
+func newEndings() *endings {
+	e := &endings{waiting: map[int]chan<- error{}}
+	e.listener = js.FuncOf(func(transaction js.Value, args []js.Value) any {
+		number := transaction.Get(numbered).Int()
+		e.waiting[number] <- ending(args[0].Get("type").String(), transaction.Get("error"))
+		delete(e.waiting, number)
+		return nil
+	})
+	return e
+}
+
+// of returns a channel that gets how the transaction ends.
+func (e *endings) of(transaction js.Value) <-chan error {
+	e.last++
+	ended := make(chan error, 1)
+	e.waiting[e.last] = ended
+	transaction.Set(numbered, e.last)
+	transaction.Call("addEventListener", "complete", e.listener)
+	transaction.Call("addEventListener", "abort", e.listener)
+	return ended
+}
+
+// ending is the error that an event of the end of a transaction stands for.
+func ending(event string, fault js.Value) error {
+	switch {
+	case event == "complete":
+		return nil
+	case fault.Truthy():
+		return js.Error{Value: fault}
+	}
+	return errAborted
 }
 
 // get reads one value; undefined where there is none.
@@ -185,6 +254,9 @@ func collect(request *idb.CursorWithValueRequest) ([]entry, error) {
 	})
 	return list, err
 }
+
+// errAborted is the end of a transaction that was aborted without a cause.
+var errAborted = errors.New("the transaction was aborted")
 
 // errAbsent says that there is no value under a key.
 var errAbsent = errors.New("there is no such value")

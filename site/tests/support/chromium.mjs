@@ -5,7 +5,9 @@ import path from 'node:path';
 
 import { chromium } from 'playwright-core';
 
-const flags = [
+/** What every Chromium here is started with. */
+/** What every start of Chromium gets. */
+export const flags = [
   '--headless', '--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run',
   '--disable-background-networking', '--disable-component-update', '--disable-sync',
 ];
