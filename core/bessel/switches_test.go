@@ -231,8 +231,9 @@ func TestDebyeDownAgainstOthers(t *testing.T) {
 				default:
 					ah, al, bh, bl = realBackward(mu, n, x)
 				}
-				within(t, "Debye, recurrence", nu, x, ch+cl, ah+al, twoMethods*(ah+al))
-				within(t, "Debye, recurrence, next order", nu+1, x, dh+dl, bh+bl, twoMethods*(bh+bl))
+				const tiny = 2 * 0x1p-1074 // the end of the range is reached
+				within(t, "Debye, recurrence", nu, x, ch+cl, ah+al, twoMethods*(ah+al)+tiny)
+				within(t, "Debye, recurrence, next order", nu+1, x, dh+dl, bh+bl, twoMethods*(bh+bl)+tiny)
 			}
 		}
 	}
