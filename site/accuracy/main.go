@@ -8,8 +8,10 @@ import (
 	"encoding/json"
 	"flag"
 	"fmt"
+	"math"
 	"os"
 	"path/filepath"
+	"slices"
 
 	"hoopsheet/core/bessel/accuracy"
 )
@@ -30,7 +32,13 @@ func run(tables, out string) error {
 	if err != nil {
 		return err
 	}
-	text, err := json.MarshalIndent(regions, "", "  ")
+	shown := slices.Clone(regions)
+	for i := range shown {
+		// Three decimals: more only makes the file change without need.
+		shown[i].MeanULP = math.Round(shown[i].MeanULP*1000) / 1000
+		shown[i].MaxULP = math.Round(shown[i].MaxULP*1000) / 1000
+	}
+	text, err := json.MarshalIndent(shown, "", "  ")
 	if err != nil {
 		return err
 	}
