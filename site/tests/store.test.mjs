@@ -11,7 +11,7 @@ import { setTimeout as delay } from 'node:timers/promises';
 import { chromium } from 'playwright-core';
 
 import { executablePath, flags, launch, newProfile, removeProfile } from './support/chromium.mjs';
-import { beforeWorker, enginePage, serveSite } from './support/site.mjs';
+import { beforeWorker, enginePage, serveSite } from './support/engine-page.mjs';
 
 let server, browser, context;
 
@@ -290,7 +290,7 @@ async function keysOfRecords() {
 }
 
 test('the single file keeps records on the page and finds them again', async () => {
-  const { siteDir } = await import('./support/site.mjs');
+  const { siteDir } = await import('./support/engine-page.mjs');
   const file = `file://${path.join(siteDir, 'hoopsheet-single.html')}`;
   assert.ok((await readFile(new URL(file))).length > 0);
   const workers = [];
