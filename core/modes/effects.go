@@ -96,20 +96,21 @@ func Solve(real Real, request Request) (*Solution, error) {
 		s.Notes = append(s.Notes, NoteThinEdge)
 	}
 	beyond := false
+	var edge []candidate // the lowest mode left out of each order
 	for m := 0; m <= request.MaxM; m++ {
 		o := plan.order(m, request.MaxN+1)
 		s.orders = append(s.orders, o)
-		o.solveStill(request.MaxN + 1)
+		starts := o.solve(request.MaxN + 1)
 		for n := 1; n <= request.MaxN; n++ {
-			mode := plan.mode(o, n)
+			mode := plan.mode(o, n, starts[n-1])
 			beyond = beyond || mode.BeyondSound
 			s.Modes = append(s.Modes, mode)
 		}
-		s.Complete = math.Min(s.Complete, frequencyOf(o.values[request.MaxN]))
+		edge = append(edge, candidate{o, starts[request.MaxN]})
 	}
 	next := plan.order(request.MaxM+1, 1)
-	next.solveStill(1)
-	s.Complete = math.Min(s.Complete, frequencyOf(next.values[0]))
+	edge = append(edge, candidate{next, next.solve(1)[0]})
+	s.Complete = plan.complete(edge)
 	if beyond {
 		s.Notes = append(s.Notes, NoteBeyondSound)
 	}
@@ -123,7 +124,30 @@ func Solve(real Real, request Request) (*Solution, error) {
 	return s, nil
 }
 
-func frequencyOf(theta float64) float64 { return 1 / (2 * math.Pi * math.Sqrt(theta)) }
+// candidate is a mode that is not among those asked for.
+type candidate struct {
+	order *wetOrder
+	mode  wetMode
+}
+
+// complete returns the lowest frequency of the modes left out, Hz.
+func (p *wetPlan) complete(left []candidate) float64 {
+	lowest := math.Inf(1)
+	slices.SortFunc(left, func(a, b candidate) int { return cmp.Compare(real(b.mode.theta), real(a.mode.theta)) })
+	for i, c := range left {
+		// Sound moves a mode of an open or baffled face by some percent, so the
+		// next two above the lowest in still fluid are looked at as well.
+		if i > 2 {
+			break
+		}
+		mode := c.mode
+		if p.soundNumber(real(mode.omega())) <= MaxSoundNumber && c.order.moving() {
+			mode = c.order.refine(mode)
+		}
+		lowest = math.Min(lowest, real(mode.omega())/(2*math.Pi))
+	}
+	return lowest
+}
 
 // checkReal says in a sentence what is wrong with a diaphragm.
 func checkReal(r Real, e Effects) error {
@@ -144,6 +168,8 @@ func checkReal(r Real, e Effects) error {
 		return errors.New("the loss factor of the sheet must be from 0 to 1")
 	case !(r.Remainder >= 0 && r.Remainder < 1):
 		return errors.New("the remaining damping ratio must be at least 0 and below 1")
+	case r.Upper.Kind == diaphragm.FaceCavity && r.Lower.Kind == diaphragm.FaceCavity:
+		return errors.New("only one face may have a cavity behind it")
 	case (r.Upper.Kind == diaphragm.FaceOpen) != (r.Lower.Kind == diaphragm.FaceOpen):
 		return errors.New("both faces must be open or neither, because the fluid passes around the rim")
 	case r.Upper.Kind == diaphragm.FaceOpen && (r.Upper.Density != r.Lower.Density || r.Upper.SoundSpeed != r.Lower.SoundSpeed):
@@ -174,10 +200,10 @@ func checkFace(f Face, name string) error {
 		return errors.New("the kinematic viscosity at the " + name + " face must be zero or a positive number of m^2/s")
 	case f.Kind == diaphragm.FaceCavity && !positive(f.Depth):
 		return errors.New("the depth of the cavity at the " + name + " face must be a positive number of metres")
-	case f.Kind == diaphragm.FaceCavity:
-		return errors.New("a cavity at the " + name + " face is not among the effects that can be computed")
 	case f.WallDistance != 0:
 		return errors.New("a wall at the " + name + " face is not among the effects that can be computed")
+	case f.Kind == diaphragm.FaceCavity && f.Vent != nil && !(f.Vent.Area >= 0 && f.Vent.Length >= 0 && f.Vent.Resistance >= 0):
+		return errors.New("area, length and resistance of the vent at the " + name + " face must be zero or positive")
 	case !(f.WallDistance >= 0):
 		return errors.New("the distance of the wall from the " + name + " face must be zero or a positive number of metres")
 	}

@@ -21,10 +21,17 @@ type RealMode struct {
 	Ideal float64
 	// Damping ratios by cause, and what they come to.
 	Damping Damping
+	// FilmShare is the share of the sheet in the strain energy of sheet and
+	// cavity: by how many percent the square of the frequency follows one percent
+	// of tension (stiffness alike). It is 1 without a cavity.
+	FilmShare float64
 	// BendingShare is the share of bending in the strain energy.
 	BendingShare float64
 	// SheetMass and FluidMass are the modal masses, kg, for a shape of largest
-	// value one: kinetic energy is half of their sum times velocity squared.
+	// value one. A force F exp(-i omega t) on the mode moves it by F over their
+	// sum times (omega_n^2 - omega^2). In still fluid half of the sum times
+	// velocity squared is the kinetic energy; with a cavity or sound the second
+	// takes in their stored energy.
 	SheetMass, FluidMass float64
 	// SoundNumber is the largest k0 a = omega a/c0 of the faces.
 	SoundNumber float64
@@ -37,10 +44,9 @@ type RealMode struct {
 	coef  []float64 // of disc.HeldEdge shapes on the effective radius
 }
 
-// mode finishes mode n of an order solved in still fluid.
-func (p *wetPlan) mode(o *wetOrder, n int) RealMode {
+// mode finishes mode n of an order from what wetOrder.solve gave.
+func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 	r := p.real
-	w := o.still(n - 1)
 	mode := RealMode{M: o.m, N: n, inner: p.radius / r.Radius}
 	if r.Tension > 0 {
 		mode.Ideal = bessel.ZeroJ(float64(o.m), n) * math.Sqrt(r.Tension/r.ArealDensity) / (2 * math.Pi * r.Radius)
@@ -56,6 +62,12 @@ func (p *wetPlan) mode(o *wetOrder, n int) RealMode {
 	mode.omega = w.omega()
 	omega := real(mode.omega)
 	mode.Frequency = omega / (2 * math.Pi)
+	mode.FilmShare = 1
+	if o.cavity != nil {
+		// With the strain energy scaled by s the functional is
+		// theta = y'C(theta)y/s, so d ln omega^2/d ln s = 1/(1 - slope).
+		mode.FilmShare = real(1 / (1 - w.slope))
+	}
 	mode.SoundNumber = p.soundNumber(omega)
 	mode.Error = mode.Frequency * (o.truncation(w, 4)/2 + w.change)
 	mode.coef = o.realPart(w)
@@ -89,7 +101,9 @@ func (p *wetPlan) weigh(o *wetOrder, w wetMode, mode *RealMode) {
 	}
 	square := bilinear(o.tables.sheetMass(), n, mode.coef)
 	mode.SheetMass = area * o.sheet * square
-	// With y'y = 1 the whole mass is theta; scaled by the sheet's share.
+	// With y'y = 1 the mass in the denominator of the response near the mode,
+	// -d(1 - omega^2 C)/d omega^2, is theta (1 - slope); theta alone if the fluid
+	// is still.
 	y := make([]float64, len(w.y))
 	for i, v := range w.y {
 		y[i] = real(v)
@@ -97,7 +111,7 @@ func (p *wetPlan) weigh(o *wetOrder, w wetMode, mode *RealMode) {
 	q := make([]float64, n)
 	o.strain.shapes(q, y)
 	sheetShare := o.sheet * bilinear(o.tables.sheetMass(), n, q)
-	mode.FluidMass = mode.SheetMass * math.Max(0, real(w.theta)/sheetShare-1)
+	mode.FluidMass = mode.SheetMass * math.Max(0, real(w.theta*(1-w.slope))/sheetShare-1)
 	mode.BendingShare = o.strain.bendingEnergy(y) / dot(y, y)
 	if p.thin {
 		// omega depends on D also through the radius a (1 - e), e = sqrt(D/T)/a:
@@ -126,6 +140,24 @@ func bilinear(x []float64, n int, q []float64) float64 {
 		s += v * dot(x[i*n:(i+1)*n], q)
 	}
 	return s
+}
+
+// Dominated names what a mode of a diaphragm with a cavity is governed by.
+type Dominated string
+
+// The names.
+const (
+	FilmDominated   Dominated = "film"
+	CavityDominated Dominated = "cavity"
+)
+
+// Dominated tells whether the frequency follows the tension of the sheet (more
+// than half of the strain energy is the sheet's) or the cavity.
+func (m *RealMode) Dominated() Dominated {
+	if m.FilmShare > 0.5 {
+		return FilmDominated
+	}
+	return CavityDominated
 }
 
 // Radial returns the shape at radius r (0 to 1, of the ring's radius), to be

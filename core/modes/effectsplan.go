@@ -84,7 +84,7 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 		nu, rim = 1, RimSupported // bending of the inner part alone
 	}
 	o := &wetOrder{
-		m: m, tables: tablesOf(m, n), radius: a, sheet: r.ArealDensity * a * a,
+		m: m, tables: tablesOf(m, n), radius: a, sheet: r.ArealDensity * a * a, sound: 1,
 		strain: newStrain(m, n, r.Tension, r.Stiffness/(a*a), nu, rim),
 	}
 	open := false
@@ -101,6 +101,8 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 				open = true
 				o.faces = append(o.faces, &openFaces{tables: o.tables, density: f.Density * a * a * a, reach: reach})
 			}
+		case diaphragm.FaceCavity:
+			o.addCavity(f)
 		}
 	}
 	return o

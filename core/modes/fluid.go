@@ -14,8 +14,9 @@ type Face struct {
 	Density, SoundSpeed float64
 	// Viscosity is the kinematic viscosity, m^2/s; 0 leaves viscous damping out.
 	Viscosity float64
-	// Depth of a cavity, m.
+	// Depth of a cavity, m, and its vent or leak, if any.
 	Depth float64
+	Vent  *Vent
 	// WallDistance of a rigid wall parallel to a baffled face, m; 0 for none.
 	WallDistance float64
 }

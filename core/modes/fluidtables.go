@@ -19,7 +19,8 @@ type fluidTables struct {
 	coupling     []float64 // u_j against pressure shape q: row q, column j
 	soundBaffled *soundSeries
 	soundOpen    *soundSeries
-	grid         []float64 // shapes at gridRadii, row by radius
+	grid         []float64 // see gridShapes
+	cavity       *cavityTable
 }
 
 var fluidCache struct {

@@ -1,6 +1,7 @@
 package modes
 
 import (
+	"math"
 	"math/cmplx"
 )
 
@@ -13,6 +14,10 @@ type wetOrder struct {
 	sheet  float64 // sigma a^2
 	radius float64 // effective, m
 	faces  []fluidFace
+	cavity *cavityFace // one of faces, or nil
+	// sound scales the sound number of open and baffled faces from 0, still
+	// fluid, to 1.
+	sound  float64
 	static []float64 // size by size
 	values []float64 // theta in still fluid, largest first
 	// vectors, row by mode, in still fluid.
@@ -23,7 +28,27 @@ type wetOrder struct {
 
 type wetWork struct {
 	re, im, cre, cim []float64
-	c, before, f     []complex128
+	f                []complex128
+	built            [3][]complex128 // the last matrices, newest first
+	at               [3]complex128   // and the theta each belongs to
+	count            int
+	slope            complex128 // assumed while there is one matrix only
+}
+
+func (o *wetOrder) space() *wetWork {
+	if o.work == nil {
+		n, size := o.strain.n, o.strain.size
+		w := &wetWork{
+			re: make([]float64, n*n), im: make([]float64, n*n),
+			cre: make([]float64, size*size), cim: make([]float64, size*size),
+			f: make([]complex128, size*size),
+		}
+		for i := range w.built {
+			w.built[i] = make([]complex128, size*size)
+		}
+		o.work = w
+	}
+	return o.work
 }
 
 // solveStill solves the order in still fluid for count modes.
@@ -40,10 +65,28 @@ func (o *wetOrder) solveStill(count int) {
 	o.values = newSymmetric(size).largest(o.static, count, o.vectors)
 }
 
-// moving tells whether any face depends on frequency.
+// solve returns the count lowest modes of the order, lowest first, with sound in
+// a cavity but not yet on other faces.
+func (o *wetOrder) solve(count int) []wetMode {
+	if o.cavity != nil {
+		o.solveStill(1)
+		size := o.strain.size
+		search := &cavitySearch{o: o, re: make([]float64, o.strain.n*o.strain.n), im: make([]float64, o.strain.n*o.strain.n), c: make([]float64, size*size)}
+		return search.find(count)
+	}
+	o.solveStill(count)
+	modes := make([]wetMode, count)
+	for k := range modes {
+		modes[k] = o.still(k)
+	}
+	return modes
+}
+
+// moving tells whether anything is left to refine after solve: sound on a face
+// that is not a cavity, or a vent with resistance.
 func (o *wetOrder) moving() bool {
 	for _, f := range o.faces {
-		if f.moving() {
+		if f.moving() && (f != fluidFace(o.cavity) || o.cavity.ventResistance > 0) {
 			return true
 		}
 	}
@@ -52,22 +95,18 @@ func (o *wetOrder) moving() bool {
 
 // at writes the matrix at omega to the lower triangle of c.
 func (o *wetOrder) at(c []complex128, omega complex128) bool {
-	n, size := o.strain.n, o.strain.size
-	w := o.work
-	if w == nil {
-		w = &wetWork{
-			re: make([]float64, n*n), im: make([]float64, n*n),
-			cre: make([]float64, size*size), cim: make([]float64, size*size),
-			c: make([]complex128, size*size), before: make([]complex128, size*size), f: make([]complex128, size*size),
-		}
-		o.work = w
-	}
+	size := o.strain.size
+	w := o.space()
 	clear(w.re)
 	clear(w.im)
 	good := true
 	for _, f := range o.faces {
-		if f.moving() {
+		switch {
+		case !f.moving():
+		case f == fluidFace(o.cavity):
 			good = f.dynamic(w.re, w.im, omega) && good
+		case o.sound > 0:
+			good = f.dynamic(w.re, w.im, omega*complex(o.sound, 0)) && good
 		}
 	}
 	o.strain.congruence(w.cre, w.re)
@@ -86,6 +125,7 @@ type wetMode struct {
 	y     []complex128
 	// change is the last relative change of theta.
 	change float64
+	slope  complex128 // of y'C(theta)y in theta
 	good   bool
 }
 
@@ -99,15 +139,36 @@ func (o *wetOrder) still(k int) wetMode {
 	return wetMode{theta: complex(o.values[k], 0), y: y, good: true}
 }
 
-// refine follows a mode from a start to the solution with everything that
-// depends on frequency.
+// refine follows a mode from still fluid to the solution with sound and other
+// losses.
 func (o *wetOrder) refine(start wetMode) wetMode {
 	mode, overlap := o.iterate(start)
-	if mode.good && overlap > 0.7 {
+	moved := cmplx.Abs(mode.theta / start.theta)
+	if mode.good && mode.change < 1e-8 && overlap > sameMode && moved > 0.5 && moved < 2 {
 		return mode
+	}
+	// Strong coupling: raise sound number and resistance step by step.
+	resistance := 0.0
+	if o.cavity != nil {
+		resistance = o.cavity.ventResistance
+	}
+	mode = start
+	for step := 1; step <= soundSteps; step++ {
+		o.sound = float64(step) / soundSteps
+		if o.cavity != nil {
+			o.cavity.ventResistance = resistance * o.sound
+		}
+		mode, _ = o.iterate(mode)
 	}
 	return mode
 }
+
+// sameMode is the overlap with the start above which a solution counts as the
+// same mode; soundSteps the steps taken otherwise.
+const (
+	sameMode   = 0.8
+	soundSteps = 8
+)
 
 // iterate solves the nonlinear eigenproblem by inverse iteration with the
 // Rayleigh functional. overlap is |start' y|.
@@ -115,53 +176,39 @@ func (o *wetOrder) iterate(start wetMode) (mode wetMode, overlap float64) {
 	// Guettel & Tisseur, The nonlinear eigenvalue problem, Acta Numerica 26
 	// (2017) 1-94, section 4.3, doi:10.1017/S0962492917000034. The matrix is
 	// complex symmetric, so the left vector is y itself and the functional errs
-	// by the square of the error of y.
+	// by the square of the error of y. Between the values of omega at which the
+	// matrix was built it is interpolated.
 	size := o.strain.size
+	w := o.space()
+	w.count, w.slope = 0, start.slope
 	theta := start.theta
 	y := append([]complex128(nil), start.y...)
-	mode.good = o.at0(theta)
-	w := o.work
-	var before complex128
-	for step := range 12 {
-		if step > 0 {
-			w.c, w.before = w.before, w.c
-			mode.good = o.at(w.c, 1/cmplx.Sqrt(theta))
-		}
-		q := quadratic(w.c, size, y)
-		next := q
-		if step > 0 && theta != before {
-			slope := (q - quadratic(w.before, size, y)) / (theta - before)
-			next = theta + (q-theta)/(1-slope)
-		}
-		mode.change = cmplx.Abs(next-theta) / cmplx.Abs(next)
-		before, theta = theta, next
-		if step > 0 && mode.change < 1e-13 {
+	last := 1.0
+	for range maxBuilds {
+		mode.good = o.build(theta)
+		next, slope := w.functional(size, y, theta)
+		// Near a pole of a cavity the slope is large, theta moves little and what
+		// tells the error of y is the change of the other side.
+		change := cmplx.Abs(next-theta) / cmplx.Abs(next) * math.Max(1, cmplx.Abs(1-slope))
+		theta = next
+		mode.change, mode.slope = change*last, slope
+		// The value errs by the square of the error of y and by the product of the
+		// distances from the places of interpolation.
+		if w.count >= 3 && mode.change < 1e-12 || change < 1e-14 {
 			break
 		}
-		copy(w.f, w.c)
+		last = change
+		if w.count == 1 && cmplx.Abs(w.slope) > 1 {
+			continue // the matrix at theta cannot be told from one alone
+		}
+		w.between(theta)
 		for i := range size {
 			w.f[i*size+i] -= theta
 		}
 		symmetricLDL(w.f, size, 1e-17*cmplx.Abs(theta))
 		symmetricSolve(w.f, size, y)
-		s := complex(0, 0)
-		for _, v := range y {
-			s += v * v
-		}
-		s = 1 / cmplx.Sqrt(s)
-		for i := range y {
-			y[i] *= s
-		}
-		if step > 1 && mode.change < 1e-7 {
-			// The vector now errs by about that, the functional by its square.
-			mode.change *= mode.change
-			w.c, w.before = w.before, w.c
-			mode.good = o.at(w.c, 1/cmplx.Sqrt(theta))
-			q := quadratic(w.c, size, y)
-			slope := (q - quadratic(w.before, size, y)) / (theta - before)
-			theta += (q - theta) / (1 - slope)
-			break
-		}
+		turnToUnit(y)
+		theta, mode.slope = w.functional(size, y, theta)
 	}
 	mode.theta, mode.y = theta, y
 	sum := complex(0, 0)
@@ -171,12 +218,64 @@ func (o *wetOrder) iterate(start wetMode) (mode wetMode, overlap float64) {
 	return mode, cmplx.Abs(sum)
 }
 
-func (o *wetOrder) at0(theta complex128) bool {
-	if o.work == nil {
-		size := o.strain.size
-		o.at(make([]complex128, size*size), 1/cmplx.Sqrt(theta))
+// maxBuilds bounds how often the matrix is built for one mode.
+const maxBuilds = 14
+
+// build adds the matrix at theta to those kept, newest first.
+func (o *wetOrder) build(theta complex128) bool {
+	w := o.space()
+	oldest := w.built[2]
+	w.built[2], w.built[1], w.built[0] = w.built[1], w.built[0], oldest
+	w.at[2], w.at[1], w.at[0] = w.at[1], w.at[0], theta
+	w.count++
+	return o.at(oldest, 1/cmplx.Sqrt(theta))
+}
+
+// functional solves y'C(theta)y = theta near a start, C interpolated in the
+// last three builds, and returns the derivative of the left side too.
+func (w *wetWork) functional(size int, y []complex128, start complex128) (theta, slope complex128) {
+	q0 := quadratic(w.built[0], size, y)
+	switch w.count {
+	case 1:
+		return w.at[0] + (q0-w.at[0])/(1-w.slope), w.slope
+	case 2:
+		slope = w.difference(q0, quadratic(w.built[1], size, y), 0, 1)
+		return w.at[0] + (q0-w.at[0])/(1-slope), slope
 	}
-	return o.at(o.work.c, 1/cmplx.Sqrt(theta))
+	q1, q2 := quadratic(w.built[1], size, y), quadratic(w.built[2], size, y)
+	first := w.difference(q0, q1, 0, 1)
+	second := w.difference(first, w.difference(q1, q2, 1, 2), 0, 2)
+	theta = start
+	for range 4 {
+		a, b := theta-w.at[0], theta-w.at[1]
+		value := q0 + a*(first+b*second) - theta
+		slope = first + (a+b)*second
+		theta -= value / (slope - 1)
+	}
+	return theta, slope
+}
+
+// difference is the divided difference of p and q between two builds, 0 where
+// these coincide.
+func (w *wetWork) difference(p, q complex128, i, j int) complex128 {
+	if d := w.at[i] - w.at[j]; d != 0 {
+		return (p - q) / d
+	}
+	return 0
+}
+
+// between writes the matrix at theta, interpolated in the last two builds, to
+// w.f.
+func (w *wetWork) between(theta complex128) {
+	if w.count < 2 || w.at[0] == w.at[1] {
+		copy(w.f, w.built[0])
+		return
+	}
+	f := (theta - w.at[0]) / (w.at[0] - w.at[1])
+	old := w.built[1]
+	for i, v := range w.built[0] {
+		w.f[i] = v + f*(v-old[i])
+	}
 }
 
 // quadratic returns y'Cy from the lower triangle.

@@ -1,0 +1,113 @@
+package modes
+
+import (
+	"math"
+
+	"hoopsheet/core/bessel"
+)
+
+// cavityModes is the number of radial modes of a cavity that are summed; what
+// lies beyond is added in the limit of short waves. The first cavityLive of
+// them follow the frequency exactly, the others by a power series.
+const (
+	cavityModes = 128
+	cavityLive  = 24
+)
+
+// cavityTable holds, for one order and number of shapes, the radial modes of a
+// rigid cylinder of unit radius, J_m(k_q r) with J_m'(k_q) = 0, and the shapes
+// of the sheet in them.
+type cavityTable struct {
+	n    int
+	k    []float64 // k_q; for m = 0 the first is 0, the piston
+	part []float64 // row q: integral u_j J_m(k_q r) r dr / norm, n to a row
+}
+
+// radialModes returns the table, made when first asked for.
+func (t *fluidTables) radialModes() *cavityTable {
+	t.mu.Lock()
+	defer t.mu.Unlock()
+	if t.cavity != nil {
+		return t.cavity
+	}
+	c := &cavityTable{n: t.n, part: make([]float64, cavityModes*t.n)}
+	zeros := make([]float64, cavityModes)
+	if t.m == 0 {
+		zeros = zeros[1:]
+	}
+	bessel.ZerosJPrime(zeros, float64(t.m))
+	if t.m == 0 {
+		// J_2(k)/k^2 is 1/8 at k = 0, and the norm of 1 is 1/2.
+		c.k = append(c.k, 0)
+		c.part[0] = math.Sqrt2 / 8
+	}
+	c.k = append(c.k, zeros...)
+	values := make([]float64, t.m+2*t.n+1)
+	for q, k := range c.k {
+		if k == 0 {
+			continue
+		}
+		// The integral is the Hankel transform J_b(k)/k^2, b = m+2j+2; the norm
+		// of J_m(k r) is (1 - m^2/k^2) J_m(k)^2/2 where J_m'(k) = 0.
+		bessel.JSeq(values, k)
+		v := values[t.m]
+		m := float64(t.m)
+		f := 1 / (k * k * math.Sqrt((1-m/k)*(1+m/k)/2) * math.Abs(v))
+		row := c.part[q*t.n : (q+1)*t.n]
+		for j := range row {
+			row[j] = f * values[t.m+2*j+2]
+		}
+	}
+	t.cavity = c
+	return c
+}
+
+// addMode adds factor times the square of radial mode q to the lower triangle
+// of x.
+func (c *cavityTable) addMode(x []float64, q int, factor float64) {
+	row := c.part[q*c.n : (q+1)*c.n]
+	for i, v := range row {
+		v *= factor
+		xi := x[i*c.n : i*c.n+i+1]
+		for j := range xi {
+			xi[j] += v * row[j]
+		}
+	}
+}
+
+// addBeyond adds the modes after the last one, for a cavity of depth l.
+func (c *cavityTable) addBeyond(x []float64, l float64) {
+	// There J_b(k) = (-1)^(j+1) J_m(k) but for terms in (b^2/k)^2, so each mode
+	// adds 2 (-1)^(i+j) k^-4 coth(k l)/k; their distance is pi.
+	k := c.k[len(c.k)-1] + math.Pi/2
+	f := 2 / (4 * math.Pi * math.Pow(k, 4)) / math.Tanh(k*l)
+	for i := range c.n {
+		for j := range i + 1 {
+			if (i+j)%2 == 0 {
+				x[i*c.n+j] += f
+			} else {
+				x[i*c.n+j] -= f
+			}
+		}
+	}
+}
+
+// cothSeries returns the first four coefficients in z of coth(kappa l)/kappa,
+// kappa^2 = k^2 - z.
+func cothSeries(k, l float64) [4]float64 {
+	x := k * l
+	if x > 20 {
+		return [4]float64{1 / k, 1 / (2 * k * k * k), 3 / (8 * math.Pow(k, 5)), 5 / (16 * math.Pow(k, 7))}
+	}
+	// With g = coth(x)/x, x^2 = l^2 (k^2 - z) and D = (1/x) d/dx, d/dz is
+	// -(l^2/2) D.
+	c := 1 / math.Tanh(x)
+	s := math.Sinh(x)
+	u := -1 / (s * s) // 1 - c^2
+	g := c / x
+	d1 := (u - g) / (x * x)
+	d2 := (-2*c*u - 3*u/x + 3*c/(x*x)) / math.Pow(x, 3)
+	d3 := (u*(6*c*c-2) + 12*c*u/x + 15*u/(x*x) - 15*c/math.Pow(x, 3)) / math.Pow(x, 4)
+	h := l * l / 2
+	return [4]float64{l * g, -l * h * d1, l * h * h * d2 / 2, -l * h * h * h * d3 / 6}
+}
