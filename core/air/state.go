@@ -5,13 +5,16 @@ import (
 	"strconv"
 )
 
-// State is moist air at rest.
+// State is a fluid at rest.
 type State struct {
 	// Density rho, kg/m^3.
 	Density float64
 	// SoundSpeed c0, m/s.
 	SoundSpeed float64
-	// VapourFraction is the mole fraction of water vapour.
+	// KinematicViscosity nu, m^2/s.
+	KinematicViscosity float64
+	// VapourFraction is the mole fraction of water vapour in air; 0 for other
+	// fluids.
 	VapourFraction float64
 	// Notes are sentences that say where a formula was used outside the range
 	// it was published for; empty inside.
@@ -20,7 +23,7 @@ type State struct {
 
 // DomainError says which quantity lies where no answer can be given.
 type DomainError struct {
-	// Quantity is "temperature", "pressure" or "humidity".
+	// Quantity is "temperature", "pressure", "humidity" or "fluid".
 	Quantity string
 	// Message is a sentence for people.
 	Message string
@@ -37,7 +40,7 @@ const (
 
 // Moist gives the state of moist air from temperature, K, pressure, Pa, and
 // relative humidity, 0 to 1, with 400 parts per million of carbon dioxide, by
-// Density and SoundSpeed.
+// Density, SoundSpeed and Viscosity.
 //
 // It answers from 223.15 to 373.15 K and from 10 to 200 kPa and returns a
 // *DomainError outside, or where the vapour asked for would exceed the
@@ -57,6 +60,7 @@ func Moist(temperature, pressure, humidity float64) (State, error) {
 		SoundSpeed:     SoundSpeed(temperature, pressure, humidity, CarbonDioxide),
 		VapourFraction: VapourFraction(temperature, pressure, humidity),
 	}
+	state.KinematicViscosity = Viscosity(temperature) / state.Density
 	if state.VapourFraction > 0.5 {
 		return State{}, &DomainError{"humidity", "At " + celsius(temperature) + " and " + kilopascal(pressure) +
 			" a relative humidity of " + number(humidity*100) + " % means that most of the gas is steam; that is no longer air."}

@@ -29,6 +29,18 @@ func TestStress(t *testing.T) {
 	}
 }
 
+func TestBendingStiffness(t *testing.T) {
+	// By hand: steel, 210 GPa, 1 mm, nu 0.3: 210e9 x 1e-9 / (12 x 0.91) =
+	// 210/10.92 = 19.2307692 N m; the textbook value is 19.23. Twice the thickness
+	// makes eight times the stiffness.
+	if got, want := BendingStiffness(210e9, 1e-3, 0.3), 210/10.92; !withinRelative(got, want, rounding) {
+		t.Errorf("bending stiffness %g, want %g", got, want)
+	}
+	if got, want := BendingStiffness(4.8e9, 46e-6, 0.38), 8*BendingStiffness(4.8e9, 23e-6, 0.38); !withinRelative(got, want, rounding) {
+		t.Errorf("twice the thickness gives %g, want %g", got, want)
+	}
+}
+
 func TestThermalByHand(t *testing.T) {
 	// Worked by hand with round numbers: E h = 4.8e9 x 25e-6 = 120000 N/m;
 	// divided by 1 - 0.4 = 0.6: 200000 N/m. Expansion 17e-6 - 12e-6 = 5e-6:
