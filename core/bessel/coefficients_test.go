@@ -120,15 +120,28 @@ func TestPhaseCoefficients(t *testing.T) {
 
 // 1/(Gamma(1+z) Gamma(1-z)) = sin(pi z)/(pi z), DLMF 5.5.3, and Gamma(3/2).
 func TestReciprocalGamma(t *testing.T) {
-	for z := 1.0 / 64; z <= 0.5; z += 1.0 / 64 {
-		g1, g2 := temmeGamma(z)
-		want := math.Sin(math.Pi*z) / (math.Pi * z)
-		within(t, "reflection", z, 0, (g2-z*g1)*(g2+z*g1), want, 4*ulpUnit)
+	halves := func(z float64) (a, b float64) { // 1/Gamma(1+z), 1/Gamma(1-z)
+		h1, h2 := temmeGamma(z)
+		return 1 + h2 - z*(h1-eulerH), 1 + h2 + z*(h1-eulerH)
 	}
-	g1, g2 := temmeGamma(0.5)
-	within(t, "1/Gamma(3/2)", 0.5, 0, g2-0.5*g1, 2/math.Sqrt(math.Pi), 2*ulpUnit)
-	if g1, _ = temmeGamma(0); g1 != -0.5772156649015329 { // Euler's constant
-		t.Errorf("derivative at 0 is %v", -g1)
+	for z := 1.0 / 64; z <= 0.5; z += 1.0 / 64 {
+		a, b := halves(z)
+		want := math.Sin(math.Pi*z) / (math.Pi * z)
+		within(t, "reflection", z, 0, a*b, want, 4*ulpUnit)
+	}
+	a, _ := halves(0.5)
+	within(t, "1/Gamma(3/2)", 0.5, 0, a, 2/math.Sqrt(math.Pi), 2*ulpUnit)
+	if reciprocalGamma[1] != eulerH {
+		t.Errorf("derivative at 0 is %v", reciprocalGamma[1])
+	}
+}
+
+func TestHyperbolicRest(t *testing.T) {
+	for s := 1.0 / 64; s <= restMax; s += 1.0 / 64 {
+		c, h := hyperbolicRest(s)
+		q := math.Sinh(s / 2)
+		within(t, "cosh - 1", 0, s, c, 2*q*q, 4*ulpUnit*c)
+		within(t, "sinh/s - 1", 0, s, h, math.Sinh(s)/s-1, 4*ulpUnit)
 	}
 }
 

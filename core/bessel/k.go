@@ -98,12 +98,12 @@ func kPair(nu, x float64) (ah, al, bh, bl float64) {
 		mu, n = mu-1, n+1
 	}
 	if x < steedMin {
-		ah, bh = kTemme(mu, x)
+		ah, bh, bl = kTemmePair(mu, x)
 	} else {
 		ah, bh = kSteed(mu, x)
 	}
 	const s = 1.0 / (1 << 450) / (1 << 450)
-	ah, bh = s*ah, s*bh
+	ah, bh, bl = s*ah, s*bh, s*bl
 	ih, il := invDD(x)
 	for k := 1; k <= int(n); k++ {
 		mh, ml := fastTwoSum(float64(k), mu)

@@ -92,9 +92,9 @@ func TestContinuedFractionAgainstHankel(t *testing.T) {
 }
 
 func TestTemmeAgainstContinuedFraction(t *testing.T) {
-	for _, x := range []float64{1, 1.2, 1.4} {
+	for _, x := range []float64{1, 1.1} {
 		for mu := -0.5; mu <= 0.5; mu += 1.0 / 16 {
-			k0, k1 := kTemme(mu, x)
+			k0, k1, _ := kTemmePair(mu, x)
 			s0, s1 := kSteed(mu, x)
 			s0, s1 = s0*math.Exp(-x), s1*math.Exp(-x)
 			within(t, "K", mu, x, k0, s0, promiseM*ulpUnit*k0)
@@ -102,7 +102,7 @@ func TestTemmeAgainstContinuedFraction(t *testing.T) {
 			if mu < 0 {
 				continue
 			}
-			y0, y1 := yTemme(mu, x)
+			y0, y1, _ := yTemmePair(mu, x)
 			ah, _, bh, _ := yStart(mu, x)
 			within(t, "Y", mu, x, y0, ah, promiseY*ulpUnit*scaleY(mu, x))
 			within(t, "Y next order", mu, x, y1, bh, promiseY*ulpUnit*scaleY(mu+1, x))

@@ -15,50 +15,71 @@ var reciprocalGamma = [...]float64{
 	7.782263439905071e-12,
 }
 
-// temmeGamma returns, for |mu| <= 1/2,
+// Euler's constant in two parts.
+const eulerH, eulerL = 0x1.2788cfc6fb619p-1, -0x1.6cb90701fbfabp-58
+
+// temmeGamma returns h1 and h2, both small, such that for |mu| <= 1/2
 //
-//	g1 = (1/Gamma(1-mu) - 1/Gamma(1+mu))/(2 mu),
-//	g2 = (1/Gamma(1-mu) + 1/Gamma(1+mu))/2.
-func temmeGamma(mu float64) (g1, g2 float64) {
+//	(1/Gamma(1-mu) - 1/Gamma(1+mu))/(2 mu) = h1 - gamma,
+//	(1/Gamma(1-mu) + 1/Gamma(1+mu))/2      = h2 + 1.
+func temmeGamma(mu float64) (h1, h2 float64) {
 	z := mu * mu
-	for k := len(reciprocalGamma) - 2; k >= 0; k -= 2 {
-		g2 = g2*z + reciprocalGamma[k]
-		g1 = g1*z - reciprocalGamma[k+1]
+	for k := len(reciprocalGamma) - 2; k >= 2; k -= 2 {
+		h2 = (h2 + reciprocalGamma[k]) * z
+		h1 = (h1 - reciprocalGamma[k+1]) * z
 	}
-	return g1, g2
+	return h1, h2
 }
 
-// temmeStart returns what the series for Y and K have in common, for 0 < x < steedMin
-// and |mu| <= 1/2:
+// temmeStart returns what the series for Y and K have in common, for
+// |mu| <= 1/2: with sigma = mu ln(2/x) and g1, g2 the left sides in temmeGamma
 //
 //	f = (pi mu/sin pi mu) (g1 cosh sigma + g2 (sinh sigma/sigma) ln(2/x)),
-//	p = (2/x)^mu Gamma(1+mu),  q = (x/2)^mu Gamma(1-mu),  sigma = mu ln(2/x).
+//	p = (2/x)^mu Gamma(1+mu),  q = (x/2)^mu Gamma(1-mu).
 func temmeStart(mu, x float64) (f, p, q float64) {
 	// Temme, J. Comput. Phys. 19 (1975) 324, eq. 3.
-	g1, g2 := temmeGamma(mu)
+	h1, h2 := temmeGamma(mu)
+	g1, g2 := h1-eulerH, h2+1
 	lh, ll := logHalfDD(x)
 	lh, ll = -lh, -ll
 	sh, sl := mulDD(lh, ll, mu, 0)
 	up := scaleExp(expDD(sh, sl))
 	down := scaleExp(expDD(-sh, -sl))
-	fact, sinhc := 1.0, 1.0
-	if mu != 0 {
-		fact = math.Pi * mu / math.Sin(math.Pi*mu)
-		sinhc = math.Sinh(sh) / sh
-		if math.Abs(sh) > 1 {
-			sinhc = 0.5 * (up - down) / sh
-		}
+	if math.Abs(sh) < restMax {
+		// The leading parts ln(2/x) - gamma cancel towards x = 1; the rest is
+		// small.
+		c1, s1 := hyperbolicRest(sh)
+		bh, bl := addDD(lh, ll, -eulerH, -eulerL)
+		f = bh + (bl + h1 + g1*c1 + lh*(h2+s1+h2*s1))
+	} else {
+		f = 0.5 * (g1*(up+down) + g2*(up-down)/mu)
 	}
-	f = fact * (g1*0.5*(up+down) + g2*sinhc*lh)
+	if mu != 0 {
+		f *= math.Pi * mu / math.Sin(math.Pi*mu)
+	}
 	return f, up / (g2 - mu*g1), down / (g2 + mu*g1)
+}
+
+// restMax is the range of hyperbolicRest.
+const restMax = 2
+
+// hyperbolicRest returns cosh(s) - 1 and sinh(s)/s - 1 for |s| <= restMax.
+func hyperbolicRest(s float64) (c, h float64) {
+	// Taylor's series; the first terms left out are below 2^-60 of the sum.
+	z := s * s
+	for k := 24.0; k >= 2; k -= 2 {
+		c = (1 + c) * z / (k * (k - 1))
+		h = (1 + h) * z / (k * (k + 1))
+	}
+	return c, h
 }
 
 func scaleExp(h, l float64, k int) float64 {
 	return math.Ldexp(h+l, k)
 }
 
-// yTemme returns Y_mu(x) and Y_{mu+1}(x) for 0 < x < steedMin and |mu| <= 1/2.
-func yTemme(mu, x float64) (y0, y1 float64) {
+// yTemme returns Y_mu(x) for 0 < x < 1.5 and |mu| <= 1/2.
+func yTemme(mu, x float64) float64 {
 	f, p, q := temmeStart(mu, x)
 	f *= 2 / math.Pi
 	p /= math.Pi
@@ -70,39 +91,80 @@ func yTemme(mu, x float64) (y0, y1 float64) {
 		r = 2 * h * h / mu
 	}
 	c, d := 1.0, -0.25*x*x
-	y0, y1 = f+r*q, p
+	first, rest := f+r*q, 0.0
 	for k := 1.0; k < 100; k++ {
 		f = (k*f + p + q) / ((k - mu) * (k + mu))
 		p /= k - mu
 		q /= k + mu
 		c *= d / k
 		g := c * (f + r*q)
-		y0 += g
-		y1 += c*p - k*g
-		if math.Abs(g) < 0x1p-57*math.Abs(y0) && math.Abs(k*g) < 0x1p-57*math.Abs(y1) {
+		rest += g
+		if math.Abs(g) < 0x1p-57*math.Abs(rest) {
 			break
 		}
 	}
-	return -y0, -y1 * 2 / x
+	return -(first + rest)
 }
 
-// kTemme returns K_mu(x) and K_{mu+1}(x) for 0 < x < steedMin and |mu| <= 1/2.
-func kTemme(mu, x float64) (k0, k1 float64) {
+// yTemmePair returns Y_mu(x) and Y_{mu+1}(x) for 0 < x < steedMin and
+// |mu| <= 1/2.
+func yTemmePair(mu, x float64) (y0, y1h, y1l float64) {
+	y0 = yTemme(mu, x)
+	// Y_{mu+1} = (J_{mu+1} Y_mu - 2/(pi x))/J_mu, DLMF 10.5.2: for small x the
+	// second term is by far the larger, and it is exact.
+	jh, jl, kh, kl := jSeriesPair(mu, x)
+	const twoOverPiH, twoOverPiL = 1 / halfPiH, -0x1.6b01ec5417056p-55
+	ph, pl := mulDD(kh, kl, y0, 0)
+	if isExtreme(x) {
+		return y0, (ph - twoOverPiH/x) / jh, 0
+	}
+	qh, ql := divDD(twoOverPiH, twoOverPiL, x, 0)
+	ph, pl = addDD(ph, pl, -qh, -ql)
+	y1h, y1l = divDD(ph, pl, jh, jl)
+	return y0, y1h, y1l
+}
+
+// kTemme returns K_mu(x) for 0 < x < 1.5 and |mu| <= 1/2.
+func kTemme(mu, x float64) float64 {
 	f, p, q := temmeStart(mu, x)
 	p *= 0.5
 	q *= 0.5
 	c, d := 1.0, 0.25*x*x
-	k0, k1 = f, p
+	first, rest := f, 0.0
 	for k := 1.0; k < 100; k++ {
 		f = (k*f + p + q) / ((k - mu) * (k + mu))
 		p /= k - mu
 		q /= k + mu
 		c *= d / k
-		k0 += c * f
-		k1 += c * (p - k*f)
-		if c*f < 0x1p-57*k0 && math.Abs(c*(p-k*f)) < 0x1p-57*k1 {
+		rest += c * f
+		if c*f < 0x1p-57*rest {
 			break
 		}
 	}
-	return k0, k1 * 2 / x
+	return first + rest
+}
+
+// kTemmePair returns K_mu(x) and K_{mu+1}(x) for 0 < x < steedMin and
+// |mu| <= 1/2.
+func kTemmePair(mu, x float64) (k0, k1h, k1l float64) {
+	k0 = kTemme(mu, x)
+	// K_{mu+1} = (1/x - I_{mu+1} K_mu)/I_mu, DLMF 10.28.2, with
+	// I_mu = prefix iSum(mu) and I_{mu+1} = prefix (x/2)/(mu+1) iSum(mu+1).
+	h, l, k := prefix(mu, x)
+	h, l = math.Ldexp(h, k), math.Ldexp(l, k)
+	sh, sl := iSum(mu, 0, x)
+	ih, il := mulDD(h, l, sh, sl)
+	if isExtreme(x) {
+		return k0, 1 / x / ih, 0
+	}
+	nh, nl := twoSum(mu, 1)
+	sh, sl = iSum(nh, nl, x)
+	sh, sl = mulDD(sh, sl, h, l)
+	nh, nl = divDD(0.5*x, 0, nh, nl)
+	sh, sl = mulDD(sh, sl, nh, nl)
+	sh, sl = mulDD(sh, sl, k0, 0)
+	nh, nl = invDD(x)
+	sh, sl = addDD(nh, nl, -sh, -sl)
+	k1h, k1l = divDD(sh, sl, ih, il)
+	return k0, k1h, k1l
 }

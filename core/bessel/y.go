@@ -98,8 +98,8 @@ func yStart(mu, x float64) (ah, al, bh, bl float64) {
 		if mu > 0.5 {
 			mu--
 		}
-		ah, bh = yTemme(mu, x)
-		return ah, 0, bh, 0
+		ah, bh, bl = yTemmePair(mu, x)
+		return ah, 0, bh, bl
 	}
 	// Y = (p J - J')/q and Y' = q J + p Y, from H'/H = p + iq.
 	jh, jl, kh, kl := jPair(mu, x)
