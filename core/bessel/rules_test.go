@@ -141,6 +141,20 @@ func TestNoAllocation(t *testing.T) {
 	}
 }
 
+// At x = 1e-300 the leading terms, DLMF 10.7.3-4: Y_0' = 2/(pi x), and for a
+// small order nearly the same; Y_nu' = Gamma(nu+1) (2/x)^(nu+1)/(2 pi).
+func TestTinyArguments(t *testing.T) {
+	const x = 1e-300
+	want := 2 / (math.Pi * x)
+	within(t, "Y_0'", 0, x, YPrime(0, x), want, promiseY*ulpUnit*want)
+	within(t, "Y_1e-10'", 1e-10, x, YPrime(1e-10, x), want, 1e-13*want) // (nu ln x)^2/2
+	within(t, "x K_0'", 0, x, x*KPrime(0, x), -1, promiseM*ulpUnit)
+	want = 0.5 * math.Sqrt(2/(math.Pi*x)) // of J_1/2 = sqrt(2/(pi x)) sin x
+	within(t, "J_1/2'", 0.5, x, JPrime(0.5, x), want, 4*ulpUnit*want)
+	within(t, "J_1'", 1, 1e-320, JPrime(1, 1e-320), 0.5, ulpUnit)
+	within(t, "x I_2'/I_2", 2, x, x*RatioI(2, x), 2, ulpUnit)
+}
+
 // Far beyond the tested range the phase is reduced in plain arithmetic: still
 // right to about 1e-15 of the envelope.
 func TestFarArguments(t *testing.T) {

@@ -44,8 +44,11 @@ func YPrime(nu, x float64) float64 {
 	case x > extreme || nu == 0:
 		return unscale(-bh, -bl)
 	case x < 1/extreme:
-		// -Y_{nu+1} is twice the derivative, but overflows before it.
-		return unscale(nu/x*-ah, 0)
+		t := nu / x * ah
+		if math.IsInf(t, 0) {
+			return math.Inf(1)
+		}
+		return unscale(t-bh, 0)
 	}
 	ch, cl := divDD(nu, 0, x, 0)
 	h, l := lessDD(ch, cl, ah, al, bh, bl)

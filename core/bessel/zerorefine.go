@@ -7,8 +7,12 @@ import "math"
 // units of the local wavelength.
 const taylorDegree = 8
 
-// besselTaylor returns the Taylor coefficients at x of the solution of
-// x^2 y” + x y' + (x^2 - nu^2) y = 0 with y(x) = y0 and y'(x) = y1.
+// besselTaylor returns the Taylor coefficients at x of the solution of Bessel's
+// equation,
+//
+//	x^2 y'' + x y' + (x^2 - nu^2) y = 0,
+//
+// with y(x) = y0 and y'(x) = y1.
 func besselTaylor(nu, x, y0, y1 float64) (c [taylorDegree + 1]float64) {
 	c[0], c[1] = y0, y1
 	d := (x - nu) * (x + nu)
