@@ -79,22 +79,37 @@ func TestKettledrumHead(t *testing.T) {
 	}
 }
 
+// film is a foil window of 1.5 m diameter.
+func film() Real {
+	air := Face{Kind: diaphragm.FaceBaffled, Density: 1.2, SoundSpeed: 343.5, Viscosity: 1.5e-5}
+	return Real{Radius: 0.75, Tension: 180, ArealDensity: 0.032, Stiffness: 6e-6, Upper: air, Lower: air}
+}
+
 func BenchmarkWetModes(b *testing.B) {
-	for _, kind := range []diaphragm.FaceKind{diaphragm.FaceVacuum, diaphragm.FaceBaffled, diaphragm.FaceOpen} {
-		for _, e := range []struct {
-			name    string
-			effects Effects
-		}{{"still", Effects{Fluid: true}}, {"sound", Effects{Fluid: true, Sound: true}}, {"film", AllEffects()}} {
-			r := kettledrumHead()
-			r.Upper.Kind, r.Lower.Kind = kind, kind
-			r.Stiffness = 6e-6
-			b.Run(string(kind)+"/"+e.name, func(b *testing.B) {
-				for b.Loop() {
-					if _, err := Solve(r, Request{Effects: e.effects}); err != nil {
-						b.Fatal(err)
-					}
+	still := AllEffects()
+	still.Sound = false
+	cavity := film()
+	cavity.Lower = Face{Kind: diaphragm.FaceCavity, Density: 1.2, SoundSpeed: 343.5, Depth: 0.4}
+	open := film()
+	open.Upper.Kind, open.Lower.Kind = diaphragm.FaceOpen, diaphragm.FaceOpen
+	baffledHead := kettledrumHead()
+	baffledHead.Upper.Kind, baffledHead.Lower.Kind = diaphragm.FaceBaffled, diaphragm.FaceBaffled
+	for _, c := range []struct {
+		name    string
+		real    Real
+		effects Effects
+	}{
+		{"film baffled still", film(), still}, {"film baffled", film(), AllEffects()},
+		{"film open still", open, still}, {"film open", open, AllEffects()},
+		{"film cavity", cavity, AllEffects()},
+		{"head baffled", baffledHead, AllEffects()}, {"head open", kettledrumHead(), AllEffects()},
+	} {
+		b.Run(c.name, func(b *testing.B) {
+			for b.Loop() {
+				if _, err := Solve(c.real, Request{Effects: c.effects}); err != nil {
+					b.Fatal(err)
 				}
-			})
-		}
+			}
+		})
 	}
 }

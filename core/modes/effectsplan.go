@@ -59,9 +59,10 @@ func (p *wetPlan) edge() float64 {
 
 // shapes returns how many shapes the first count modes of order m take.
 func (p *wetPlan) shapes(m, count int) int {
-	// A mode n has a polynomial of degree m + 2j; n = 2 count + m/6 leaves 1e-11
-	// of the frequency of the last in vacuum (TestShapeCount).
-	n := 2*count + 7 + m/6
+	// A mode n has a polynomial of degree m + 2j; 2 count + 6 + m/6 shapes leave
+	// 1e-9 of the frequency of the last in vacuum, far less of those before
+	// (TestShapeCount).
+	n := 2*count + 5 + m/6
 	if e := p.edge(); e > 0 && !p.thin && p.real.Rim == RimClamped {
 		// The bent zone of width e takes 2 e^-1/2.
 		n = max(n, 6+int(math.Ceil(2/math.Sqrt(e))))

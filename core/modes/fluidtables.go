@@ -1,8 +1,6 @@
 package modes
 
 import (
-	"math"
-	"math/cmplx"
 	"sync"
 
 	"hoopsheet/core/disc"
@@ -80,7 +78,7 @@ func (t *fluidTables) series(edge disc.Edge, powers int) *soundSeries {
 	if edge == disc.RootEdge {
 		s, n = &t.soundOpen, t.n+1
 	}
-	if *s == nil || len((*s).term) < powers {
+	if *s == nil || (*s).powers < powers {
 		*s = newSoundSeries(edge, t.m, n, powers)
 	}
 	return *s
@@ -100,87 +98,4 @@ func (t *fluidTables) openCoupling() []float64 {
 		t.coupling = x
 	}
 	return t.coupling
-}
-
-// soundSeries is a radiation operator as a power series in k0 with real
-// matrices: see disc.Edge.SoundSeries.
-type soundSeries struct {
-	n     int
-	first int         // the power at which pair (0, 0) begins to radiate
-	term  [][]float64 // lower triangles, packed row by row
-	size  []float64   // largest magnitude in each term
-}
-
-func newSoundSeries(edge disc.Edge, m, n, powers int) *soundSeries {
-	s := &soundSeries{n: n, term: make([][]float64, powers), size: make([]float64, powers), first: 2*m + 1}
-	if edge == disc.RootEdge {
-		s.first = 2*m + 3
-	}
-	for p := range s.term {
-		s.term[p] = make([]float64, n*(n+1)/2)
-	}
-	column := make([]float64, powers)
-	at := 0
-	for i := range n {
-		for j := range i + 1 {
-			edge.SoundSeries(column, m, i, j)
-			for p, v := range column {
-				s.term[p][at] = v
-				s.size[p] = math.Max(s.size[p], math.Abs(v))
-			}
-			at++
-		}
-	}
-	return s
-}
-
-// at adds to the lower triangles of re and im (n by n) the operator at the
-// complex wave number k0, times factor. The static term is left out: it belongs
-// to the still fluid. It returns false if the series has too few terms.
-func (s *soundSeries) at(re, im []float64, k0 complex128, factor float64) bool {
-	n := s.n
-	power := complex(1, 0)
-	floor := 0x1p-56 * s.size[0]
-	quiet := 0
-	for p := 1; p < len(s.term); p++ {
-		power *= k0
-		z := power * complex(factor, 0)
-		if p%2 == 1 {
-			z *= 1i
-		}
-		// Even terms from the first power on, odd ones from where they begin.
-		if p%2 == 1 && p < s.first {
-			continue
-		}
-		if s.size[p]*cmplx.Abs(power) < floor {
-			// Two terms of each kind in a row, and past where odd ones begin.
-			if quiet++; quiet >= 4 && p >= min(s.first+4, len(s.term)-1) {
-				return true
-			}
-			continue
-		}
-		quiet = 0
-		x, y := real(z), imag(z)
-		term := s.term[p]
-		last := n - 1 // rows i and columns j with i + j <= reach have odd terms
-		reach := 2 * n
-		if p%2 == 1 {
-			reach = (p - s.first) / 2
-			last = min(last, reach)
-		}
-		at := 0
-		for i := range last + 1 {
-			row := term[at : at+i+1]
-			at += i + 1
-			if len(row) > reach-i+1 {
-				row = row[:reach-i+1]
-			}
-			a, b := re[i*n:i*n+len(row)], im[i*n:i*n+len(row)]
-			for j, v := range row {
-				a[j] += x * v
-				b[j] += y * v
-			}
-		}
-	}
-	return quiet >= 2 || len(s.term) == 1
 }
