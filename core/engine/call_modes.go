@@ -5,11 +5,13 @@ import (
 	"hoopsheet/core/modes"
 )
 
-// ModesRequest asks for the modes of the ideal sheet.
+// ModesRequest asks for the modes of the diaphragm as it stands.
 type ModesRequest struct {
 	Document diaphragm.Diaphragm `json:"document"`
 	// Count of modes to list, lowest first; 1 to 400.
 	Count int `json:"count"`
+	// Without names effects to leave out.
+	Without []Effect `json:"without,omitempty"`
 }
 
 // ModesResult is the mode table.
@@ -18,9 +20,11 @@ type ModesResult struct {
 	ArealDensity float64 `json:"arealDensity"`
 	WaveSpeed    float64 `json:"waveSpeed"`
 	// AirDensity, kg/m^3, and MassRatio rho a / sigma.
-	AirDensity  float64  `json:"airDensity"`
-	MassRatio   float64  `json:"massRatio"`
-	Modes       []Mode   `json:"modes"`
+	AirDensity float64 `json:"airDensity"`
+	MassRatio  float64 `json:"massRatio"`
+	Modes      []Mode  `json:"modes"`
+	// Applies lists the effects that this diaphragm has, in or left out.
+	Applies     []Effect `json:"applies"`
 	Assumptions []string `json:"assumptions"`
 	Cautions    []string `json:"cautions"`
 }
@@ -30,12 +34,22 @@ type Mode struct {
 	// M nodal diameters; N nodal circles counting the rim.
 	M int `json:"m"`
 	N int `json:"n"`
-	// Frequency of the ideal sheet, Hz.
+	// Frequency, Hz, with the error of the computation, Hz.
 	Frequency float64 `json:"frequency"`
-	// Zero is j_mn, the n-th positive zero of J_m.
-	Zero float64 `json:"zero"`
-	// CircleRadii of the nodal circles inside the rim, r/a, inside out.
-	CircleRadii []float64 `json:"circleRadii"`
+	Error     float64 `json:"error"`
+	// Ideal frequency of the ideal sheet in vacuum, Hz.
+	Ideal float64 `json:"ideal"`
+	// FluidShare is the share of the moving mass that is fluid.
+	FluidShare float64 `json:"fluidShare"`
+	// Damping ratios by cause.
+	Damping ModeDamping `json:"damping"`
+	// RingDown to -60 dB, s, and Q; 0 without damping.
+	RingDown float64 `json:"ringDown"`
+	Q        float64 `json:"q"`
+	// Kind is "film-dominated" or "cavity-dominated" for the modes of a
+	// diaphragm with a cavity, by where most of the strain energy is; empty
+	// otherwise.
+	Kind string `json:"kind"`
 	// NodalLines in words.
 	NodalLines string `json:"nodalLines"`
 	// Distances to every line to keep clear of, nearest first.
@@ -43,6 +57,20 @@ type Mode struct {
 	// BelowLowest is true when the mode lies below the lowest frequency
 	// allowed.
 	BelowLowest bool `json:"belowLowest"`
+}
+
+// ModeDamping are ratios to critical damping.
+type ModeDamping struct {
+	// Radiation of sound and Viscous friction of the fluid are computed; Sheet
+	// is the loss of the material by its share of the energy; Remainder is what
+	// was given.
+	Radiation float64 `json:"radiation"`
+	Viscous   float64 `json:"viscous"`
+	Sheet     float64 `json:"sheet"`
+	Remainder float64 `json:"remainder"`
+	Total     float64 `json:"total"`
+	// RadiationKnown is false where nothing is stated of radiation.
+	RadiationKnown bool `json:"radiationKnown"`
 }
 
 // Distance is how far a mode is from one line to keep clear of.
@@ -59,8 +87,11 @@ type Distance struct {
 
 // ShapeRequest asks for the drawing of one mode.
 type ShapeRequest struct {
-	M int `json:"m"`
-	N int `json:"n"`
+	// Document of the diaphragm; without it the ideal sheet is drawn.
+	Document *diaphragm.Diaphragm `json:"document,omitempty"`
+	Without  []Effect             `json:"without,omitempty"`
+	M        int                  `json:"m"`
+	N        int                  `json:"n"`
 	// Orientation of the first antinode, rad.
 	Orientation float64 `json:"orientation"`
 	// Size of the square raster, pixels a side, 16 to 1024.

@@ -18,6 +18,7 @@ func Enums() map[reflect.Type][]string {
 	return map[reflect.Type][]string{
 		reflect.TypeFor[modes.Clearance]():     words(modes.Clearances()),
 		reflect.TypeFor[spectrum.Kind]():       words(spectrum.Kinds()),
+		reflect.TypeFor[Effect]():              words(AllEffects()),
 		reflect.TypeFor[CreateFrom]():          words(CreateFroms()),
 		reflect.TypeFor[quantity.System]():     words(quantity.Systems()),
 		reflect.TypeFor[quantity.Dimension]():  words(quantity.Dimensions()),

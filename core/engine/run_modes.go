@@ -20,6 +20,13 @@ const (
 	mostSectionPoints = 4096
 )
 
+// usualDiameters and usualCircles are those of a table of usual length, which
+// the drawing then finds solved.
+const (
+	usualDiameters = 6
+	usualCircles   = 3
+)
+
 // notableAir is the mass of moving air, in units of the sheet's, that is worth
 // a word: it lowers a frequency by one percent.
 const notableAir = 0.02
@@ -33,28 +40,85 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 	if err := refuse(problems); err != nil {
 		return nil, err
 	}
+	effects, err := effectsWithout(request.Without)
+	if err != nil {
+		return nil, err
+	}
 	doc := &request.Document
+	real, err := realOf(doc)
+	if err != nil {
+		return nil, err
+	}
+	list, notes, err := solveLowest(real, effects, request.Count)
+	if err != nil {
+		return nil, err
+	}
 	sigma := doc.Sheet.ArealDensity()
 	result := &ModesResult{
 		ArealDensity: sigma,
 		WaveSpeed:    math.Sqrt(doc.Tension.Nominal / sigma),
-		Assumptions:  idealAssumptions(),
-		Cautions:     []string{},
+		Applies:      effectsOf(doc),
+		Assumptions:  realAssumptions(doc, effects, notes),
 	}
-	result.Cautions = append(result.Cautions, airCautions(doc, result)...)
-	for _, mode := range modes.Ideal(doc.Ring.Radius, doc.Tension.Nominal, sigma, request.Count) {
-		result.Modes = append(result.Modes, Mode{
-			M:           mode.M,
-			N:           mode.N,
-			Frequency:   mode.Frequency,
-			Zero:        mode.Zero,
-			CircleRadii: mode.CircleRadii,
-			NodalLines:  mode.NodalLines(),
-			Distances:   distances(mode.Frequency, doc.Avoid.Lines),
-			BelowLowest: mode.Frequency < doc.Avoid.Lowest,
-		})
+	around := doc.Surroundings
+	if state, err := air.Moist(around.Temperature, around.Pressure, around.Humidity); err == nil {
+		result.AirDensity = state.Density
+		result.MassRatio = state.Density * doc.Ring.Radius / sigma
 	}
+	for _, mode := range list {
+		result.Modes = append(result.Modes, modeLine(doc, mode))
+	}
+	result.Cautions = effectCautions(doc, request.Without)
 	return result, nil
+}
+
+func modeLine(doc *diaphragm.Diaphragm, mode modes.RealMode) Mode {
+	d := mode.Damping
+	line := Mode{
+		M: mode.M, N: mode.N,
+		Frequency:  mode.Frequency,
+		Error:      mode.Error,
+		Ideal:      mode.Ideal,
+		FluidShare: mode.FluidMass / (mode.SheetMass + mode.FluidMass),
+		Damping: ModeDamping{
+			Radiation: d.Radiation, Viscous: d.Viscous, Sheet: d.Sheet, Remainder: d.Remainder, Total: d.Total,
+			RadiationKnown: !mode.BeyondSound,
+		},
+		NodalLines:  modes.Mode{M: mode.M, N: mode.N}.NodalLines(),
+		Distances:   distances(mode.Frequency, doc.Avoid.Lines),
+		BelowLowest: mode.Frequency < doc.Avoid.Lowest,
+	}
+	if mode.FilmShare < 1 {
+		line.Kind = string(mode.Dominated()) + "-dominated"
+	}
+	if d.Total > 0 {
+		line.RingDown, line.Q = d.RingDown, d.Q
+	}
+	return line
+}
+
+// effectsOf lists the effects that a diaphragm has.
+func effectsOf(doc *diaphragm.Diaphragm) []Effect {
+	list := []Effect{EffectStiffness}
+	upper, lower := doc.Faces.Upper.Kind, doc.Faces.Lower.Kind
+	if upper != diaphragm.FaceVacuum || lower != diaphragm.FaceVacuum {
+		list = append(list, EffectFluid, EffectSound)
+	}
+	if upper == diaphragm.FaceCavity || lower == diaphragm.FaceCavity {
+		list = append(list, EffectCavity)
+	}
+	return list
+}
+
+// effectCautions warns where an effect that the diaphragm has is left out.
+func effectCautions(doc *diaphragm.Diaphragm, without []Effect) []string {
+	list := []string{}
+	for _, e := range effectsOf(doc) {
+		if slices.Contains(without, e) {
+			list = append(list, "You have left out the "+string(e)+": the frequencies are not those of the diaphragm that stands on site.")
+		}
+	}
+	return list
 }
 
 // distances returns the distance of a frequency to every line, nearest first.
@@ -81,40 +145,6 @@ func distances(frequency float64, lines []diaphragm.Line) []Distance {
 	return list
 }
 
-// airCautions fills in the air's density and mass ratio and says what the air
-// does to the frequencies.
-func airCautions(doc *diaphragm.Diaphragm, result *ModesResult) []string {
-	around := doc.Surroundings
-	state, err := air.Moist(around.Temperature, around.Pressure, around.Humidity)
-	if err != nil {
-		return []string{err.Error() + " The mass of the air is therefore not stated."}
-	}
-	result.AirDensity = state.Density
-	result.MassRatio = state.Density * doc.Ring.Radius / result.ArealDensity
-	share, known := modes.AirMass(result.MassRatio, doc.Faces)
-	switch {
-	case !known:
-		return []string{"The air behind the sheet is closed in. It is a spring and a mass, so the real frequencies " +
-			"differ from those of the ideal sheet, that of mode (0, 1) most."}
-	case share > notableAir:
-		return []string{"The air that moves with mode (0, 1) has about " + rounded(share) +
-			" times the mass of the sheet that moves: expect its frequency near " +
-			strconv.Itoa(int(math.Round(100/math.Sqrt(1+share)))) +
-			" % of the ideal one. The higher modes are lowered too, by less."}
-	}
-	return nil
-}
-
-// rounded writes two significant digits.
-func rounded(x float64) string {
-	if x >= 100 {
-		return strconv.FormatFloat(math.Round(x), 'f', -1, 64)
-	}
-	text := strconv.FormatFloat(x, 'g', 2, 64)
-	value, _ := strconv.ParseFloat(text, 64)
-	return strconv.FormatFloat(value, 'f', -1, 64)
-}
-
 func runShape(_ context.Context, request *ShapeRequest) (*ShapeResult, error) {
 	problems := slices.Concat(
 		outside("m", "The number of nodal diameters", request.M, 0, mostOrder),
@@ -127,7 +157,56 @@ func runShape(_ context.Context, request *ShapeRequest) (*ShapeResult, error) {
 	if err := refuse(problems); err != nil {
 		return nil, err
 	}
-	shape := modes.NewShape(request.M, request.N, request.Orientation)
+	if request.Document == nil {
+		return drawShape(request, modes.NewShape(request.M, request.N, request.Orientation)), nil
+	}
+	mode, err := realModeOf(request)
+	if err != nil {
+		return nil, err
+	}
+	return drawShape(request, modes.NewRealShape(mode, request.Orientation)), nil
+}
+
+// realModeOf finds the mode that a drawing is asked of.
+func realModeOf(request *ShapeRequest) (*modes.RealMode, error) {
+	problems := slices.Concat(
+		diaphragm.Validate(*request.Document),
+		outside("m", "The number of nodal diameters", request.M, 0, modes.MaxDiameters),
+		outside("n", "The number of nodal circles", request.N, 1, modes.MaxCircles),
+	)
+	if err := refuse(problems); err != nil {
+		return nil, err
+	}
+	effects, err := effectsWithout(request.Without)
+	if err != nil {
+		return nil, err
+	}
+	real, err := realOf(request.Document)
+	if err != nil {
+		return nil, err
+	}
+	solution, err := solve(real, effects, max(request.M, usualDiameters), max(request.N, usualCircles))
+	if err != nil {
+		return nil, err
+	}
+	for i := range solution.Modes {
+		if mode := &solution.Modes[i]; mode.M == request.M && mode.N == request.N {
+			return mode, nil
+		}
+	}
+	return nil, Fail("n", CodeRange, "This diaphragm has no such mode among those computed.")
+}
+
+// shaped is a mode shape that can be drawn.
+type shaped interface {
+	Raster(dst []float32, size int)
+	Section(dst []float32, angle float64)
+	CircleRadii() []float64
+	DiameterAngles() []float64
+	Lobes() []modes.Lobe
+}
+
+func drawShape(request *ShapeRequest, shape shaped) *ShapeResult {
 	result := &ShapeResult{
 		Raster:         make(Numbers, request.Size*request.Size),
 		Section:        make(Numbers, request.SectionPoints),
@@ -139,7 +218,7 @@ func runShape(_ context.Context, request *ShapeRequest) (*ShapeResult, error) {
 	for _, lobe := range shape.Lobes() {
 		result.Lobes = append(result.Lobes, Lobe{Radius: lobe.Radius, Angle: lobe.Angle, Value: lobe.Value})
 	}
-	return result, nil
+	return result
 }
 
 // outside refuses a whole number that a call does not take.

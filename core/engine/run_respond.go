@@ -6,6 +6,7 @@ import (
 	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
+	"hoopsheet/core/quantity"
 	"hoopsheet/core/response"
 )
 
@@ -97,7 +98,7 @@ func airWarnings(doc *diaphragm.Diaphragm) []string {
 	case !known:
 		return []string{"The air closed in behind the sheet is left out; it stiffens and slows the real motion, that of mode (0, 1) most."}
 	case share > notableAir:
-		return []string{"The air that moves with mode (0, 1) has about " + rounded(share) +
+		return []string{"The air that moves with mode (0, 1) has about " + quantity.FormatNumber(share, 2) +
 			" times the mass of the sheet that moves and is left out: the real motion is slower, and a blow of given momentum moves the sheet less."}
 	}
 	return []string{}

@@ -43,8 +43,8 @@ func TestRespondOfDemo(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if got := result.Period * table.Modes[0].Frequency; math.Abs(got-1) > 1e-14 {
-		t.Errorf("period times frequency of (0,1) is %v", got)
+	if got := result.Period * table.Modes[0].Ideal; math.Abs(got-1) > 1e-14 {
+		t.Errorf("period times the ideal frequency of (0,1) is %v", got)
 	}
 	if len(result.Strongest) == 0 || len(result.Assumptions) == 0 || len(result.Warnings) == 0 || !strings.Contains(result.Warnings[0], "The air that moves") {
 		t.Errorf("%v %q %q", result.Strongest, result.Assumptions, result.Warnings)

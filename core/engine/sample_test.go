@@ -50,6 +50,7 @@ func sampleRequests(t *testing.T) map[string]string {
 		"check": `{"checks":[{"group":"g","name":"n","quantity":"zero-j","arguments":[0,1],"expected":"2.4048","source":"s"}]}`,
 		"team":  `{"text":"{\"units\":\"si\"}"}`,
 		"edit":  `{"document":` + doc + `,"drafts":{},"units":{},"edits":[{"field":"sheet.thickness","action":"set","text":"23 um"}],"system":"si"}`,
+		"costs": `{"document":` + doc + `,"m":0,"n":1}`,
 		"modes": `{"document":` + doc + `,"count":24}`,
 		"shape": `{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41}`,
 		"respond": `{"document":` + doc + `,"displacement":{"kind":"bulge","peak":0.002,"radius":0,"angle":0,"width":0.1,"formula":""},"velocity":` + rest +

@@ -53,13 +53,15 @@ func (s *Shape) CircleRadii() []float64 {
 
 // DiameterAngles returns the angles of the nodal diameters, rad, in order,
 // each from 0 up to but not including pi.
-func (s *Shape) DiameterAngles() []float64 {
-	angles := make([]float64, s.M)
-	if s.M == 0 {
+func (s *Shape) DiameterAngles() []float64 { return diameterAngles(s.M, s.Orientation) }
+
+func diameterAngles(m int, orientation float64) []float64 {
+	angles := make([]float64, m)
+	if m == 0 {
 		return angles
 	}
-	step := math.Pi / float64(s.M)
-	first := math.Mod(s.Orientation+step/2, step)
+	step := math.Pi / float64(m)
+	first := math.Mod(orientation+step/2, step)
 	if first < 0 {
 		first += step
 	}

@@ -39,6 +39,10 @@ export type Dimension =
   | 'speed'
   | 'mass';
 /**
+ * Effect names one effect that a calculation can leave out.
+ */
+export type Effect = 'stiffness' | 'fluid' | 'sound' | 'cavity';
+/**
  * FaceKind says how the fluid on one side of the sheet is bounded.
  */
 export type FaceKind = 'open' | 'baffled' | 'cavity' | 'vacuum';
@@ -193,6 +197,35 @@ export interface ChosenPeak {
   uncertainty: number;
   m: number;
   n: number;
+}
+/**
+ * CostStep is one more effect taken into account.
+ */
+export interface CostStep {
+  /**
+   * Name in words: "ideal sheet", "+ stiffness".
+   */
+  name: string;
+  /**
+   * Frequency with this effect and those before it, Hz, and its change against the step before, relative.
+   */
+  frequency: number;
+  change: number;
+}
+/**
+ * CostsRequest asks what each effect does to one mode, and what its frequency is most sensitive to.
+ */
+export interface CostsRequest {
+  document: Diaphragm;
+  m: number;
+  n: number;
+}
+/**
+ * CostsResult lists the effects one after another, and the sensitivities.
+ */
+export interface CostsResult {
+  steps: CostStep[];
+  sensitivities: Sensitivity[];
 }
 /**
  * CreateRequest makes a new diaphragm: the demonstration, an empty one, or a copy of a given document (a hand-over that is kept).
@@ -641,17 +674,31 @@ export interface Mode {
   m: number;
   n: number;
   /**
-   * Frequency of the ideal sheet, Hz.
+   * Frequency, Hz, with the error of the computation, Hz.
    */
   frequency: number;
+  error: number;
   /**
-   * Zero is j_mn, the n-th positive zero of J_m.
+   * Ideal frequency of the ideal sheet in vacuum, Hz.
    */
-  zero: number;
+  ideal: number;
   /**
-   * CircleRadii of the nodal circles inside the rim, r/a, inside out.
+   * FluidShare is the share of the moving mass that is fluid.
    */
-  circleRadii: number[];
+  fluidShare: number;
+  /**
+   * Damping ratios by cause.
+   */
+  damping: ModeDamping;
+  /**
+   * RingDown to -60 dB, s, and Q; 0 without damping.
+   */
+  ringDown: number;
+  q: number;
+  /**
+   * Kind is "film-dominated" or "cavity-dominated" for the modes of a diaphragm with a cavity, by where most of the strain energy is; empty otherwise.
+   */
+  kind: string;
   /**
    * NodalLines in words.
    */
@@ -664,6 +711,23 @@ export interface Mode {
    * BelowLowest is true when the mode lies below the lowest frequency allowed.
    */
   belowLowest: boolean;
+}
+/**
+ * ModeDamping are ratios to critical damping.
+ */
+export interface ModeDamping {
+  /**
+   * Radiation of sound and Viscous friction of the fluid are computed; Sheet is the loss of the material by its share of the energy; Remainder is what was given.
+   */
+  radiation: number;
+  viscous: number;
+  sheet: number;
+  remainder: number;
+  total: number;
+  /**
+   * RadiationKnown is false where nothing is stated of radiation.
+   */
+  radiationKnown: boolean;
 }
 /**
  * ModeName names a mode by its nodal diameters and circles.
@@ -685,7 +749,7 @@ export interface ModeShare {
   frequency: number;
 }
 /**
- * ModesRequest asks for the modes of the ideal sheet.
+ * ModesRequest asks for the modes of the diaphragm as it stands.
  */
 export interface ModesRequest {
   document: Diaphragm;
@@ -693,6 +757,10 @@ export interface ModesRequest {
    * Count of modes to list, lowest first; 1 to 400.
    */
   count: number;
+  /**
+   * Without names effects to leave out.
+   */
+  without?: Effect[];
 }
 /**
  * ModesResult is the mode table.
@@ -709,6 +777,10 @@ export interface ModesResult {
   airDensity: number;
   massRatio: number;
   modes: Mode[];
+  /**
+   * Applies lists the effects that this diaphragm has, in or left out.
+   */
+  applies: Effect[];
   assumptions: string[];
   cautions: string[];
 }
@@ -1259,6 +1331,17 @@ export interface SendResult {
   page: HandOverPage;
 }
 /**
+ * Sensitivity is what one input does to the frequency.
+ */
+export interface Sensitivity {
+  field: string;
+  name: string;
+  /**
+   * PerPercent is the change of frequency in percent for one percent of the input: d ln f / d ln x.
+   */
+  perPercent: number;
+}
+/**
  * Settings are the choices of this browser.
  */
 export interface Settings {
@@ -1306,6 +1389,11 @@ export interface Shape {
  * ShapeRequest asks for the drawing of one mode.
  */
 export interface ShapeRequest {
+  /**
+   * Document of the diaphragm; without it the ideal sheet is drawn.
+   */
+  document?: Diaphragm;
+  without?: Effect[];
   m: number;
   n: number;
   /**
@@ -1634,8 +1722,10 @@ export interface CallMap {
   "team": { request: TeamRequest; result: TeamResult };
   /** Changes fields of a diaphragm by what was typed, and gives the rows of its form. */
   "edit": { request: EditRequest; result: EditResult };
-  /** Lists the modes of the ideal sheet with their distance to the lines to keep clear of. */
+  /** Lists the modes of the diaphragm as it stands, with damping and the distance to the lines to keep clear of. */
   "modes": { request: ModesRequest; result: ModesResult };
+  /** Says what each effect does to one mode, and what its frequency is most sensitive to. */
+  "costs": { request: CostsRequest; result: CostsResult };
   /** Draws one mode: raster, section, nodal lines and lobes. */
   "shape": { request: ShapeRequest; result: ShapeResult };
   /** Computes the motion after initial values: frames, histories, largest travel, missed energy. */

@@ -2,7 +2,7 @@
  * The plan view of the round sheet on a canvas: signed colour map, contours (solid where up, dotted where down),
  * nodal lines as heavier dashes, + and - at the lobes, the ring with its clamps.
  *
- * All input is a square raster around the unit disc (row 0 at the top) or angles and radii in units of the ring's.
+ * All input is a square raster around the unit disc (row 0 at the top, values at the centres of the pixels) or angles and radii in units of the ring's.
  */
 import { contour } from './contour.js';
 import type { DrawingColours } from './palette.js';
@@ -107,9 +107,7 @@ export class PlanDrawing {
     context.arc(width / 2, width / 2, a, 0, 2 * Math.PI);
     context.clip();
     context.imageSmoothingEnabled = true;
-    // The raster's outermost pixel centres lie on the rim.
-    const side = (2 * a * plan.size) / (plan.size - 1);
-    context.drawImage(this.fill, width / 2 - side / 2, width / 2 - side / 2, side, side);
+    context.drawImage(this.fill, width / 2 - a, width / 2 - a, 2 * a, 2 * a);
     context.restore();
   }
 
@@ -123,9 +121,10 @@ export class PlanDrawing {
       }
       this.lines = { raster: plan.raster, largest: plan.largest, contours: plan.contours, path };
     }
-    const unit = (2 * a) / (plan.size - 1);
+    // Contours run between the centres of the pixels.
+    const unit = (2 * a) / plan.size;
     context.save();
-    context.translate(width / 2 - a, width / 2 - a);
+    context.translate(width / 2 - a + unit / 2, width / 2 - a + unit / 2);
     context.scale(unit, unit);
     context.strokeStyle = colours.ink;
     context.globalAlpha = 0.55;

@@ -14,7 +14,7 @@ export class PolarRaster {
     this.raster = new Float32Array(count);
     for (let y = 0; y < size; y++) {
       for (let x = 0; x < size; x++) {
-        this.place(y * size + x, (2 * x) / (size - 1) - 1, 1 - (2 * y) / (size - 1));
+        this.place(y * size + x, (2 * x + 1) / size - 1, 1 - (2 * y + 1) / size);
       }
     }
   }

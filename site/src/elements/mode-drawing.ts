@@ -2,7 +2,7 @@
 import { css, html, LitElement, svg, type PropertyValues, type TemplateResult } from 'lit';
 import { customElement, property, query, state } from 'lit/decorators.js';
 
-import type { ShapeResult } from '../contract.js';
+import type { Diaphragm, Effect, ShapeResult } from '../contract.js';
 import { Motion } from '../draw/motion.js';
 import { coloursAt, printColours } from '../draw/palette.js';
 import { type Plan, PlanDrawing } from '../draw/plan.js';
@@ -34,6 +34,9 @@ export class HoopModeDrawing extends LitElement {
     `,
   ];
 
+  /** The diaphragm whose mode is drawn; without it, the ideal sheet's. */
+  @property({ attribute: false }) document: Diaphragm | null = null;
+  @property({ attribute: false }) without: readonly Effect[] = [];
   @property({ type: Number }) m = 0;
   @property({ type: Number }) n = 1;
   @property({ type: Number }) clamps = 0;
@@ -70,15 +73,16 @@ export class HoopModeDrawing extends LitElement {
   };
 
   protected override willUpdate(changed: PropertyValues<this>): void {
-    if (changed.has('m') || changed.has('n')) {
+    if (changed.has('m') || changed.has('n') || changed.has('document') || changed.has('without')) {
       void this.load();
     }
   }
 
   private async load(): Promise<void> {
     const answer = await engine.call('shape', {
+      ...(this.document ? { document: this.document, without: [...this.without] } : {}),
       m: this.m, n: this.n, orientation: Math.PI / 9, size: rasterSize, sectionAngle: this.sectionAngle, sectionPoints,
-    }, { key: 'mode-drawing', quick: true });
+    }, { key: 'mode-drawing' });
     if (answer.kind === 'result') {
       this.shape = answer.result;
     }

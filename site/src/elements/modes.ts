@@ -2,12 +2,13 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { customElement, state } from 'lit/decorators.js';
 
-import type { Distance, Mode, ModesResult } from '../contract.js';
+import type { Distance, Effect, Mode, ModesResult } from '../contract.js';
 import { engine, sentences } from '../engine/client.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
 import { derivedTable } from './derived.js';
 import './field.js';
+import './mode-costs.js';
 import './mode-drawing.js';
 import { assumptions, caution } from './notes.js';
 import { brief, figure, percent } from './number-text.js';
@@ -17,8 +18,11 @@ import type { ShownTable } from './table-copy.js';
 
 /** The fields that move the modes most stand beside the drawing; the others are on Specify. */
 const shownFields = ['ring.radius', 'tension.nominal', 'sheet.thickness'];
-const shownDerived = ['sigma', 'rho', 'mass-ratio', 'stress-share'];
+const shownDerived = ['sigma', 'rho', 'mass-ratio'];
 const counts = [12, 24, 48, 100, 200];
+const effectNames: Readonly<Record<Effect, string>> = {
+  stiffness: 'bending stiffness', fluid: 'fluid that moves along', sound: 'its sound', cavity: 'cavity',
+};
 
 @customElement('hoop-modes')
 export class HoopModes extends LitElement {
@@ -27,7 +31,9 @@ export class HoopModes extends LitElement {
     css`
       tbody tr { cursor: pointer; }
       .choose { min-height: 36px; padding: 2px 10px; font-variant-numeric: tabular-nums; }
-      .count { display: flex; align-items: center; gap: 8px; flex-wrap: wrap; }
+      .count { display: flex; align-items: center; gap: 8px 18px; flex-wrap: wrap; }
+      dl { display: grid; grid-template-columns: 1fr auto; gap: 3px 14px; margin: 12px 0 0; font-size: 0.94em; }
+      dd { margin: 0; text-align: end; font-variant-numeric: tabular-nums; }
       .count select { width: auto; }
       details { margin-top: 12px; }
       @media print {
@@ -43,14 +49,17 @@ export class HoopModes extends LitElement {
   @state() private refusal = '';
   @state() private chosen = { m: 0, n: 1 };
   @state() private count = 24;
+  @state() private without: readonly Effect[] = [];
+  @state() private sort: 'frequency' | 'order' | 'ring-down' = 'frequency';
   private asked: unknown = null;
 
   constructor() {
     super();
     new SessionController(this, () => void this.compute());
     session.addEventListener('opened', () => {
-      const desk = session.recall('modes', { m: 0, n: 1, count: 24 });
+      const desk = session.recall('modes', { m: 0, n: 1, count: 24, without: [] as Effect[] });
       this.chosen = { m: desk.m, n: desk.n };
+      this.without = desk.without;
       this.count = counts.includes(desk.count) ? desk.count : 24;
       void this.compute();
     });
@@ -58,12 +67,12 @@ export class HoopModes extends LitElement {
 
   private async compute(): Promise<void> {
     const { document } = session;
-    const key = `${this.count} ${JSON.stringify(document)}`;
+    const key = `${this.count} ${this.without.join()} ${JSON.stringify(document)}`;
     if (!document || key === this.asked) {
       return;
     }
     this.asked = key;
-    const answer = await engine.call('modes', { document, count: this.count }, { key: 'modes', quick: true });
+    const answer = await engine.call('modes', { document, count: this.count, without: [...this.without] }, { key: 'modes' });
     if (answer.kind === 'result') {
       this.result = answer.result;
       this.refusal = '';
@@ -78,7 +87,7 @@ export class HoopModes extends LitElement {
   }
 
   private keepDesk(): void {
-    session.remember('modes', { ...this.chosen, count: this.count });
+    session.remember('modes', { ...this.chosen, count: this.count, without: this.without });
   }
 
   private setCount(event: Event): void {
@@ -102,42 +111,82 @@ export class HoopModes extends LitElement {
           ${derivedTable(session.derived.filter((d) => shownDerived.includes(d.id)))}
           ${this.refusal ? html`<p class="error" role="alert">${this.refusal}</p>` : nothing}
           ${(this.result?.cautions ?? []).map((c) => caution(c, 'Read this first'))}
+          <hoop-mode-costs .document=${document} .m=${this.chosen.m} .n=${this.chosen.n}></hoop-mode-costs>
         </div>
         <div class="drawing">
           <h2>Mode (${this.chosen.m}, ${this.chosen.n})</h2>
-          <hoop-mode-drawing .m=${this.chosen.m} .n=${this.chosen.n} .clamps=${document.ring.clamps}
-            .caption=${mode ? `${figure(mode.frequency)} Hz as an ideal sheet; ${mode.nodalLines}` : ''}></hoop-mode-drawing>
+          <hoop-mode-drawing .document=${document} .without=${this.without} .m=${this.chosen.m} .n=${this.chosen.n} .clamps=${document.ring.clamps}
+            .caption=${mode ? `${figure(mode.frequency)} Hz; ${mode.nodalLines}` : ''}></hoop-mode-drawing>
+          ${mode ? this.modeFigures(mode) : nothing}
         </div>
       </div></section>
       ${this.result ? this.table(this.result) : nothing}`;
+  }
+
+  private modeFigures(mode: Mode): TemplateResult {
+    const d = mode.damping;
+    return html`<dl id="mode-figures">
+      <dt>ideal sheet in vacuum</dt><dd>${figure(mode.ideal)} Hz</dd>
+      <dt>error of the computation</dt><dd>${mode.error > 0 ? `below ${figure(mode.error, 1)} Hz` : 'none to speak of'}</dd>
+      <dt>fluid in the moving mass</dt><dd>${percent(mode.fluidShare, 3)}</dd>
+      <dt>damping ratio</dt><dd>${percent(d.total, 3)}</dd>
+      <dt>of it radiation, computed</dt><dd>${d.radiationKnown ? percent(d.radiation, 2) : 'not stated'}</dd>
+      <dt>friction of the fluid, computed</dt><dd>${percent(d.viscous, 2)}</dd>
+      <dt>loss of the sheet, by its energy</dt><dd>${percent(d.sheet, 2)}</dd>
+      <dt>remainder, as given</dt><dd>${percent(d.remainder, 2)}</dd>
+      <dt>quality factor</dt><dd>${mode.q > 0 ? figure(mode.q, 3) : '–'}</dd>
+    </dl>`;
+  }
+
+  private toggle(effect: Effect): void {
+    this.without = this.without.includes(effect) ? this.without.filter((e) => e !== effect) : [...this.without, effect];
+    this.keepDesk();
+    void this.compute();
+  }
+
+  private sorted(modes: readonly Mode[]): readonly Mode[] {
+    switch (this.sort) {
+      case 'order':
+        return [...modes].sort((a, b) => a.m - b.m || a.n - b.n);
+      case 'ring-down':
+        return [...modes].sort((a, b) => b.ringDown - a.ringDown);
+      default:
+        return modes;
+    }
   }
 
   private table(result: ModesResult): TemplateResult {
     const table = shownTable(result.modes);
     return html`<section class="panel" aria-labelledby="modes-title">
       <h2 id="modes-title">The lowest ${result.modes.length} modes</h2>
-      <label class="count">Modes to list
-        <select @change=${this.setCount}>${counts.map((c) => html`<option ?selected=${c === this.count}>${c}</option>`)}</select></label>
+      <div class="count">
+        <label>Modes to list <select @change=${this.setCount}>${counts.map((c) => html`<option ?selected=${c === this.count}>${c}</option>`)}</select></label>
+        <label>sorted by <select id="sort" @change=${(e: Event) => { this.sort = (e.target as HTMLSelectElement).value as typeof this.sort; }}>
+          <option value="frequency">frequency</option><option value="order">nodal diameters</option><option value="ring-down">ring-down</option></select></label>
+      </div>
+      <fieldset class="count"><legend class="unseen">Effects taken into account</legend>
+        ${result.applies.map((e) => html`<label><input type="checkbox" .checked=${!this.without.includes(e)} @change=${() => this.toggle(e)} /> ${effectNames[e]}</label>`)}</fieldset>
       <div class="table-scroll"><table id="mode-table">
         <thead><tr>
-          <th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">ideal frequency</th>
-          <th scope="col" class="number">to (0, 1)</th><th scope="col">nodal lines</th><th scope="col">nearest line to keep clear of</th>
+          <th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">frequency</th><th scope="col" class="number">ideal</th>
+          <th scope="col" class="number">rings for 60 dB</th><th scope="col">nodal lines</th><th scope="col">nearest line to keep clear of</th>
         </tr></thead>
-        <tbody>${result.modes.map((mode) => this.modeRow(mode, result.modes[0]))}</tbody>
+        <tbody>${this.sorted(result.modes).map((mode) => this.modeRow(mode))}</tbody>
       </table></div>
       <hoop-table-actions .table=${table} .whole=${result}></hoop-table-actions>
       ${assumptions(result.assumptions)}
     </section>`;
   }
 
-  private modeRow(mode: Mode, lowest: Mode | undefined): TemplateResult {
+  private modeRow(mode: Mode): TemplateResult {
     const chosen = mode.m === this.chosen.m && mode.n === this.chosen.n;
     return html`<tr class=${chosen ? 'chosen' : ''} @click=${() => this.pick(mode)}>
       <th scope="row"><button type="button" class="choose" aria-pressed=${chosen ? 'true' : 'false'}
         aria-label="Draw mode (${mode.m}, ${mode.n})">(${mode.m}, ${mode.n})</button></th>
       <td class="number">${figure(mode.frequency)} Hz</td>
-      <td class="number">${lowest ? figure(mode.frequency / lowest.frequency, 4) : ''}</td>
-      <td>${mode.nodalLines}</td>
+      <td class="number">${figure(mode.ideal)} Hz</td>
+      <td class="number">${mode.ringDown > 0 ? `${figure(mode.ringDown, 2)} s` : '–'}</td>
+      <td>${mode.nodalLines}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
       <td>${nearest(mode)}</td>
     </tr>`;
   }
@@ -156,10 +205,10 @@ function words(distance: Distance): string {
 function shownTable(modes: readonly Mode[]): ShownTable {
   return {
     name: 'modes',
-    heads: ['m', 'n', 'ideal frequency, Hz', 'zero of J_m', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
+    heads: ['m', 'n', 'frequency, Hz', 'ideal, Hz', 'rings for 60 dB, s', 'damping ratio', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
     rows: modes.map((mode) => {
       const d = mode.distances[0];
-      return [mode.m, mode.n, mode.frequency, mode.zero, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
+      return [mode.m, mode.n, mode.frequency, mode.ideal, mode.ringDown, mode.damping.total, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
     }),
   };
 }
