@@ -66,7 +66,7 @@ var namedFigures = map[string]figure{
 	"sigma":        {"areal density", "kg/m²"},
 	"c":            {"wave speed of the sheet", "m/s"},
 	"mass-ratio":   {"air against sheet, ρa/σ", ""},
-	"tension":      {"tension from the tap, ideal sheet", "N/m"},
+	"tension":      {"tension from the tap", "N/m"},
 	"tension-low":  {"its interval of 95 % coverage, from", "N/m"},
 	"tension-high": {"its interval of 95 % coverage, to", "N/m"},
 }
@@ -76,7 +76,7 @@ func figureKind(id string) figure {
 		return kind
 	}
 	if parts := strings.Split(id, "."); len(parts) == 3 && parts[0] == "f" {
-		return figure{"frequency of mode (" + parts[1] + ", " + parts[2] + "), ideal sheet", "Hz"}
+		return figure{"frequency of mode (" + parts[1] + ", " + parts[2] + ")", "Hz"}
 	}
 	return figure{"figure " + id, ""}
 }

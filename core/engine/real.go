@@ -91,6 +91,11 @@ func realAssumptions(doc *diaphragm.Diaphragm, effects modes.Effects, notes []mo
 	return append(list, "Clamps, leaks and the ring lose energy too: that remainder is the damping ratio given, not computed.")
 }
 
+// assumptionsOf are those of a diaphragm with all its effects.
+func assumptionsOf(doc diaphragm.Diaphragm) []string {
+	return realAssumptions(&doc, modes.AllEffects(), nil)
+}
+
 // solutionKey names a solved diaphragm.
 type solutionKey struct {
 	real         modes.Real

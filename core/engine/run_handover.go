@@ -93,12 +93,12 @@ func handOverPage(parcel diaphragm.Parcel, now []diaphragm.Figure, read []Handed
 		NowEngine:     Version,
 		Sent:          parcel.Sent,
 		Verdict:       verdict,
-		Assumptions:   idealAssumptions(),
+		Assumptions:   assumptionsOf(parcel.Document),
 		Cautions:      cautions(parcel.Document),
 		Disclaimers: []string{
 			"Anybody who has this link or file can read it.",
 			"It is a record of figures, not a signature: nothing in it proves who made it or that it is unchanged since.",
-			"Figures of the ideal sheet leave out the air that moves with it. Do not accept or refuse a built diaphragm on them alone.",
+			"Do not accept or refuse a built diaphragm on these figures alone.",
 		},
 	}
 }
