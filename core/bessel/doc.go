@@ -18,7 +18,7 @@
 // # Accuracy
 //
 // In ulp of the value or, where a function oscillates (x >= nu), of the
-// envelope sqrt(J^2 + Y^2), measured against mpmath at 40 digits on 31 000
+// envelope sqrt(J^2 + Y^2), measured against mpmath at 40 digits on 33 000
 // points in testdata/bessel; package accuracy holds the regions, and its test
 // every region to its promise:
 //

@@ -6,7 +6,7 @@
 writes jy.tsv.gz, ik.tsv.gz, zeros.tsv.gz and annulus.tsv.gz beside this file.
 Every argument is written so that reading it as a double gives exactly the
 number whose function value stands beside it. See README.md for the columns.
-Needs mpmath only. Takes about ten minutes on two cores.
+Needs mpmath only. Takes ten to twenty minutes on two cores.
 """
 import gzip
 import math
@@ -195,6 +195,10 @@ def points_jy(rng):
         add("far", order(rng, 1000), logbetween(rng, 200, 1e6))
     for _ in range(600):
         add("far", order(rng, 3), logbetween(rng, 200, 1e6))
+    for _ in range(700):  # where Y starts from its series
+        add("start", order(rng, 40), between(rng, 0.05, 1.2))
+    for _ in range(700):  # far above the argument
+        add("deep", order(rng, 1000), between(rng, 1, 400))
     return pts
 
 
@@ -223,6 +227,8 @@ def points_ik(rng):
         nu = order(rng, 100)
         x = [2.0, 25.0, 30.0, 2 * math.sqrt(nu + 1)][c]
         pts.append(("switch", nu, math.nextafter(x, x + rng.choice([-1, 0, 1]))))
+    for _ in range(700):  # where K starts from its series
+        pts.append(("start", between(rng, 0, 1.6), between(rng, 0.05, 1.2)))
     return [p for p in pts if p[2] > 0]
 
 

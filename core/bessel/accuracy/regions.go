@@ -64,6 +64,7 @@ var cylinder = []probe{
 	j("J, orders below 2, x to 60", 2, code("low")),
 	j("J, orders to 1000, x 200 to 1100", 2, code("high")),
 	j("J, orders to 1000, x 200 to 1e6", 2, code("far")),
+	j("J, orders to 1000, x to 400", 2, code("deep")),
 	j("J, all whole orders to 200", 2, both(row.whole, upTo200)),
 	jseq("JSeq, whole orders to 200", 2, upTo200),
 	jseq("JSeq, whole orders to 1000, x to 1e6", 2, func(r row) bool { return !upTo200(r) }),
