@@ -302,6 +302,9 @@ test('the single file keeps records on the page and finds them again', async () 
     while (ids.length === 0) {
       ids = await page.evaluate(keysOfRecords);
     }
+    if (page.workers().length === 0) {
+      await page.waitForEvent('worker');
+    }
     workers.push(...await Promise.all(page.workers().map((worker) => worker.evaluate(() => self.name))));
     await page.close();
     return ids;

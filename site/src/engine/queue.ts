@@ -87,7 +87,11 @@ export class Queue implements Owner {
   heard(message: Result | Refused | Progress | Panic): void {
     const job = this.#running;
     if (message.type === 'panic') {
+      // The call that panicked has been answered; what was sent after it is sent again.
       this.#running = undefined;
+      if (job) {
+        this.#waiting.unshift(job);
+      }
       this.channel.died(message.message);
       return;
     }
