@@ -268,7 +268,7 @@ test('the browser is killed while it saves: no acknowledged save is lost', async
     assert.equal(opened.stamp, made.stamp + found);
     await second.kill();
   } finally {
-    await delay(100); // helper processes of the killed browser still write into the profile
+    await delay(100); // child processes of the killed browser still write into the profile
     await removeProfile(profile);
   }
 });
