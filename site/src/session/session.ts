@@ -299,12 +299,20 @@ export class Session extends EventTarget {
     if (this.editing) {
       await this.editing;
     }
-    this.saving ??= this.runSaves();
+    if (this.due) {
+      this.saving ??= this.runSaves();
+    }
     await this.saving;
   }
 
+  /** True when there is something to write, and it may be written. */
+  private get due(): boolean {
+    return this.dirty && this.kept && this.document !== null && this.keeping !== 'conflict';
+  }
+
+  /** Started only when a write is due: it must not end before it is remembered as running. */
   private async runSaves(): Promise<void> {
-    while (this.dirty && this.kept && this.document && this.keeping !== 'conflict') {
+    while (this.due && this.document) {
       clearTimeout(this.timer);
       this.dirty = false;
       this.keeping = 'saving';
