@@ -5,6 +5,8 @@ import (
 	"math"
 	"strings"
 	"testing"
+
+	"hoopsheet/core/air"
 )
 
 const (
@@ -66,7 +68,7 @@ func TestListsOfLinesAreNeverNull(t *testing.T) {
 }
 
 func TestSameContent(t *testing.T) {
-	base := Demo(testID, testCreated)
+	base := richDocument()
 	kept := cloned(base)
 	kept.Revision = 7
 	if !SameContent(base, kept) {
@@ -77,13 +79,21 @@ func TestSameContent(t *testing.T) {
 	if !SameContent(empty, none) {
 		t.Error("no lines differ from an empty list")
 	}
+	spelt := richDocument()
+	spelt.Tension.Rim, spelt.Faces.Upper.Fluid, spelt.Attached = RimClamped, air.FluidAir, Attached{}
+	short := richDocument()
+	short.Tension.Rim, short.Faces.Upper.Fluid = "", ""
+	short.Attached = Attached{Patches: []Patch{}, Strips: []Strip{}}
+	if !SameContent(spelt, short) {
+		t.Error("spelling out what is meant anyway counts as content")
+	}
 	for _, f := range FieldsOf(base) {
 		other := cloned(base)
 		change(f, &other)
 		if SameContent(base, other) {
 			t.Errorf("a change of %s is no change", f.Path)
 		}
-		if !SameContent(base, Demo(testID, testCreated)) {
+		if !SameContent(base, richDocument()) {
 			t.Fatalf("changing a copy at %s changed the original", f.Path)
 		}
 	}
@@ -92,6 +102,9 @@ func TestSameContent(t *testing.T) {
 		"created":  func(d *Diaphragm) { d.Created = "" },
 		"invented": func(d *Diaphragm) { d.Invented = false },
 		"line":     func(d *Diaphragm) { d.Avoid.Lines = d.Avoid.Lines[:1] },
+		"harmonic": func(d *Diaphragm) { d.Tension.Harmonics = nil },
+		"patch":    func(d *Diaphragm) { d.Attached.Patches = d.Attached.Patches[1:] },
+		"strip":    func(d *Diaphragm) { d.Attached.Strips = append(d.Attached.Strips, Strip{}) },
 	} {
 		other := cloned(base)
 		change(&other)
@@ -108,6 +121,12 @@ func change(f Field, doc *Diaphragm) {
 		*f.number(doc) += 1
 	case KindCount:
 		*f.count(doc) += 1
+	case KindChoice:
+		if f.flag != nil {
+			*f.flag(doc) = !*f.flag(doc)
+			return
+		}
+		*f.text(doc) += "x"
 	default:
 		*f.text(doc) += "x"
 	}

@@ -24,6 +24,7 @@ func Apply(doc Diaphragm, drafts, units map[string]string, edits []Edit, system 
 		e.perform(edit)
 		e.retryDrafts()
 	}
+	e.doc = normal(e.doc)
 	return e.doc, e.drafts, e.units, e.allProblems()
 }
 
@@ -57,10 +58,10 @@ func (e *editor) fail(field string, code Code, message string) {
 func (e *editor) perform(edit Edit) {
 	switch edit.Action {
 	case ActionAdd:
-		e.addLine(edit)
+		e.addEntry(edit)
 		return
 	case ActionRemove:
-		e.removeLine(edit)
+		e.removeEntry(edit)
 		return
 	}
 	f, ok := e.field(edit.Field)
@@ -82,7 +83,7 @@ func (e *editor) perform(edit Edit) {
 
 // field finds a field that the document has.
 func (e *editor) field(path string) (Field, bool) {
-	if i, _, isLine := splitLinePath(path); isLine && i >= len(e.doc.Avoid.Lines) {
+	if l, i, _, isEntry := entryOf(path); isEntry && i >= l.count(&e.doc) {
 		return Field{}, false
 	}
 	return FieldByPath(path)
@@ -130,19 +131,20 @@ func (e *editor) attempt(f Field, text string) (changed Diaphragm, reading quant
 	return doc, reading, nil
 }
 
-// coupleFaces keeps open on both faces or on neither after one was set.
+// coupleFaces keeps open on both faces or on neither after one was set, and
+// one fluid where both are open.
 func coupleFaces(f Field, doc *Diaphragm) {
 	edited, other := &doc.Faces.Upper, &doc.Faces.Lower
 	switch f.Path {
-	case "faces.upper.kind":
-	case "faces.lower.kind":
+	case "faces.upper.kind", "faces.upper.fluid":
+	case "faces.lower.kind", "faces.lower.fluid":
 		edited, other = other, edited
 	default:
 		return
 	}
 	switch {
 	case edited.Kind == FaceOpen:
-		other.Kind = FaceOpen
+		other.Kind, other.Fluid = FaceOpen, edited.Fluid
 	case other.Kind == FaceOpen:
 		other.Kind = FaceBaffled
 	}

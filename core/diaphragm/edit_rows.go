@@ -10,7 +10,8 @@ import (
 // just made, the rows of quantities say how an unusual text was read. A field
 // with a draft shows the draft and what is wrong with it.
 //
-// The depth of a cavity has a row only where its face is a cavity.
+// A field that applies only with another one, such as the depth of a cavity,
+// has a row only there.
 func Rows(doc Diaphragm, drafts, units map[string]string, system quantity.System, edits ...Edit) []Row {
 	e := newEditor(doc, drafts, units, system)
 	wrong := map[string]string{}
@@ -43,8 +44,7 @@ func (e *editor) row(f Field) Row {
 	row := Row{
 		Field: f.Path, Group: f.Group, Symbol: f.Symbol, Name: f.Name, Help: f.Help, Kind: f.Kind,
 		Text: f.write(&e.doc, unit), Units: []string{}, Choices: []Choice{},
-		// A depth that is shown is needed.
-		Optional: f.Optional && f.shown == nil,
+		Optional: f.Optional && !f.neededWhereShown,
 	}
 	row.Choices = append(row.Choices, f.Choices...)
 	if f.Kind == KindQuantity {

@@ -50,6 +50,18 @@ func (f Field) read(doc *Diaphragm, text string, unit quantity.Unit) (quantity.R
 				text = c.Value
 			}
 		}
+		if f.flag != nil {
+			if p := f.checkChoice(text); p != nil {
+				return quantity.Reading{}, p
+			}
+			*f.flag(doc) = text == f.Choices[1].Value
+			return quantity.Reading{}, nil
+		}
+		if text == f.Default && text != "" {
+			text = "" // it need not be spelt out
+		} else if text == "" && f.Default != "" {
+			return quantity.Reading{}, f.problem(CodeEmpty, f.capital()+" is empty; choose one of the list.")
+		}
 	default:
 		text = strings.TrimSpace(text)
 	}
@@ -84,6 +96,15 @@ func (f Field) write(doc *Diaphragm, unit quantity.Unit) string {
 			return ""
 		}
 		return strconv.Itoa(count)
+	case KindChoice:
+		if f.flag != nil && *f.flag(doc) {
+			return f.Choices[1].Value
+		} else if f.flag != nil {
+			return f.Choices[0].Value
+		}
+		if *f.text(doc) == "" {
+			return f.Default
+		}
 	}
 	return *f.text(doc)
 }

@@ -1,6 +1,7 @@
 package diaphragm
 
 import (
+	"strings"
 	"testing"
 
 	"hoopsheet/core/quantity"
@@ -9,13 +10,17 @@ import (
 // Switching units, even through all of them, and setting what is shown leave
 // the SI value as it is, to the last bit.
 func TestUnitsChangeNoValue(t *testing.T) {
-	for _, f := range FieldsOf(Demo("", "")) {
+	for _, f := range FieldsOf(richDocument()) {
 		if f.Kind != KindQuantity {
 			continue
 		}
-		s := demoState()
-		s.doc.Faces.Upper, s.doc.Faces.Lower = Face{Kind: FaceCavity, Depth: 0.123456789}, Face{Kind: FaceCavity, Depth: 1.0 / 3}
-		s.doc.Sheet.MeasuredArealDensity, s.doc.Ring.Radius = 0.07, 1.0/3
+		s := state{doc: richDocument()}
+		if !strings.HasSuffix(f.Path, ".wall") {
+			s.doc.Faces.Upper, s.doc.Faces.Lower.Depth = Face{Kind: FaceCavity, Depth: 0.123456789, VentArea: 1e-3 / 7}, 1.0/3
+		} else {
+			s.doc.Faces.Upper, s.doc.Faces.Lower = Face{Kind: FaceBaffled, Wall: 0.123456789}, Face{Kind: FaceBaffled, Wall: 1.0 / 3}
+		}
+		s.doc.Sheet.MeasuredArealDensity, s.doc.Ring.Radius = 0.07, 4.0/3
 		want := *f.number(&s.doc)
 		for _, symbol := range f.Units {
 			s = s.apply(Edit{f.Path, ActionUnit, symbol})

@@ -21,9 +21,11 @@ const (
 	// ActionUnit shows the field in the unit named by the text; the value
 	// stays.
 	ActionUnit Action = "unit"
-	// ActionAdd appends a line to keep clear of (field "avoid.lines").
+	// ActionAdd appends an entry to a list: a harmonic ("tension.harmonics"), a
+	// patch ("attached.patches"), a strip ("attached.strips") or a line to keep
+	// clear of ("avoid.lines"). A text is its order, mass or frequency.
 	ActionAdd Action = "add"
-	// ActionRemove removes the line named by the field ("avoid.lines.0").
+	// ActionRemove removes the entry named by the field ("avoid.lines.0").
 	ActionRemove Action = "remove"
 	// ActionAdopt takes over the properties of the catalogue material whose
 	// id is the text (field "sheet.material").
@@ -62,6 +64,8 @@ const (
 	GroupRing         GroupName = "ring"
 	GroupSheet        GroupName = "sheet"
 	GroupTension      GroupName = "tension"
+	GroupEvenness     GroupName = "evenness"
+	GroupAttached     GroupName = "attached"
 	GroupFaces        GroupName = "faces"
 	GroupSurroundings GroupName = "surroundings"
 	GroupAvoid        GroupName = "avoid"
@@ -70,7 +74,9 @@ const (
 
 // GroupNames lists every group in page order.
 func GroupNames() []GroupName {
-	return []GroupName{GroupIdentity, GroupRing, GroupSheet, GroupTension, GroupFaces, GroupSurroundings, GroupAvoid, GroupDamping}
+	return []GroupName{
+		GroupIdentity, GroupRing, GroupSheet, GroupTension, GroupEvenness, GroupAttached, GroupFaces, GroupSurroundings, GroupAvoid, GroupDamping,
+	}
 }
 
 // Row is one field as a form shows it.

@@ -1,17 +1,12 @@
 package diaphragm
 
-import (
-	"strconv"
-	"strings"
-
-	"hoopsheet/core/quantity"
-)
+import "hoopsheet/core/quantity"
 
 // Field describes one editable field of the document: what it is called, how
 // it is typed, and what is allowed.
 type Field struct {
-	// Path is the dotted name, "sheet.thickness". Fields of a line to keep
-	// clear of hold its number: "avoid.lines.0.frequency".
+	// Path is the dotted name, "sheet.thickness". Fields of an entry of a list
+	// hold its number: "avoid.lines.0.frequency".
 	Path   string
 	Group  GroupName
 	Symbol string
@@ -35,34 +30,44 @@ type Field struct {
 	Optional bool
 	// Choices of a choice field, and the catalogue of a material field.
 	Choices []Choice
+	// Default is the choice that the document need not spell out: "" and false
+	// mean it. Empty where every choice is spelt out.
+	Default string
 
 	number func(*Diaphragm) *float64
 	count  func(*Diaphragm) *int
 	text   func(*Diaphragm) *string
+	// flag is for a choice between two: the first means false.
+	flag func(*Diaphragm) *bool
 	// shown is nil for fields that are always shown.
 	shown func(doc *Diaphragm, drafts map[string]string) bool
+	// neededWhereShown marks an optional field that is needed where it is shown.
+	neededWhereShown bool
 }
 
-// Fields lists every editable field in page order, with the fields of one line
-// to keep clear of, whose number is 0. FieldsOf lists those of a document.
-func Fields() []Field { return fieldList(1) }
+// Fields lists every editable field in page order, with the fields of one
+// entry of each list, whose number is 0. FieldsOf lists those of a document.
+func Fields() []Field { return fieldList(func(list) int { return 1 }) }
 
 // FieldsOf lists the editable fields of a document in page order: those of
-// Fields, with the fields of each of its lines to keep clear of.
-func FieldsOf(doc Diaphragm) []Field { return fieldList(min(len(doc.Avoid.Lines), MostLines)) }
+// Fields, with the fields of each of its entries of lists.
+func FieldsOf(doc Diaphragm) []Field {
+	return fieldList(func(l list) int { return min(l.count(&doc), l.most) })
+}
 
-// FieldByPath finds a field by its dotted name. Fields of lines are found up
-// to MostLines, whether or not a document has them.
+// FieldByPath finds a field by its dotted name. Fields of entries are found up
+// to the largest number that the list may have, whether or not a document has
+// them.
 func FieldByPath(path string) (Field, bool) {
-	if i, _, ok := splitLinePath(path); ok {
-		for _, f := range lineFields(i) {
-			if f.Path == path {
-				return f, true
-			}
-		}
-		return Field{}, false
+	l, index, _, isEntry := entryOf(path)
+	fields := []Field(nil)
+	switch {
+	case isEntry:
+		fields = l.fields(index)
+	case l.path == "":
+		fields = fieldList(func(list) int { return 0 })
 	}
-	for _, f := range fieldList(0) {
+	for _, f := range fields {
 		if f.Path == path {
 			return f, true
 		}
@@ -70,43 +75,28 @@ func FieldByPath(path string) (Field, bool) {
 	return Field{}, false
 }
 
-func fieldList(lines int) []Field {
-	list := make([]Field, 0, 32+3*lines)
-	list = append(list, identityFields()...)
-	list = append(list, ringFields()...)
-	list = append(list, sheetFields()...)
-	list = append(list, tensionFields()...)
-	list = append(list, faceFields()...)
-	list = append(list, surroundingsFields()...)
-	list = append(list, avoidFields()...)
-	for i := range lines {
-		list = append(list, lineFields(i)...)
+// fieldList gives all fields, with as many entries of each list as are told.
+func fieldList(count func(list) int) []Field {
+	all := make([]Field, 0, 96)
+	entries := func(path string) {
+		l, _ := listByPath(path)
+		for i := range count(l) {
+			all = append(all, l.fields(i)...)
+		}
 	}
-	return append(list, dampingFields()...)
-}
-
-const linesPath = "avoid.lines"
-
-// splitLinePath parts "avoid.lines.3.frequency" into 3 and "frequency".
-func splitLinePath(path string) (index int, member string, ok bool) {
-	rest, ok := strings.CutPrefix(path, linesPath+".")
-	if !ok {
-		return 0, "", false
-	}
-	digits, member, _ := strings.Cut(rest, ".")
-	index, err := strconv.Atoi(digits)
-	if err != nil || index < 0 || index >= MostLines || strconv.Itoa(index) != digits {
-		return 0, "", false
-	}
-	return index, member, true
-}
-
-func linePath(index int, member string) string {
-	path := linesPath + "." + strconv.Itoa(index)
-	if member != "" {
-		path += "." + member
-	}
-	return path
+	all = append(all, identityFields()...)
+	all = append(all, ringFields()...)
+	all = append(all, sheetFields()...)
+	all = append(all, tensionFields()...)
+	all = append(all, evennessFields()...)
+	entries("tension.harmonics")
+	entries("attached.patches")
+	entries("attached.strips")
+	all = append(all, faceFields()...)
+	all = append(all, surroundingsFields()...)
+	all = append(all, avoidFields()...)
+	entries("avoid.lines")
+	return append(all, dampingFields()...)
 }
 
 // unit is the unit in which the field is shown: the one chosen, or that of the

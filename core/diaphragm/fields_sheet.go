@@ -45,6 +45,24 @@ func ringFields() []Field {
 			number: func(d *Diaphragm) *float64 { return &d.Ring.Radius },
 		},
 		{
+			Path: "ring.hubRadius", Group: GroupRing, Symbol: "b", Name: "hub radius", Kind: KindQuantity, Optional: true,
+			Help:      "Radius of a fixed hub in the middle that holds the sheet too. Leave it empty where there is none.",
+			Dimension: quantity.Length, SI: "mm", InchPound: "in", Units: []string{"mm", "cm", "m", "in", "ft"},
+			Low: 1e-4, High: 50, Reason: "a smaller hub would cut through the sheet",
+			number: func(d *Diaphragm) *float64 { return &d.Ring.HubRadius },
+		},
+		{
+			Path: "ring.outOfRound", Group: GroupRing, Name: "out of round", Kind: KindQuantity, Optional: true,
+			Help:      "A quarter of the difference between the longest and the shortest diameter. Leave it empty for a true ring.",
+			Dimension: quantity.Length, SI: "mm", InchPound: "in", Units: []string{"mm", "µm", "cm", "in", "mil"},
+			Low: 1e-6, High: 5, Reason: "less cannot be measured on a ring and more is an oval",
+			number: func(d *Diaphragm) *float64 { return &d.Ring.OutOfRound },
+		},
+		angleField("ring.outOfRoundAngle", GroupRing, "direction of the longest diameter",
+			"Anticlockwise from the right in the plan.",
+			func(d *Diaphragm) *float64 { return &d.Ring.OutOfRoundAngle }).
+			where(func(d *Diaphragm) bool { return d.Ring.OutOfRound != 0 }),
+		{
 			Path: "ring.clamps", Group: GroupRing, Symbol: "N", Name: "number of clamps", Kind: KindCount, Optional: true,
 			Help: "Clamps or screws around the rim. Leave it empty where the rim is glued or welded.",
 			Low:  3, High: 1000, Reason: "fewer than three do not hold a round sheet",
@@ -121,24 +139,13 @@ func sheetFields() []Field {
 			Low: 1e3, High: 1e10, Reason: "soft rubbers and the strongest fibres lie within these limits",
 			number: func(d *Diaphragm) *float64 { return &d.Sheet.AllowableStress },
 		},
-	}
-}
-
-func tensionFields() []Field {
-	return []Field{
 		{
-			Path: "tension.nominal", Group: GroupTension, Symbol: "T", Name: "tension", Kind: KindQuantity,
-			Help:      "Pull per length of rim that the sheet shall carry at the temperature below, the same in all directions.",
-			Dimension: quantity.LineTension, SI: "N/m", InchPound: "lbf/in", Units: []string{"N/m", "kN/m", "N/mm", "lbf/in", "lbf/ft"},
-			Low: 0.01, High: 1e6, Reason: "less is slack and more is beyond any film, foil or fabric",
-			number: func(d *Diaphragm) *float64 { return &d.Tension.Nominal },
-		},
-		{
-			Path: "tension.tolerance", Group: GroupTension, Symbol: "±", Name: "tolerance of the tension", Kind: KindQuantity,
-			Help:      "How far the built tension may be from the specified one, to either side.",
-			Dimension: quantity.Ratio, SI: "%", InchPound: "%", Units: []string{"%", "‰"},
-			Low: 0.001, High: 0.5, Reason: "no tap can prove less than 0.1 % and more than 50 % specifies nothing",
-			number: func(d *Diaphragm) *float64 { return &d.Tension.Tolerance },
+			// The figures of the help are common practice, from memory.
+			Path: "sheet.lossFactor", Group: GroupSheet, Symbol: "η", Name: "loss factor of the sheet", Kind: KindQuantity, Optional: true,
+			Help:      "How much the material itself damps bending: films near 0.01 to 0.03, metals near 0.001. Empty for none.",
+			Dimension: quantity.Ratio, SI: "", InchPound: "", Units: []string{"", "%"},
+			Low: 0, High: 1, Reason: "a sheet that rings loses less than that",
+			number: func(d *Diaphragm) *float64 { return &d.Sheet.LossFactor },
 		},
 	}
 }

@@ -11,9 +11,9 @@ type SpecificationLine struct {
 	Unit   string
 }
 
-// SpecificationLines writes every field for reading, in page order; optional
-// fields that are not stated are left out, and so is the depth of what is no
-// cavity.
+// SpecificationLines writes every field for reading, in page order. What is
+// optional and not stated is left out, and so is what does not apply, such as
+// the depth of what is no cavity.
 func SpecificationLines(doc Diaphragm, units map[string]string, system quantity.System) []SpecificationLine {
 	lines := []SpecificationLine{}
 	for _, f := range FieldsOf(doc) {
@@ -25,7 +25,7 @@ func SpecificationLines(doc Diaphragm, units map[string]string, system quantity.
 			unit = f.unit(units, system)
 		}
 		text := f.write(&doc, unit)
-		if text == "" && f.Optional {
+		if text == "" && f.Optional || text == f.Default && text != "" {
 			continue
 		}
 		for _, c := range f.Choices {

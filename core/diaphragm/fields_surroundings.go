@@ -6,51 +6,6 @@ import (
 	"hoopsheet/core/quantity"
 )
 
-// faceChoices gives every kind of face in words.
-func faceChoices() []Choice {
-	names := map[FaceKind]string{
-		FaceOpen:    "open: air passes around the rim",
-		FaceBaffled: "baffled: set in a wall",
-		FaceCavity:  "cavity: a closed space behind it",
-		FaceVacuum:  "vacuum",
-	}
-	var list []Choice
-	for _, kind := range FaceKinds() {
-		list = append(list, Choice{Value: string(kind), Name: names[kind]})
-	}
-	return list
-}
-
-func faceFields() []Field {
-	upper := func(d *Diaphragm) *Face { return &d.Faces.Upper }
-	lower := func(d *Diaphragm) *Face { return &d.Faces.Lower }
-	return append(oneFace("upper", upper), oneFace("lower", lower)...)
-}
-
-func oneFace(side string, face func(*Diaphragm) *Face) []Field {
-	kind := "faces." + side + ".kind"
-	return []Field{
-		{
-			Path: kind, Group: GroupFaces, Name: side + " face", Kind: KindChoice,
-			Help:    "What the air on this side can do. Open is set for both faces together, because the air passes around the rim.",
-			Choices: faceChoices(),
-			text:    func(d *Diaphragm) *string { return (*string)(&face(d).Kind) },
-		},
-		{
-			Path: "faces." + side + ".depth", Group: GroupFaces, Symbol: "L", Name: "depth of the " + side + " cavity",
-			Kind: KindQuantity, Optional: true,
-			Help:      "Distance from the sheet to the closed end of the space behind it.",
-			Dimension: quantity.Length, SI: "mm", InchPound: "in", Units: []string{"mm", "cm", "m", "in", "ft"},
-			Low: 1e-4, High: 100, Reason: "closer walls touch the sheet and farther ones are a room",
-			number: func(d *Diaphragm) *float64 { return &face(d).Depth },
-			shown: func(d *Diaphragm, drafts map[string]string) bool {
-				draft, drafted := drafts[kind]
-				return face(d).Kind == FaceCavity || drafted && draft == string(FaceCavity)
-			},
-		},
-	}
-}
-
 // Bounds of the state of the air: those of package air, which see.
 const (
 	coldestAir, hottestAir = 223.15, 373.15 // K
@@ -127,29 +82,34 @@ func avoidFields() []Field {
 	}}
 }
 
-// lineFields are the fields of line i; their accessors hold for documents that
-// have it.
+// lineFields are the fields of line i to keep clear of.
 func lineFields(i int) []Field {
 	which := " of line " + strconv.Itoa(i+1)
+	at := func(member string) string { return entryPath("avoid.lines", i, member) }
 	return []Field{
 		{
-			Path: linePath(i, "name"), Group: GroupAvoid, Name: "name" + which, Kind: KindText, Most: 60,
+			Path: at("name"), Group: GroupAvoid, Name: "name" + which, Kind: KindText, Most: 60,
 			Help: "What makes this frequency: mains hum, a fan, a pump.",
 			text: func(d *Diaphragm) *string { return &d.Avoid.Lines[i].Name },
 		},
 		{
-			Path: linePath(i, "frequency"), Group: GroupAvoid, Symbol: "f", Name: "frequency" + which, Kind: KindQuantity,
+			Path: at("frequency"), Group: GroupAvoid, Symbol: "f", Name: "frequency" + which, Kind: KindQuantity,
 			Help:      "A frequency that excites the diaphragm. A speed may be typed in rpm.",
 			Dimension: quantity.Frequency, SI: "Hz", InchPound: "Hz", Units: frequencyUnits,
 			Low: lowestLine, High: highestLine, Reason: reasonLine,
 			number: func(d *Diaphragm) *float64 { return &d.Avoid.Lines[i].Frequency },
 		},
 		{
-			Path: linePath(i, "halfWidth"), Group: GroupAvoid, Symbol: "±", Name: "half-width" + which, Kind: KindQuantity,
+			Path: at("halfWidth"), Group: GroupAvoid, Symbol: "±", Name: "half-width" + which, Kind: KindQuantity,
 			Help:      "A mode within this distance to either side counts as a hit, within twice of it as near.",
 			Dimension: quantity.Ratio, SI: "%", InchPound: "%", Units: []string{"%", "‰"},
 			Low: 0, High: 0.5, Reason: "a wider band would forbid everything",
 			number: func(d *Diaphragm) *float64 { return &d.Avoid.Lines[i].HalfWidth },
 		},
 	}
+}
+
+// newLine begins at 100 Hz.
+func newLine(d *Diaphragm) Line {
+	return Line{Name: "line " + strconv.Itoa(len(d.Avoid.Lines)+1), Frequency: 100, HalfWidth: 0.05}
 }

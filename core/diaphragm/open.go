@@ -2,7 +2,10 @@ package diaphragm
 
 import (
 	"encoding/json"
+	"slices"
 	"strconv"
+
+	"hoopsheet/core/air"
 )
 
 // mostDocumentBytes is the largest document accepted, bytes of JSON.
@@ -45,12 +48,12 @@ func ReadDocument(data []byte) (Diaphragm, error) {
 		return Diaphragm{}, refuse("document", CodeUnreadable, what+" has no proper id: 1 to 64 letters, digits, - or _ are expected.")
 	case doc.Revision < 0:
 		return Diaphragm{}, refuse("document", CodeUnreadable, what+" counts a negative number of revisions.")
-	case len(doc.Avoid.Lines) > MostLines:
-		return Diaphragm{}, &Refusal{Problems: []Problem{tooManyLines(len(doc.Avoid.Lines))}}
-	case !knownFace(doc.Faces.Upper.Kind):
-		return Diaphragm{}, refuse("faces.upper.kind", CodeUnreadable, what+" names a kind of upper face that is not known: "+shorten(string(doc.Faces.Upper.Kind), "none")+".")
-	case !knownFace(doc.Faces.Lower.Kind):
-		return Diaphragm{}, refuse("faces.lower.kind", CodeUnreadable, what+" names a kind of lower face that is not known: "+shorten(string(doc.Faces.Lower.Kind), "none")+".")
+	}
+	if problems := tooLongLists(doc); len(problems) > 0 {
+		return Diaphragm{}, &Refusal{Problems: problems}
+	}
+	if err := knownWords(doc, what); err != nil {
+		return Diaphragm{}, err
 	}
 	return normal(doc), nil
 }
@@ -93,13 +96,26 @@ func migrate(data []byte, what string) ([]byte, error) {
 	return json.Marshal(members)
 }
 
-func knownFace(kind FaceKind) bool {
-	for _, known := range FaceKinds() {
-		if kind == known {
-			return true
+// knownWords refuses words that are none of their list.
+func knownWords(doc Diaphragm, what string) error {
+	unknown := func(field, thing, word string) error {
+		return refuse(field, CodeUnreadable, what+" names a "+thing+" that is not known: "+shorten(word, "none")+".")
+	}
+	if !slices.Contains(Rims(), doc.Tension.Rim.OrClamped()) {
+		return unknown("tension.rim", "kind of rim", string(doc.Tension.Rim))
+	}
+	for _, side := range []struct {
+		name string
+		face Face
+	}{{"upper", doc.Faces.Upper}, {"lower", doc.Faces.Lower}} {
+		if !slices.Contains(FaceKinds(), side.face.Kind) {
+			return unknown("faces."+side.name+".kind", "kind of "+side.name+" face", string(side.face.Kind))
+		}
+		if !slices.Contains(air.FluidNames(), side.face.Fluid.OrAir()) {
+			return unknown("faces."+side.name+".fluid", "fluid at the "+side.name+" face", string(side.face.Fluid))
 		}
 	}
-	return false
+	return nil
 }
 
 // soundID reports whether an id is safe to use as a name: 1 to 64 letters,

@@ -8,6 +8,8 @@ import (
 	"strconv"
 	"strings"
 	"testing"
+
+	"hoopsheet/core/air"
 )
 
 // fullDocument is a document in which every text and number is filled in. All
@@ -30,6 +32,26 @@ func fullDocument() Diaphragm {
 			{Name: "pump", Frequency: 16.53, HalfWidth: 0.05}, {Name: "mains 100 Hz", Frequency: 100, HalfWidth: 0.02}}},
 		Damping: Damping{Ratio: 0.0123},
 	}
+}
+
+// richDocument is fullDocument with everything that a real diaphragm may have,
+// a cavity with its vent below and a wall above.
+func richDocument() Diaphragm {
+	d := fullDocument()
+	d.Ring.HubRadius, d.Ring.OutOfRound, d.Ring.OutOfRoundAngle = 0.0315, 0.0004, 0.7
+	d.Sheet.LossFactor = 0.017
+	d.Tension.Rim, d.Tension.Bonded, d.Tension.WeftRatio, d.Tension.WarpAngle = RimSupported, true, 0.85, 0.35
+	d.Tension.Harmonics = []Harmonic{{2, 0.034, 0.52}, {3, 0.012, 2.1}, {1, 0.02, 4.7}}
+	d.Attached = Attached{
+		Patches: []Patch{
+			{Name: "accelerometer", Radius: 0.412, Angle: 1.31, Size: 0.0065, Mass: 0.0023, Rigid: true},
+			{Name: "tape over a scratch", Radius: 0.75, Angle: 3.9, Size: 0.0125, Mass: 0.00041},
+		},
+		Strips: []Strip{{Name: "seam", Offset: 0.23, Angle: 1.5707963267948966, Width: 0.012, Mass: 0.0085}},
+	}
+	d.Faces.Upper.Fluid, d.Faces.Upper.Wall = air.FluidNitrogen, 0.65
+	d.Faces.Lower.Fluid, d.Faces.Lower.VentArea, d.Faces.Lower.VentLength = air.FluidHelium, 0.00125, 0.018
+	return d
 }
 
 // fullParcel is what a long hand-over looks like: 24 figures and 12 peaks of

@@ -1,14 +1,12 @@
 package diaphragm
 
 import (
-	"errors"
 	"strconv"
 	"strings"
 	"time"
 	"unicode"
 	"unicode/utf8"
 
-	"hoopsheet/core/air"
 	"hoopsheet/core/quantity"
 )
 
@@ -28,7 +26,7 @@ const (
 	CodeWhole Code = "whole"
 	// CodeChoice: not one of the choices.
 	CodeChoice Code = "choice"
-	// CodeTooMany: more lines to keep clear of than are allowed.
+	// CodeTooMany: more entries of a list than are allowed.
 	CodeTooMany Code = "too-many"
 	// CodeUnit: no unit of the field's dimension.
 	CodeUnit = Code(quantity.CodeUnit)
@@ -60,9 +58,7 @@ func Validate(doc Diaphragm) []Problem { return validate(doc, nil, quantity.SI) 
 
 func validate(doc Diaphragm, units map[string]string, system quantity.System) []Problem {
 	problems := identityProblems(doc)
-	if len(doc.Avoid.Lines) > MostLines {
-		problems = append(problems, tooManyLines(len(doc.Avoid.Lines)))
-	}
+	problems = append(problems, tooLongLists(doc)...)
 	for _, f := range FieldsOf(doc) {
 		if p := f.check(&doc, f.unit(units, system)); p != nil {
 			problems = append(problems, *p)
@@ -96,11 +92,6 @@ func identityProblems(doc Diaphragm) []Problem {
 	return problems
 }
 
-func tooManyLines(count int) Problem {
-	return Problem{Field: linesPath, Code: CodeTooMany, Offset: -1, Message: "There are " + strconv.Itoa(count) +
-		" lines to keep clear of; at most " + strconv.Itoa(MostLines) + " are allowed."}
-}
-
 // check tests the field's value within doc by itself.
 func (f Field) check(doc *Diaphragm, unit quantity.Unit) *Problem {
 	switch f.Kind {
@@ -109,6 +100,9 @@ func (f Field) check(doc *Diaphragm, unit quantity.Unit) *Problem {
 	case KindCount:
 		return f.checkCount(*f.count(doc))
 	case KindChoice:
+		if f.flag != nil {
+			return nil // a flag can only be one of its two choices
+		}
 		return f.checkChoice(*f.text(doc))
 	}
 	return f.checkText(*f.text(doc))
@@ -131,6 +125,9 @@ func (f Field) checkCount(value int) *Problem {
 }
 
 func (f Field) checkChoice(value string) *Problem {
+	if value == "" && f.Default != "" {
+		return nil
+	}
 	var names []string
 	for _, c := range f.Choices {
 		if c.Value == value {
@@ -191,77 +188,3 @@ func (f Field) problem(code Code, message string) *Problem {
 
 // capital is the field's name at the start of a sentence.
 func (f Field) capital() string { return strings.ToUpper(f.Name[:1]) + f.Name[1:] }
-
-// conflict is a disagreement between fields; it is shown at the first one, or
-// at the one that was edited last.
-type conflict struct {
-	fields  []string
-	code    Code
-	message string
-}
-
-func (c conflict) problem(field string) Problem {
-	return Problem{Field: field, Code: c.code, Message: c.message, Offset: -1}
-}
-
-func (c conflict) concerns(path string) bool {
-	for _, f := range c.fields {
-		if f == path {
-			return true
-		}
-	}
-	return false
-}
-
-// conflicts lists where fields that are sound by themselves do not go
-// together.
-func conflicts(doc Diaphragm, units map[string]string, system quantity.System) []conflict {
-	var list []conflict
-	upper, lower := doc.Faces.Upper, doc.Faces.Lower
-	if (upper.Kind == FaceOpen) != (lower.Kind == FaceOpen) {
-		list = append(list, conflict{[]string{"faces.upper.kind", "faces.lower.kind"}, CodeConflict,
-			"The upper face is " + string(upper.Kind) + " and the lower face is " + string(lower.Kind) +
-				"; open holds for both faces or for neither, because the air passes around the rim."})
-	}
-	for _, side := range []struct {
-		name string
-		face Face
-	}{{"upper", upper}, {"lower", lower}} {
-		if side.face.Kind == FaceCavity && side.face.Depth == 0 {
-			list = append(list, conflict{[]string{"faces." + side.name + ".depth", "faces." + side.name + ".kind"}, CodeEmpty,
-				"The " + side.name + " face is a cavity, whose depth is needed; type the depth of the " + side.name + " cavity."})
-		}
-	}
-	if s := doc.Surroundings; s.ServiceMin > s.ServiceMax {
-		f, _ := FieldByPath("surroundings.serviceMin")
-		unit := f.unit(units, system)
-		list = append(list, conflict{[]string{"surroundings.serviceMin", "surroundings.serviceMax"}, CodeConflict,
-			"The lowest temperature in service, " + withUnit(show(s.ServiceMin, unit), unit) + ", lies above the highest, " +
-				withUnit(show(s.ServiceMax, unit), unit) + "; the lowest must not be above the highest."})
-	}
-	if c := airConflict(doc); c != nil {
-		list = append(list, *c)
-	}
-	return list
-}
-
-// airConflict finds a state of the air that cannot be, though each of its
-// fields could: so much water that it is steam.
-func airConflict(doc Diaphragm) *conflict {
-	if doc.Faces.Upper.Kind == FaceVacuum && doc.Faces.Lower.Kind == FaceVacuum {
-		return nil
-	}
-	s := doc.Surroundings
-	for _, f := range surroundingsFields()[:3] {
-		if f.check(&doc, quantity.Unit{}) != nil {
-			return nil // said at that field
-		}
-	}
-	_, err := air.Moist(s.Temperature, s.Pressure, s.Humidity)
-	var domain *air.DomainError
-	if !errors.As(err, &domain) {
-		return nil
-	}
-	return &conflict{[]string{"surroundings.humidity", "surroundings.temperature", "surroundings.pressure", "faces.upper.kind", "faces.lower.kind"},
-		CodeConflict, domain.Message}
-}

@@ -35,7 +35,8 @@ func TestBoundsOfEveryQuantityOnBothSides(t *testing.T) {
 		}
 		try := func(value float64, sound bool) {
 			t.Helper()
-			doc := Demo(testID, testCreated)
+			doc := richDocument()
+			doc.Faces.Lower.Kind = FaceBaffled // so that no depth is needed
 			*f.number(&doc) = value
 			p, wrong := own(f, doc)
 			if wrong == sound {
@@ -119,14 +120,14 @@ func TestBoundsOfTexts(t *testing.T) {
 			{"a\u2066b", CodeText, 1},
 			{"a\xffb", CodeText, 1},
 		} {
-			doc := Demo(testID, testCreated)
+			doc := richDocument()
 			*f.text(&doc) = c.text
 			p, wrong := problemAt(Validate(doc), f.Path)
 			if wrong != (c.code != "") || wrong && (p.Code != c.code || p.Offset != c.offset) {
 				t.Errorf("%s = %.20q: %+v", f.Path, c.text, p)
 			}
 		}
-		doc := Demo(testID, testCreated)
+		doc := richDocument()
 		*f.text(&doc) = "  "
 		if _, wrong := problemAt(Validate(doc), f.Path); wrong == f.Optional {
 			t.Errorf("%s: empty gives a problem: %v", f.Path, wrong)

@@ -7,6 +7,7 @@ type Dimension string
 // that are offered first.
 const (
 	Length       Dimension = "length"
+	Area         Dimension = "area"
 	ArealDensity Dimension = "areal-density"
 	LineTension  Dimension = "line-tension"
 	Pressure     Dimension = "pressure"
@@ -25,7 +26,7 @@ const (
 // Dimensions lists every dimension.
 func Dimensions() []Dimension {
 	return []Dimension{
-		Length, ArealDensity, LineTension, Pressure, Stress, Density, Temperature,
+		Length, Area, ArealDensity, LineTension, Pressure, Stress, Density, Temperature,
 		Frequency, Expansion, Ratio, Angle, Time, Speed, Mass,
 	}
 }
@@ -40,7 +41,7 @@ func (d Dimension) Words() string {
 		return "line tension"
 	case Expansion:
 		return "thermal expansion"
-	case Length, Pressure, Stress, Density, Temperature, Frequency, Ratio, Angle, Time, Speed, Mass:
+	case Length, Area, Pressure, Stress, Density, Temperature, Frequency, Ratio, Angle, Time, Speed, Mass:
 		return string(d)
 	}
 	return ""
@@ -76,6 +77,8 @@ func offered(d Dimension) (si, inchPound []string) {
 	switch d {
 	case Length:
 		return []string{"mm", "m", "cm", "µm"}, []string{"in", "ft", "mil"}
+	case Area:
+		return []string{"cm²", "m²", "mm²"}, []string{"in²", "ft²"}
 	case ArealDensity:
 		return []string{"kg/m²", "g/m²"}, []string{"lb/ft²", "oz/yd²"}
 	case LineTension:

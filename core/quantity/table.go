@@ -20,6 +20,8 @@ func units(d Dimension) []Unit {
 	switch d {
 	case Length:
 		return lengths
+	case Area:
+		return areas
 	case ArealDensity:
 		return arealDensities
 	case LineTension:
@@ -58,6 +60,15 @@ var lengths = []Unit{
 	{Symbol: "ft", mul: 3048, div: 1e4, also: []string{"foot", "feet", "'", "′", "’"}},
 	// A mil is a thousandth of an inch; film is sold by it.
 	{Symbol: "mil", mul: 254, div: 1e7, also: []string{"mils", "thou"}},
+}
+
+var areas = []Unit{
+	{Symbol: "m²", mul: 1, div: 1, also: []string{"sqm"}},
+	{Symbol: "cm²", mul: 1, div: 1e4, also: []string{"sqcm"}},
+	{Symbol: "mm²", mul: 1, div: 1e6, also: []string{"sqmm"}},
+	// (0.0254 m)^2 and (0.3048 m)^2.
+	{Symbol: "in²", mul: 64516, div: 1e8, also: []string{"sqin", "sq.in."}},
+	{Symbol: "ft²", mul: 9290304, div: 1e8, also: []string{"sqft", "sq.ft."}},
 }
 
 var arealDensities = []Unit{

@@ -39,8 +39,8 @@ func relative(got, want float64) float64 {
 // short and held to the same.
 func TestFactorsArePublished(t *testing.T) {
 	lines := readLines(t, "nist_sp811.csv")
-	if len(lines) != 24 {
-		t.Errorf("%d factors, want 24", len(lines))
+	if len(lines) != 26 {
+		t.Errorf("%d factors, want 26", len(lines))
 	}
 	for _, line := range lines {
 		cells := strings.Split(line, ",")
@@ -103,7 +103,7 @@ func TestDefinedFactorsAreExact(t *testing.T) {
 		want   float64
 	}{
 		{Length, 23, "µm", 23e-6}, {Length, 450, "mm", 0.45}, {Length, 100, "nm", 100e-9},
-		{Length, 1, "in", 0.0254}, {Length, 1, "ft", 0.3048}, {Length, 1, "mil", 25.4e-6},
+		{Length, 1, "in", 0.0254}, {Length, 1, "ft", 0.3048}, {Length, 1, "mil", 25.4e-6}, {Area, 3, "cm²", 3e-4}, {Area, 1, "in²", 6.4516e-4}, {Area, 50, "mm²", 50e-6},
 		{Mass, 1, "lb", 0.45359237}, {Mass, 1, "oz", 0.028349523125},
 		{LineTension, 2, "kN/m", 2000}, {LineTension, 3, "N/mm", 3000},
 		{Pressure, 1, "atm", 101325}, {Pressure, 1013, "hPa", 101300}, {Stress, 4, "GPa", 4e9},

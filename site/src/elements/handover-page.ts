@@ -7,8 +7,8 @@ import { figure } from './number-text.js';
 import { when } from './when.js';
 
 const groupTitles: Readonly<Record<GroupName, string>> = {
-  identity: 'Name and place', ring: 'Ring', sheet: 'Sheet', tension: 'Tension', faces: 'Faces', surroundings: 'Air and service',
-  avoid: 'Frequencies to keep clear of', damping: 'Damping',
+  identity: 'Name and place', ring: 'Ring', sheet: 'Sheet', tension: 'Tension', evenness: 'Evenness of the tension',
+  attached: 'Attached to the sheet', faces: 'Faces', surroundings: 'Air and service', avoid: 'Frequencies to keep clear of', damping: 'Damping',
 };
 
 /** `received` shows both columns of figures; while one's own is prepared they are the same. */
