@@ -5,11 +5,17 @@ import (
 	"hoopsheet/core/response"
 )
 
-// RespondRequest asks what the ideal sheet does after its initial values.
+// RespondRequest asks what the diaphragm does after its initial values.
 type RespondRequest struct {
 	Document     diaphragm.Diaphragm `json:"document"`
 	Displacement response.Shape      `json:"displacement"`
 	Velocity     response.Shape      `json:"velocity"`
+	// Impulse reads Velocity as a blow: momentum per area, N s/m^2, instead of
+	// m/s. A blow sets the fluid moving too.
+	Impulse bool `json:"impulse,omitempty"`
+	// Without names effects to leave out; without all of them the ideal sheet
+	// moves, every mode with the damping ratio of the document.
+	Without []Effect `json:"without,omitempty"`
 	// Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
 	Orders  int `json:"orders"`
 	Circles int `json:"circles"`
@@ -45,7 +51,7 @@ type RespondResult struct {
 	MissedDisplacement float64 `json:"missedDisplacement"`
 	MissedVelocity     float64 `json:"missedVelocity"`
 	MissedEnergy       float64 `json:"missedEnergy"`
-	// Energy is the initial energy, J, of the ideal sheet.
+	// Energy is the initial energy, J, of sheet, fluid and cavity.
 	Energy float64 `json:"energy"`
 	// Period of mode (0,1), s, for choosing a duration.
 	Period float64 `json:"period"`

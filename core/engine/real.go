@@ -104,12 +104,7 @@ type solutionKey struct {
 	m, n         int
 }
 
-// solutions keeps the last few solved diaphragms: typing, the table, the
-// drawing and the reading of taps ask for the same one.
-var solutions = newCache[solutionKey, *modes.Solution](6)
-
-// solve gives the modes up to m nodal diameters and n nodal circles.
-func solve(real modes.Real, effects modes.Effects, m, n int) (*modes.Solution, error) {
+func keyOf(real modes.Real, effects modes.Effects, m, n int) solutionKey {
 	key := solutionKey{real: real, effects: effects, m: m, n: n}
 	if v := real.Upper.Vent; v != nil {
 		key.upper, key.real.Upper.Vent = *v, nil
@@ -117,6 +112,16 @@ func solve(real modes.Real, effects modes.Effects, m, n int) (*modes.Solution, e
 	if v := real.Lower.Vent; v != nil {
 		key.lower, key.real.Lower.Vent = *v, nil
 	}
+	return key
+}
+
+// solutions keeps the last few solved diaphragms: typing, the table, the
+// drawing and the reading of taps ask for the same one.
+var solutions = newCache[solutionKey, *modes.Solution](6)
+
+// solve gives the modes up to m nodal diameters and n nodal circles.
+func solve(real modes.Real, effects modes.Effects, m, n int) (*modes.Solution, error) {
+	key := keyOf(real, effects, m, n)
 	if solution, ok := solutions.get(key); ok {
 		return solution, nil
 	}

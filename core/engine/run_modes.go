@@ -27,10 +27,6 @@ const (
 	usualCircles   = 3
 )
 
-// notableAir is the mass of moving air, in units of the sheet's, that is worth
-// a word: it lowers a frequency by one percent.
-const notableAir = 0.02
-
 // CodeRange is the code of a number outside what a call takes.
 const CodeRange Code = "range"
 

@@ -2,23 +2,25 @@ package engine
 
 import (
 	"context"
+	"math"
 
-	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
-	"hoopsheet/core/quantity"
 	"hoopsheet/core/response"
 )
 
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
-	if problems := diaphragm.Validate(request.Document); len(problems) > 0 {
-		// Without a sound sheet there is no wave speed to judge the rest by.
-		problems = append(problems, request.Displacement.Check("displacement.")...)
-		return nil, refuse(append(problems, request.Velocity.Check("velocity.")...))
-	}
 	c := respondCase(request)
-	if err := refuse(c.Check()); err != nil {
+	if err := refuse(append(diaphragm.Validate(request.Document), c.Check()...)); err != nil {
 		return nil, err
+	}
+	wet, err := wetOf(&request.Document, request.Without, request.Orders, request.Circles)
+	if err != nil {
+		return nil, err
+	}
+	c.Wet = wet
+	if request.Duration == 0 && wet != nil {
+		c.Duration = shownPeriods * 2 * math.Pi / wet.Orders[0][0].Omega
 	}
 	motion, problems, err := response.Respond(ctx, c, progress(ctx))
 	if err != nil {
@@ -46,7 +48,7 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		Histories:          []History{},
 		Strongest:          []ModeShare{},
 		Assumptions:        motion.Assumptions,
-		Warnings:           append(airWarnings(&request.Document), motion.Warnings...),
+		Warnings:           append(effectCautions(&request.Document, request.Without), motion.Warnings...),
 	}
 	for i, values := range motion.Histories {
 		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values})
@@ -76,6 +78,7 @@ func respondCase(request *RespondRequest) *response.Case {
 		Zeta:         doc.Damping.Ratio,
 		Displacement: request.Displacement,
 		Velocity:     request.Velocity,
+		Impulse:      request.Impulse,
 		Orders:       request.Orders,
 		Circles:      request.Circles,
 		Duration:     duration,
@@ -84,22 +87,4 @@ func respondCase(request *RespondRequest) *response.Case {
 		Angles:       request.Angles,
 		Points:       request.Points,
 	}
-}
-
-// airWarnings says what the air, which the motion leaves out, would do to it.
-func airWarnings(doc *diaphragm.Diaphragm) []string {
-	around := doc.Surroundings
-	state, err := air.Moist(around.Temperature, around.Pressure, around.Humidity)
-	if err != nil {
-		return []string{}
-	}
-	share, known := modes.AirMass(state.Density*doc.Ring.Radius/doc.Sheet.ArealDensity(), doc.Faces)
-	switch {
-	case !known:
-		return []string{"The air closed in behind the sheet is left out; it stiffens and slows the real motion, that of mode (0, 1) most."}
-	case share > notableAir:
-		return []string{"The air that moves with mode (0, 1) has about " + quantity.FormatNumber(share, 2) +
-			" times the mass of the sheet that moves and is left out: the real motion is slower, and a blow of given momentum moves the sheet less."}
-	}
-	return []string{}
 }

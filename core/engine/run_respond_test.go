@@ -36,17 +36,19 @@ func TestRespondOfDemo(t *testing.T) {
 			len(result.Times), len(result.Motion), len(result.Envelope), len(result.Histories), reports)
 	}
 	// Potential energy of a bump: T/2 times 6 pi/5 times the peak squared.
-	if want := request.Document.Tension.Nominal / 2 * 6 * math.Pi / 5 * 5e-4 * 5e-4; math.Abs(result.Energy-want) > 1e-13*want {
+	// The modes leave out the share that is stated of it; the rest of the
+	// tolerance is for shapes that sound and the clamped edge change a little.
+	if want := request.Document.Tension.Nominal / 2 * 6 * math.Pi / 5 * 5e-4 * 5e-4 * (1 - result.MissedEnergy); math.Abs(result.Energy-want) > 1e-3*want {
 		t.Errorf("energy %v, want %v", result.Energy, want)
 	}
 	table, err := runModes(context.Background(), &ModesRequest{Document: request.Document, Count: 1})
 	if err != nil {
 		t.Fatal(err)
 	}
-	if got := result.Period * table.Modes[0].Ideal; math.Abs(got-1) > 1e-14 {
-		t.Errorf("period times the ideal frequency of (0,1) is %v", got)
+	if got := result.Period * table.Modes[0].Frequency; math.Abs(got-1) > 1e-9 {
+		t.Errorf("period times the frequency of (0,1) is %v", got)
 	}
-	if len(result.Strongest) == 0 || len(result.Assumptions) == 0 || len(result.Warnings) == 0 || !strings.Contains(result.Warnings[0], "The air that moves") {
+	if len(result.Strongest) == 0 || len(result.Assumptions) == 0 || len(result.Warnings) != 0 {
 		t.Errorf("%v %q %q", result.Strongest, result.Assumptions, result.Warnings)
 	}
 	// Without a duration, six periods.

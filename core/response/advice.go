@@ -23,6 +23,11 @@ type warned struct {
 
 // assumptions says in words what was assumed.
 func (c *Case) assumptions() []string {
+	if c.Wet != nil {
+		return append(append([]string{}, c.Wet.Words...),
+			"The motion is the sum of the modes with m = 0 to "+strconv.Itoa(c.Orders)+" nodal diameters and n = 1 to "+
+				strconv.Itoa(c.Circles)+" within each, each with its own damping.")
+	}
 	list := []string{
 		"The sheet is ideal: limp, evenly tensioned, fixed at the rim, without air, stiffness, cavity or attached masses.",
 		"The motion is small, so that the tension stays the same.",

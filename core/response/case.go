@@ -26,6 +26,13 @@ type Case struct {
 	// Zeta is the damping ratio of every mode, 0 and up.
 	Zeta                   float64
 	Displacement, Velocity Shape
+	// Impulse reads Velocity as momentum per area, N s/m^2, instead of m/s: a
+	// blow sets the fluid moving too, a prescribed velocity does not ask what it
+	// takes.
+	Impulse bool
+	// Wet gives the modes of the diaphragm as it stands; nil stands for the
+	// ideal sheet, whose modes all have the damping ratio Zeta.
+	Wet *Wet
 	// Modes m = 0..Orders, n = 1..Circles.
 	Orders, Circles int
 	// Duration, s, and the number of frames spread evenly over it.
@@ -60,6 +67,9 @@ func (c *Case) Check() []diaphragm.Problem {
 		problems = append(problems, diaphragm.Problem{Field: field, Code: code, Message: message, Offset: -1})
 	}
 	sound := true
+	if c.Wet != nil && (len(c.Wet.Orders) <= c.Orders) {
+		add("orders", diaphragm.CodeBounds, "The modes of the diaphragm are given up to "+strconv.Itoa(len(c.Wet.Orders)-1)+" nodal diameters only.")
+	}
 	within := func(field, name string, value, least, most int) {
 		if value < least || value > most {
 			sound = false
@@ -85,7 +95,8 @@ func (c *Case) Check() []diaphragm.Problem {
 	if !(c.Zeta >= 0 && c.Zeta <= 100) {
 		add("damping.ratio", diaphragm.CodeBounds, "The damping ratio must be from 0 to 100.")
 	}
-	if most := MostPeriods * c.period(); !(c.Duration > 0 && c.Duration <= most) {
+	// An unsound diaphragm has no period; its own problems say so.
+	if most := MostPeriods * c.period(); most > 0 && !(c.Duration > 0 && c.Duration <= most) {
 		add("duration", diaphragm.CodeBounds, "The duration must be above 0 and at most "+strconv.Itoa(MostPeriods)+
 			" periods of mode (0, 1), which are "+short(most)+" s.")
 	}
@@ -107,5 +118,8 @@ func (c *Case) Check() []diaphragm.Problem {
 
 // period of mode (0,1), s.
 func (c *Case) period() float64 {
+	if c.Wet != nil && len(c.Wet.Orders) > 0 && len(c.Wet.Orders[0]) > 0 {
+		return 2 * math.Pi / c.Wet.Orders[0][0].Omega
+	}
 	return 2 * math.Pi / basisOf(0, 1).Zero(0, 1) * c.Sheet.Radius / c.Sheet.WaveSpeed()
 }

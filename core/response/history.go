@@ -3,8 +3,6 @@ package response
 import (
 	"context"
 	"math"
-
-	"hoopsheet/core/bessel"
 )
 
 const (
@@ -48,7 +46,7 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 				return nil, err
 			}
 		}
-		moves.modes[i].addHistory(sums, c.Points, solutions, step)
+		moves.addHistory(&moves.modes[i], sums, c.Points, solutions, step)
 	}
 	for i, sum := range sums {
 		h.values[i] = make([]float32, count)
@@ -61,7 +59,7 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 
 // addHistory adds one mode's displacement of every point at even steps of
 // time; solutions is work space.
-func (k *modal) addHistory(sums [][]float64, points []Point, solutions [2][]float64, step float64) {
+func (mo *motion) addHistory(k *modal, sums [][]float64, points []Point, solutions [2][]float64, step float64) {
 	advance := newStepper(k.omega, k.zeta, step)
 	cs, ss := solutions[0], solutions[1]
 	c, s := 1.0, 0.0
@@ -70,7 +68,7 @@ func (k *modal) addHistory(sums [][]float64, points []Point, solutions [2][]floa
 		c, s = advance.next(c, s)
 	}
 	for i, p := range points {
-		j := bessel.JInt(k.m, k.omega*p.Radius)
+		j := mo.radial(k, p.Radius)
 		sin, cos := math.Sincos(float64(k.m) * p.Angle)
 		alpha := j * (k.a*cos + k.b*sin)
 		beta := j * (k.va*cos + k.vb*sin) / k.omega

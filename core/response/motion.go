@@ -23,7 +23,10 @@ type modal struct {
 	m, n  int
 	omega float64 // equal to the zero j_mn for the ideal sheet
 	zeta  float64
-	norm  float64 // integral of the square of the mode over the unit disc
+	norm  float64 // modal mass: for the ideal sheet the integral of the square of the mode over the unit disc
+	// row holds the coefficients of J_m(j_m1 r), ... of a wet mode; nil for the
+	// ideal sheet, whose mode is the one at index.
+	row []float64
 	// a and b are the initial displacements of the cosine and the sine part,
 	// va and vb their initial velocities in m per a/c.
 	a, b, va, vb float64
@@ -41,14 +44,8 @@ const negligible = 1e-15
 func newMotion(b *disc.Basis, zeta float64, displacement, velocity []float64) *motion {
 	var all []modal
 	var total float64
-	value := make([]float64, 1)
 	for m := 0; m <= b.M; m++ {
-		largest := 1.0 // of |J_m|
-		if m > 0 {
-			// The first extreme is the largest (Watson 15.31).
-			bessel.ZerosJPrimeAndValue(make([]float64, 1), value, float64(m))
-			largest = value[0]
-		}
+		largest := largestBessel(m)
 		for n := 1; n <= b.N; n++ {
 			i := b.Index(m, n, disc.Cos)
 			mode := modal{
@@ -77,6 +74,17 @@ func newMotion(b *disc.Basis, zeta float64, displacement, velocity []float64) *m
 		moves.basis = basisOf(highest, b.N)
 	}
 	return moves
+}
+
+// largestBessel is the largest value of |J_m|.
+func largestBessel(m int) float64 {
+	if m == 0 {
+		return 1
+	}
+	// The first extreme is the largest (Watson 15.31).
+	value := make([]float64, 1)
+	bessel.ZerosJPrimeAndValue(make([]float64, 1), value, float64(m))
+	return value[0]
 }
 
 // bound sets size and decay; largest is that of |J_m|.
@@ -134,9 +142,43 @@ func (mo *motion) amplitudes(coef []float64, t float64) {
 		k := &mo.modes[i]
 		c, s := fundamental(k.omega, k.zeta, t)
 		s /= k.omega
-		coef[k.index] = c*k.a + s*k.va
-		coef[k.index+1] = c*k.b + s*k.vb
+		mo.place(coef, k, c*k.a+s*k.va, c*k.b+s*k.vb)
 	}
+}
+
+// place adds a mode of cosine amplitude q and sine amplitude p to the
+// coefficients.
+func (mo *motion) place(coef []float64, k *modal, q, p float64) {
+	if k.row == nil {
+		coef[k.index] += q
+		coef[k.index+1] += p
+		return
+	}
+	first := mo.basis.Index(k.m, 1, disc.Cos)
+	step := mo.basis.Index(k.m, 2, disc.Cos) - first
+	for n, s := range k.row {
+		coef[first+n*step] += q * s
+		coef[first+n*step+1] += p * s
+	}
+}
+
+// radial is the radial function of a mode at radius r.
+func (mo *motion) radial(k *modal, r float64) float64 {
+	if k.row == nil {
+		return bessel.JInt(k.m, k.omega*r)
+	}
+	return radialAt(mo.basis, k.m, k.row, r)
+}
+
+// shortest returns the largest wave number of the modes that move: 2 pi over
+// it is the shortest wavelength.
+func (mo *motion) shortest() float64 {
+	var wave float64
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		wave = math.Max(wave, mo.basis.Zero(k.m, min(k.n, mo.basis.N)))
+	}
+	return wave
 }
 
 // energy returns the potential and the kinetic energy at the time t, in units

@@ -30,48 +30,78 @@ func (mo *motion) probe(x, y, t float64) probe {
 	if r > 0 {
 		turn = complex(x/r, y/r)
 	}
-	back := complex(real(turn), -imag(turn))
 	order, phase := 0, complex(1, 0) // exp(i m theta)
-	for i := range mo.modes {
+	for i := 0; i < len(mo.modes); {
 		k := &mo.modes[i]
 		for order < k.m {
 			phase *= turn
 			order++
 		}
-		c, s := fundamental(k.omega, k.zeta, t)
-		dc, ds := -k.omega*s, k.omega*(c-2*k.zeta*s)
-		ddc := -k.omega * (k.omega*c + 2*k.zeta*dc)
-		dds := -k.omega * (k.omega*s + 2*k.zeta*ds)
-		iw := 1 / k.omega
-		// The cosine and the sine part are the real part of (a - ib) F_m.
-		q := complex(c*k.a+s*k.va*iw, -(c*k.b + s*k.vb*iw))
-		dq := complex(dc*k.a+ds*k.va*iw, -(dc*k.b + ds*k.vb*iw))
-		ddq := complex(ddc*k.a+dds*k.va*iw, -(ddc*k.b + dds*k.vb*iw))
-
-		j := besselAround(k.m, k.omega*r)
-		h := k.omega / 2
-		f := scaled(phase, j[2])
-		below, above := scaled(phase*back, j[1]), scaled(phase*turn, j[3])
-		below2, above2 := scaled(phase*back*back, j[0]), scaled(phase*turn*turn, j[4])
-		fx := scaled(below-above, h)
-		fy := complex(0, h) * (below + above)
-		outer := scaled(below2+above2, h*h)
-		fxx := outer - scaled(f, 2*h*h)
-		fyy := -outer - scaled(f, 2*h*h)
-		fxy := complex(0, h*h) * (below2 - above2)
-
-		p.w += real(q * f)
-		p.d[0] += real(q * fx)
-		p.d[1] += real(q * fy)
-		p.d[2] += real(dq * f)
-		p.dd[0] += real(q * fxx)
-		p.dd[1] += real(q * fxy)
-		p.dd[2] += real(q * fyy)
-		p.dd[3] += real(dq * fx)
-		p.dd[4] += real(dq * fy)
-		p.dd[5] += real(ddq * f)
+		if k.row == nil {
+			p.add(k.m, k.omega, r, phase, turn, k.amplitudes(t))
+			i++
+			continue
+		}
+		// Wet modes of one order share their Bessel functions.
+		mixed := make([]amplitude, mo.basis.N)
+		for ; i < len(mo.modes) && mo.modes[i].m == k.m; i++ {
+			own := mo.modes[i].amplitudes(t)
+			for n, s := range mo.modes[i].row {
+				mixed[n].q += scaled(own.q, s)
+				mixed[n].dq += scaled(own.dq, s)
+				mixed[n].ddq += scaled(own.ddq, s)
+			}
+		}
+		for n, own := range mixed {
+			p.add(k.m, mo.basis.Zero(k.m, n+1), r, phase, turn, own)
+		}
 	}
 	return p
+}
+
+// amplitude of a mode with its first and second derivative in time: the
+// cosine and the sine part are the real part of q exp(i m theta).
+type amplitude struct{ q, dq, ddq complex128 }
+
+func (k *modal) amplitudes(t float64) amplitude {
+	c, s := fundamental(k.omega, k.zeta, t)
+	dc, ds := -k.omega*s, k.omega*(c-2*k.zeta*s)
+	ddc := -k.omega * (k.omega*c + 2*k.zeta*dc)
+	dds := -k.omega * (k.omega*s + 2*k.zeta*ds)
+	iw := 1 / k.omega
+	return amplitude{
+		q:   complex(c*k.a+s*k.va*iw, -(c*k.b + s*k.vb*iw)),
+		dq:  complex(dc*k.a+ds*k.va*iw, -(dc*k.b + ds*k.vb*iw)),
+		ddq: complex(ddc*k.a+dds*k.va*iw, -(ddc*k.b + dds*k.vb*iw)),
+	}
+}
+
+// add adds J_m(wave r) exp(i m theta) with its amplitude.
+func (p *probe) add(m int, wave, r float64, phase, turn complex128, own amplitude) {
+	back := complex(real(turn), -imag(turn))
+	j := besselAround(m, wave*r)
+	h := wave / 2
+	f := scaled(phase, j[2])
+	below, above := scaled(phase*back, j[1]), scaled(phase*turn, j[3])
+	below2, above2 := scaled(phase*back*back, j[0]), scaled(phase*turn*turn, j[4])
+	fx := scaled(below-above, h)
+	fy := complex(0, h) * (below + above)
+	outer := scaled(below2+above2, h*h)
+	fxx := outer - scaled(f, 2*h*h)
+	fyy := -outer - scaled(f, 2*h*h)
+	fxy := complex(0, h*h) * (below2 - above2)
+
+	q, dq, ddq := own.q, own.dq, own.ddq
+	p.w += real(q * f)
+	p.d[0] += real(q * fx)
+	p.d[1] += real(q * fy)
+	p.d[2] += real(dq * f)
+	p.dd[0] += real(q * fxx)
+	p.dd[1] += real(q * fxy)
+	p.dd[2] += real(q * fyy)
+	p.dd[3] += real(dq * fx)
+	p.dd[4] += real(dq * fy)
+	p.dd[5] += real(ddq * f)
 }
 
 func scaled(z complex128, by float64) complex128 { return complex(real(z)*by, imag(z)*by) }

@@ -6,6 +6,7 @@ import (
 	"slices"
 
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/disc"
 )
 
 // Motion is the answer to a Case.
@@ -46,7 +47,7 @@ type start struct {
 	displacement, velocity       form
 	moves                        *motion
 	potential, kinetic           float64 // exact, in units of T/2; +Inf with a jump
-	keptPotential, keptKinetic   float64 // of the chosen modes
+	keptPotential, keptKinetic   float64 // of the chosen modes, the sheet alone
 	steepest                     float64 // largest initial slope per unit of a
 	displacementScale, velocityA float64 // m; velocity times a/c, m
 }
@@ -90,7 +91,7 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 		Histories:    histories.values,
 		Travel:       travelOf(top, unit, c.Duration),
 		Period:       c.period(),
-		RingDown:     ringDown(2*math.Pi/c.period(), c.Zeta),
+		RingDown:     ringDown(2*math.Pi/c.period(), c.lowestZeta()),
 	}
 	begin.account(m, c)
 	m.Assumptions = c.assumptions()
@@ -110,6 +111,10 @@ func (c *Case) start() (*start, []diaphragm.Problem) {
 		displacementScale: c.Displacement.Peak,
 		velocityA:         c.Velocity.Peak * c.Sheet.Radius / c.Sheet.WaveSpeed(),
 	}
+	if c.Impulse {
+		// Momentum per area over sigma is the velocity that the sheet alone would take.
+		s.velocityA /= c.Sheet.ArealDensity
+	}
 	var problems, more []diaphragm.Problem
 	s.displacement, problems = c.Displacement.form(basis, "displacement.")
 	s.velocity, more = c.Velocity.form(basis, "velocity.")
@@ -124,13 +129,40 @@ func (c *Case) start() (*start, []diaphragm.Problem) {
 		}
 		return coef
 	}
-	s.moves = newMotion(basis, c.Zeta, project(s.displacement, s.displacementScale), project(s.velocity, s.velocityA))
-	s.keptPotential, s.keptKinetic = s.moves.energy(0)
+	displacement, velocity := project(s.displacement, s.displacementScale), project(s.velocity, s.velocityA)
+	if c.Wet != nil {
+		s.moves = wetMotion(basis, c.Wet, displacement, velocity, c.Impulse, c.Sheet.Radius/c.Sheet.WaveSpeed())
+	} else {
+		s.moves = newMotion(basis, c.Zeta, displacement, velocity)
+	}
+	s.keptPotential, s.keptKinetic = kept(basis, displacement, velocity)
 	n := s.displacement.norms()
 	s.potential = times(s.displacementScale*s.displacementScale, n.slope)
 	s.steepest = times(math.Abs(s.displacementScale), n.steepest)
 	s.kinetic = times(s.velocityA*s.velocityA, s.velocity.norms().square)
 	return s, nil
+}
+
+// kept gives the strain energy of the displacement and the kinetic energy of
+// the velocity, of the sheet alone, that the coefficients hold, in units of T/2.
+func kept(b *disc.Basis, displacement, velocity []float64) (potential, kinetic float64) {
+	for m := 0; m <= b.M; m++ {
+		for n := 1; n <= b.N; n++ {
+			i, norm := b.Index(m, n, disc.Cos), b.Norm(m, n)
+			j := b.Zero(m, n)
+			potential += j * j * norm * (displacement[i]*displacement[i] + displacement[i+1]*displacement[i+1])
+			kinetic += norm * (velocity[i]*velocity[i] + velocity[i+1]*velocity[i+1])
+		}
+	}
+	return potential, kinetic
+}
+
+// lowestZeta is the damping ratio of mode (0,1).
+func (c *Case) lowestZeta() float64 {
+	if c.Wet != nil && len(c.Wet.Orders) > 0 && len(c.Wet.Orders[0]) > 0 {
+		return c.Wet.Orders[0][0].Zeta
+	}
+	return c.Zeta
 }
 
 // times is the product in which nothing times anything is nothing.
@@ -149,6 +181,11 @@ func (s *start) account(m *Motion, c *Case) {
 	whole := s.potential + s.kinetic
 	if math.IsInf(whole, 1) {
 		whole = s.keptPotential + s.keptKinetic
+	}
+	if c.Wet != nil {
+		// The fluid moves too, and a cavity stores energy: what the modes hold.
+		potential, kinetic := s.moves.energy(0)
+		whole = potential + kinetic
 	}
 	m.Energy = c.Sheet.Tension / 2 * whole
 	m.Strongest = s.moves.strongest(whole, c)

@@ -46,12 +46,13 @@ type search struct {
 func newSearch(mo *motion, end float64) *search {
 	s := &search{moves: mo.slower()}
 	fastest := math.Max(s.moves.fastest(), 1)
+	shortest := math.Max(s.moves.shortest(), 1)
 	wanted := fastest*end/(2*math.Pi)*searchSteps + 1
 	s.capped = wanted > mostSearch
 	s.count = int(math.Ceil(math.Min(math.Max(wanted, 16), mostSearch)))
 	s.step = end / float64(s.count-1)
 
-	radii := make([]float64, max(9, int(math.Ceil(fastest/(2*math.Pi)*searchSteps))+1))
+	radii := make([]float64, max(9, int(math.Ceil(shortest/(2*math.Pi)*searchSteps))+1))
 	for i := range radii {
 		radii[i] = float64(i) / float64(len(radii))
 	}
@@ -96,12 +97,15 @@ func (mo *motion) slower() *motion {
 		if mode.omega < cut {
 			kept.modes = append(kept.modes, mode)
 			highest, circles = max(highest, mode.m), max(circles, mode.n)
+			if mode.row != nil {
+				circles = mo.basis.N // a wet mode has them all
+			}
 		}
 	}
 	kept.basis = basisOf(highest, circles)
 	for i := range kept.modes {
 		mode := &kept.modes[i]
-		mode.index = kept.basis.Index(mode.m, mode.n, disc.Cos)
+		mode.index = kept.basis.Index(mode.m, min(mode.n, circles), disc.Cos)
 	}
 	return kept
 }
@@ -178,11 +182,11 @@ func (w *walk) next() {
 }
 
 func (w *walk) fill() {
+	clear(w.coef)
 	for i := range w.moves.modes {
 		k := &w.moves.modes[i]
 		c, s := w.c[i], w.s[i]/k.omega
-		w.coef[k.index] = c*k.a + s*k.va
-		w.coef[k.index+1] = c*k.b + s*k.vb
+		w.moves.place(w.coef, k, c*k.a+s*k.va, c*k.b+s*k.vb)
 	}
 }
 

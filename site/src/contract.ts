@@ -25,7 +25,6 @@ export type CreateFrom = 'demo' | 'blank' | 'document';
  */
 export type Dimension =
   | 'length'
-  | 'area'
   | 'areal-density'
   | 'line-tension'
   | 'pressure'
@@ -59,16 +58,7 @@ export type FluidName = 'air' | 'nitrogen' | 'helium' | 'sulfur-hexafluoride' | 
  * GroupName names the panel part in which a field stands.
  */
 export type GroupName =
-  | 'identity'
-  | 'ring'
-  | 'sheet'
-  | 'tension'
-  | 'evenness'
-  | 'attached'
-  | 'faces'
-  | 'surroundings'
-  | 'avoid'
-  | 'damping';
+  'identity' | 'ring' | 'sheet' | 'tension' | 'faces' | 'surroundings' | 'avoid' | 'damping';
 /**
  * Kind tells whether a peak rings down.
  */
@@ -1108,12 +1098,20 @@ export interface RenameRequest {
   name: string;
 }
 /**
- * RespondRequest asks what the ideal sheet does after its initial values.
+ * RespondRequest asks what the diaphragm does after its initial values.
  */
 export interface RespondRequest {
   document: Diaphragm;
   displacement: Shape;
   velocity: Shape;
+  /**
+   * Impulse reads Velocity as a blow: momentum per area, N s/m^2, instead of m/s. A blow sets the fluid moving too.
+   */
+  impulse?: boolean;
+  /**
+   * Without names effects to leave out; without all of them the ideal sheet moves, every mode with the damping ratio of the document.
+   */
+  without?: Effect[];
   /**
    * Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
    */
@@ -1163,7 +1161,7 @@ export interface RespondResult {
   missedVelocity: number;
   missedEnergy: number;
   /**
-   * Energy is the initial energy, J, of the ideal sheet.
+   * Energy is the initial energy, J, of sheet, fluid and cavity.
    */
   energy: number;
   /**

@@ -101,6 +101,7 @@ export class HoopRespond extends LitElement {
       document,
       displacement: this.shape('displacement'),
       velocity: this.shape('velocity'),
+      impulse: this.setup.impulse,
       orders: this.setup.orders,
       circles: this.setup.orders,
       duration: this.texts.value('duration'),
@@ -238,10 +239,12 @@ export class HoopRespond extends LitElement {
       <select id="kind-${part}" @change=${(e: Event) => this.changeShape(part, { kind: (e.target as HTMLSelectElement).value as ShapeKind })}>
         ${Object.entries(kindNames[part]).map(([kind, name]) => html`<option value=${kind} ?selected=${kind === shape.kind}>${name}</option>`)}
       </select>
+      ${part === 'velocity' && has.peak ? html`<label><input type="checkbox" id="impulse" .checked=${this.setup.impulse}
+        @change=${(e: Event) => this.change({ ...this.setup, impulse: (e.target as HTMLInputElement).checked })} /> a blow of given momentum, which moves the fluid too</label>` : nothing}
       ${has.formula ? this.typed(`${part}.formula`, symbol, 'formula in r, theta, x, y', shape.formula, '', set('formula'),
         'r runs from 0 at the centre to 1 at the rim; theta is in radians; x = r cos theta, y = r sin theta.', true) : nothing}
-      ${has.peak ? this.typed(`${part}.peak`, symbol, has.formula ? 'times' : part === 'displacement' ? 'largest height' : 'speed', shape.peak,
-        part === 'displacement' ? 'mm' : 'm/s', set('peak')) : nothing}
+      ${has.peak ? this.typed(`${part}.peak`, symbol, has.formula ? 'times' : part === 'displacement' ? 'largest height' : this.setup.impulse ? 'momentum per area' : 'speed', shape.peak,
+        part === 'displacement' ? 'mm' : this.setup.impulse ? 'N s/m²' : 'm/s', set('peak')) : nothing}
       ${has.place ? html`
         ${this.typed(`${part}.radius`, 'r', 'from the centre, in radii', shape.radius, 'a', set('radius'))}
         ${this.typed(`${part}.angle`, 'θ', 'angle, anticlockwise from the right', shape.angle, '', set('angle'))}
@@ -290,13 +293,13 @@ export class HoopRespond extends LitElement {
   private modesPanel(result: RespondResult): TemplateResult {
     const table: ShownTable = {
       name: 'modes-that-matter',
-      heads: ['m', 'n', 'ideal frequency, Hz', 'share of the energy, %'],
+      heads: ['m', 'n', 'frequency, Hz', 'share of the energy, %'],
       rows: result.strongest.map((s) => [s.m, s.n, s.frequency, s.share * 100]),
     };
     return html`<section class="panel" aria-labelledby="matter-title">
       <h2 id="matter-title">Modes that matter</h2>
       <div class="table-scroll"><table>
-        <thead><tr><th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">ideal frequency</th><th scope="col" class="number">share of the energy</th></tr></thead>
+        <thead><tr><th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">frequency</th><th scope="col" class="number">share of the energy</th></tr></thead>
         <tbody>${result.strongest.map((s) => html`<tr><th scope="row">(${s.m}, ${s.n})</th><td class="number">${figure(s.frequency)} Hz</td><td class="number">${percent(s.share, 3)}</td></tr>`)}</tbody>
       </table></div>
       <hoop-table-actions .table=${table} .whole=${result.strongest}></hoop-table-actions>

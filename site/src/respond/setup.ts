@@ -18,6 +18,8 @@ export interface PointSetup {
 export interface Setup {
   displacement: ShapeSetup;
   velocity: ShapeSetup;
+  /** The velocity is a blow: momentum per area. */
+  impulse: boolean;
   duration: string;
   orders: number;
   points: PointSetup[];
@@ -29,12 +31,13 @@ export const parts: readonly Part[] = ['displacement', 'velocity'];
 
 export const mostPoints = 4;
 
-export const modeChoices = [8, 12, 16, 24, 32];
+export const modeChoices = [8, 12, 16, 20];
 
 export function firstSetup(): Setup {
   return {
     displacement: { kind: 'point', peak: '5 mm', radius: '0.4', angle: '30°', width: '0.1', formula: '(1 - r^2) * x' },
-    velocity: { kind: 'rest', peak: '1 m/s', radius: '0', angle: '0°', width: '0.2', formula: '1 - r^2' },
+    velocity: { kind: 'rest', peak: '0.5', radius: '0', angle: '0°', width: '0.2', formula: '1 - r^2' },
+    impulse: true,
     duration: '',
     orders: 16,
     points: [{ radius: '0', angle: '0°' }, { radius: '0.5', angle: '120°' }],
@@ -80,7 +83,7 @@ export function readItems(setup: Setup): ReadItem[] {
       if (part === 'displacement') {
         item('displacement.peak', 'height', shape.peak, 'length', 'mm', -10, 10);
       } else {
-        item('velocity.peak', 'speed', shape.peak, 'speed', 'm/s', -1000, 1000);
+        item('velocity.peak', setup.impulse ? 'momentum per area' : 'speed', shape.peak, setup.impulse ? 'ratio' : 'speed', setup.impulse ? '' : 'm/s', -1000, 1000);
       }
     }
     if (has.place) {
