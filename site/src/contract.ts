@@ -25,6 +25,7 @@ export type CreateFrom = 'demo' | 'blank' | 'document';
  */
 export type Dimension =
   | 'length'
+  | 'area'
   | 'areal-density'
   | 'line-tension'
   | 'pressure'
@@ -58,7 +59,16 @@ export type FluidName = 'air' | 'nitrogen' | 'helium' | 'sulfur-hexafluoride' | 
  * GroupName names the panel part in which a field stands.
  */
 export type GroupName =
-  'identity' | 'ring' | 'sheet' | 'tension' | 'faces' | 'surroundings' | 'avoid' | 'damping';
+  | 'identity'
+  | 'ring'
+  | 'sheet'
+  | 'tension'
+  | 'evenness'
+  | 'attached'
+  | 'faces'
+  | 'surroundings'
+  | 'avoid'
+  | 'damping';
 /**
  * Kind tells whether a peak rings down.
  */

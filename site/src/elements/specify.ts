@@ -10,14 +10,26 @@ import './field.js';
 import { cautions } from './notes.js';
 import { sharedStyle } from './style.js';
 
-const groups: readonly { readonly name: GroupName; readonly title: string }[] = [
+interface Group {
+  readonly name: GroupName;
+  readonly title: string;
+  /** Lists within the group: path, and what one entry is called. */
+  readonly lists?: readonly { readonly path: string; readonly one: string }[];
+  /** Most diaphragms leave these groups as they are. */
+  readonly folded?: boolean;
+}
+
+const groups: readonly Group[] = [
   { name: 'identity', title: 'Name and place' },
   { name: 'ring', title: 'Ring' },
   { name: 'sheet', title: 'Sheet' },
   { name: 'tension', title: 'Tension' },
+  { name: 'evenness', title: 'Evenness of the tension', lists: [{ path: 'tension.harmonics', one: 'harmonic' }], folded: true },
+  { name: 'attached', title: 'Attached to the sheet', lists: [{ path: 'attached.patches', one: 'patch' }, { path: 'attached.strips', one: 'strip' }], folded: true },
   { name: 'faces', title: 'What lies on each face' },
   { name: 'surroundings', title: 'Air and service' },
   { name: 'damping', title: 'Damping' },
+  { name: 'avoid', title: 'Frequencies to keep clear of', lists: [{ path: 'avoid.lines', one: 'line' }] },
 ];
 
 @customElement('hoop-specify')
@@ -28,6 +40,8 @@ export class HoopSpecify extends LitElement {
       .line { border: 1px solid var(--rule); border-radius: var(--radius); padding: 4px 14px 8px; margin: 0 0 14px; }
       .line > header { display: flex; justify-content: space-between; align-items: center; gap: 16px; }
       .line h3 { margin: 0.4em 0; }
+      summary { cursor: pointer; min-height: 44px; }
+      summary h2 { display: inline-block; margin: 6px 0; }
     `,
   ];
 
@@ -44,38 +58,43 @@ export class HoopSpecify extends LitElement {
       ${session.problems.length > 0 ? html`<p class="note" role="status" id="attention">
         ${session.problems.length === 1 ? 'One field needs' : `${session.problems.length} fields need`} attention;
         until then the figures use the last sound value of each.</p>` : nothing}
-      ${groups.map((g) => this.group(g.name, g.title))}
-      ${this.lines()}
+      ${groups.map((g) => this.group(g))}
       ${cautions(session.cautions)}`;
   }
 
-  private group(name: GroupName, title: string): TemplateResult {
-    return html`<section class="panel" aria-labelledby="g-${name}">
-      <h2 id="g-${name}">${title}</h2>
-      ${session.rows.filter((r) => r.group === name).map((r) => html`<hoop-field .row=${r} data-field=${r.field}></hoop-field>`)}
-      ${derivedTable(session.derived.filter((d) => d.group === name))}
+  private group(group: Group): TemplateResult {
+    const rows = session.rows.filter((r) => r.group === group.name);
+    const listed = (group.lists ?? []).map((l) => ({ ...l, rows: rows.filter((r) => r.field.startsWith(`${l.path}.`)) }));
+    const single = rows.filter((r) => !listed.some((l) => l.rows.includes(r)));
+    const used = listed.some((l) => l.rows.length > 0) || session.problems.some((p) => rows.some((r) => r.field === p.field));
+    const body = html`${single.map((r) => field(r))}
+      ${listed.map((l) => this.list(l.path, l.one, l.rows))}
+      ${derivedTable(session.derived.filter((d) => d.group === group.name))}`;
+    return html`<section class="panel" aria-labelledby="g-${group.name}">
+      ${group.folded ? html`<details ?open=${used}><summary><h2 id="g-${group.name}">${group.title}</h2></summary>${body}</details>`
+        : html`<h2 id="g-${group.name}">${group.title}</h2>${body}`}
     </section>`;
   }
 
-  private lines(): TemplateResult {
-    const rows = session.rows.filter((r) => r.group === 'avoid');
-    const lines = new Map<string, Row[]>();
+  private list(path: string, one: string, rows: readonly Row[]): TemplateResult {
+    const entries = new Map<string, Row[]>();
     for (const row of rows) {
-      const key = /^avoid\.lines\.\d+/.exec(row.field)?.[0];
-      if (key !== undefined) {
-        lines.set(key, [...(lines.get(key) ?? []), row]);
-      }
+      const key = row.field.slice(0, row.field.indexOf('.', path.length + 1));
+      entries.set(key, [...(entries.get(key) ?? []), row]);
     }
-    const rest = rows.filter((r) => !r.field.startsWith('avoid.lines.'));
-    return html`<section class="panel" aria-labelledby="g-avoid">
-      <h2 id="g-avoid">Frequencies to keep clear of</h2>
-      ${rest.map((r) => html`<hoop-field .row=${r} data-field=${r.field}></hoop-field>`)}
-      ${[...lines].map(([key, fields], i) => html`<div class="line">
-        <header><h3>Line ${i + 1}</h3>
-          <button type="button" @click=${() => void session.edit({ field: key, action: 'remove', text: '' })}>Remove line ${i + 1}</button></header>
-        ${fields.map((r) => html`<hoop-field .row=${r} data-field=${r.field}></hoop-field>`)}
+    return html`${[...entries].map(([key, fields], i) => html`<div class="line">
+        <header><h3>${capital(one)} ${i + 1}</h3>
+          <button type="button" @click=${() => void session.edit({ field: key, action: 'remove', text: '' })}>Remove ${one} ${i + 1}</button></header>
+        ${fields.map((r) => field(r))}
       </div>`)}
-      <button type="button" @click=${() => void session.edit({ field: 'avoid.lines', action: 'add', text: '' })}>Add a line</button>
-    </section>`;
+      <div class="actions"><button type="button" @click=${() => void session.edit({ field: path, action: 'add', text: '' })}>Add a ${one}</button></div>`;
   }
+}
+
+function field(row: Row): TemplateResult {
+  return html`<hoop-field .row=${row} data-field=${row.field}></hoop-field>`;
+}
+
+function capital(word: string): string {
+  return word.charAt(0).toUpperCase() + word.slice(1);
 }
