@@ -10,8 +10,9 @@ import "hoopsheet/core/disc"
 // still fluid for c0 infinite.
 type baffledFace struct {
 	tables  *fluidTables
-	density float64 // times a^3
-	reach   float64 // a/c0; 0 for still fluid
+	live    *fluidTables // of the shapes whose share of sound counts
+	density float64      // times a^3
+	reach   float64      // a/c0; 0 for still fluid
 }
 
 func (f *baffledFace) static(x []float64) {
@@ -22,7 +23,7 @@ func (f *baffledFace) moving() bool { return f.reach > 0 }
 
 func (f *baffledFace) dynamic(re, im []float64, omega complex128) bool {
 	k0 := omega * complex(f.reach, 0)
-	return f.tables.series(disc.HeldEdge, seriesPowers(k0)).at(re, im, k0, f.density)
+	return f.live.series(disc.HeldEdge, seriesPowers(k0)).at(re, im, f.tables.n, k0, f.density)
 }
 
 // addScaled adds factor times y to x.

@@ -36,24 +36,60 @@ type cavityFace struct {
 	vented         bool
 	ventMass       float64 // effective length times sheet area over vent area, over a
 	ventResistance float64 // Resistance times sheet area over rho a, 1/s
-	tail           [4][]float64
+
+	live   int       // shapes whose change with frequency counts
+	most   float64   // the largest sound number the sums are ready for
+	exact  int       // radial modes that follow the frequency exactly
+	atRest []float64 // coth(k l)/k of each mode, none for the piston
+	still  []float64 // their matrix
+	tail   [3][]float64
 }
 
+// prepare sums what does not depend on frequency.
 func (f *cavityFace) prepare() {
+	n := f.modes.n
+	f.still = make([]float64, n*n)
+	f.atRest = make([]float64, len(f.modes.k))
+	for q, k := range f.modes.k {
+		if k > 0 {
+			f.atRest[q] = 1 / (k * math.Tanh(k*f.depth))
+			f.modes.addMode(f.still, q, f.atRest[q], n)
+		}
+	}
+	f.modes.addBeyond(f.still, f.depth)
+	for i := range n {
+		for j := range i {
+			f.still[j*n+i] = f.still[i*n+j]
+		}
+	}
+}
+
+// follow sets the largest sound number that the face has to follow.
+func (f *cavityFace) follow(most float64) {
+	f.most, f.exact = most, 1
+	for f.exact < len(f.modes.k) && f.modes.k[f.exact] < cavityAbove*most {
+		f.exact++
+	}
 	n := f.modes.n
 	for p := range f.tail {
 		f.tail[p] = make([]float64, n*n)
 	}
-	for q := cavityLive; q < len(f.modes.k); q++ {
-		for p, v := range cothSeries(f.modes.k[q], f.depth) {
-			f.modes.addMode(f.tail[p], q, v)
+	for q := f.exact; q < len(f.modes.k); q++ {
+		k := f.modes.k[q]
+		series := cothSeries(k, f.depth)
+		size := most * most
+		for p, v := range series[1:] {
+			if v*size < 1e-14 {
+				break // of the first entry of the matrix, about 0.03, times 1/k^3
+			}
+			size *= most * most
+			f.modes.addMode(f.tail[p], q, v, f.live)
 		}
 	}
-	f.modes.addBeyond(f.tail[0], f.depth)
 }
 
-// static adds nothing: every part depends on frequency.
-func (f *cavityFace) static([]float64) {}
+// static adds the radial modes but the piston as they are at low frequency.
+func (f *cavityFace) static(x []float64) { addScaled(x, f.still, f.density) }
 
 func (f *cavityFace) moving() bool { return true }
 
@@ -77,29 +113,30 @@ func (f *cavityFace) mobility(q int, k0, omega complex128) complex128 {
 
 func (f *cavityFace) dynamic(re, im []float64, omega complex128) bool {
 	k0 := omega * complex(f.reach, 0)
-	for q := range min(cavityLive, len(f.modes.k)) {
-		v := f.mobility(q, k0, omega) * complex(f.density, 0)
-		f.modes.addMode(re, q, real(v))
+	if size := cmplx.Abs(k0); size > f.most {
+		f.follow(2 * size)
+	}
+	for q := range f.exact {
+		v := (f.mobility(q, k0, omega) - complex(f.atRest[q], 0)) * complex(f.density, 0)
+		f.modes.addMode(re, q, real(v), f.live)
 		if imag(v) != 0 {
-			f.modes.addMode(im, q, imag(v))
+			f.modes.addMode(im, q, imag(v), f.live)
 		}
 	}
 	z := k0 * k0
 	power := complex(f.density, 0)
+	n := f.modes.n
 	for _, x := range f.tail {
+		power *= z
 		a, b := real(power), imag(power)
-		for i, v := range x {
-			re[i] += a * v
-		}
-		if b != 0 {
-			for i, v := range x {
-				im[i] += b * v
+		for i := range f.live {
+			for j, v := range x[i*n : i*n+i+1] {
+				re[i*n+j] += a * v
+				im[i*n+j] += b * v
 			}
 		}
-		power *= z
 	}
-	// The first wave number left to the series must be well above k0.
-	return cmplx.Abs(k0) < f.modes.k[cavityLive]/4
+	return true
 }
 
 // poles returns how many resonances the cavity has below omega with the sheet
@@ -107,7 +144,7 @@ func (f *cavityFace) dynamic(re, im []float64, omega complex128) bool {
 func (f *cavityFace) poles(omega float64) int {
 	k0 := omega * f.reach
 	count := 0
-	for q, k := range f.modes.k {
+	for _, k := range f.modes.k {
 		if k >= k0 {
 			break
 		}
@@ -124,7 +161,6 @@ func (f *cavityFace) poles(omega float64) int {
 				count++
 			}
 		}
-		_ = q
 	}
 	return count
 }

@@ -14,6 +14,11 @@ type cavitySearch struct {
 	c      []float64
 }
 
+func newCavitySearch(o *wetOrder) *cavitySearch {
+	n, size := o.strain.n, o.strain.size
+	return &cavitySearch{o: o, re: make([]float64, n*n), im: make([]float64, n*n), c: make([]float64, size*size)}
+}
+
 // below returns the number of modes below omega and, apart, how many of them
 // are poles of the cavity.
 func (s *cavitySearch) below(omega float64) (modes, poles int) {
@@ -25,10 +30,9 @@ func (s *cavitySearch) below(omega float64) (modes, poles int) {
 	size := o.strain.size
 	clear(s.re)
 	clear(s.im)
-	resistance := o.cavity.ventResistance
-	o.cavity.ventResistance = 0
+	resistance := o.quiet()
 	o.cavity.dynamic(s.re, s.im, complex(omega, 0))
-	o.cavity.ventResistance = resistance
+	o.loud(resistance)
 	o.strain.congruence(s.c, s.re)
 	square := omega * omega
 	for i := range size {
@@ -65,6 +69,38 @@ func (s *cavitySearch) below(omega float64) (modes, poles int) {
 // find returns the count lowest modes of the order, lowest first.
 func (s *cavitySearch) find(count int) []wetMode {
 	o := s.o
+	reach := o.cavity.reach
+	if o.m > 0 {
+		// Below its first resonance the cavity is nearly a mass, and the modes with
+		// the mass at rest lead to the answer; the count proves it.
+		most := 1.5 * reach / math.Sqrt(o.values[count-1])
+		o.cavity.follow(math.Max(most, 0.1))
+		if modes, ok := s.fromRest(count); ok {
+			return modes
+		}
+	}
+	return s.fromCounts(count)
+}
+
+// fromRest starts from the modes with the cavity as at rest.
+func (s *cavitySearch) fromRest(count int) ([]wetMode, bool) {
+	modes := make([]wetMode, count)
+	before := 0.0
+	for k := range modes {
+		mode := s.lossless(s.o.still(k))
+		w := real(mode.omega())
+		if !mode.good || mode.change > 1e-9 || w <= before*(1+1e-9) || math.Abs(imag(mode.omega())) > 1e-9*w {
+			return nil, false
+		}
+		modes[k], before = mode, w
+	}
+	found, _ := s.below(before * (1 + 1e-10))
+	return modes, found == count
+}
+
+// fromCounts closes in on every mode by counting.
+func (s *cavitySearch) fromCounts(count int) []wetMode {
+	o := s.o
 	modes := make([]wetMode, 0, count)
 	lo := 0.0
 	for k := 1; k <= count; k++ {
@@ -80,27 +116,27 @@ func (s *cavitySearch) find(count int) []wetMode {
 		a, b := lo, hi
 		aModes, aPoles := s.below(a)
 		bModes, bPoles := s.below(b)
-		for b-a > 1e-15*b {
-			if aModes == k-1 && bModes == k && aPoles == bPoles && b-a < 1e-3*b {
+		for {
+			if aModes == k-1 && bModes == k && aPoles == bPoles && b-a < 0.02*b {
 				if mode, ok := s.polish(a, b); ok {
 					modes = append(modes, mode)
 					break
 				}
+			}
+			if b-a <= 1e-13*b {
+				// The mode lies on a pole or on its neighbour: take the place; the
+				// vector is the best there is.
+				mode, _ := s.polish(a, b)
+				mode.theta = complex(4/((a+b)*(a+b)), 0)
+				mode.change = 2e-13
+				modes = append(modes, mode)
+				break
 			}
 			x := a + (b-a)/2
 			if n, p := s.below(x); n >= k {
 				b, bModes, bPoles = x, n, p
 			} else {
 				a, aModes, aPoles = x, n, p
-			}
-			if b-a <= 1e-13*b {
-				// The mode lies on a pole or on its neighbour: take the place; the
-				// vector is the best there is.
-				mode, _ := s.polish(a, b)
-				mode.theta = complex(1/((a+b)*(a+b)/4), 0)
-				mode.change = 2e-13
-				modes = append(modes, mode)
-				break
 			}
 		}
 		lo = a
@@ -116,10 +152,9 @@ func (s *cavitySearch) polish(a, b float64) (wetMode, bool) {
 	theta := complex(1/(x*x), 0)
 	c := make([]complex128, size*size)
 	y := make([]complex128, size)
-	resistance := o.cavity.ventResistance
-	o.sound, o.cavity.ventResistance = 0, 0
-	defer func() { o.sound, o.cavity.ventResistance = 1, resistance }()
+	resistance := o.quiet()
 	o.at(c, complex(x, 0))
+	o.loud(resistance)
 	for i := range size {
 		c[i*size+i] -= theta
 		y[i] = complex(1+0.5*math.Sin(float64(7*i+1)), 0)
@@ -129,9 +164,29 @@ func (s *cavitySearch) polish(a, b float64) (wetMode, bool) {
 		symmetricSolve(c, size, y)
 		turnToUnit(y)
 	}
-	mode, _ := o.iterate(wetMode{theta: theta, y: y, good: true})
+	mode := s.lossless(wetMode{theta: theta, y: y, good: true})
 	w := real(mode.omega())
 	return mode, mode.good && mode.change < 1e-9 && w > a && w < b && math.Abs(imag(mode.omega())) < 1e-9*w
+}
+
+// lossless solves for a mode from a start, other faces still, a vent without
+// resistance.
+func (s *cavitySearch) lossless(start wetMode) wetMode {
+	resistance := s.o.quiet()
+	defer s.o.loud(resistance)
+	mode, _ := s.o.iterate(start)
+	return mode
+}
+
+// quiet takes losses away and returns the resistance for loud to put back.
+func (o *wetOrder) quiet() float64 {
+	resistance := o.cavity.ventResistance
+	o.sound, o.cavity.ventResistance = 0, 0
+	return resistance
+}
+
+func (o *wetOrder) loud(resistance float64) {
+	o.sound, o.cavity.ventResistance = 1, resistance
 }
 
 // turnToUnit scales y to y'y = 1.
@@ -151,7 +206,7 @@ func (o *wetOrder) addCavity(f Face) {
 	a := o.radius
 	c := &cavityFace{
 		modes: o.tables.radialModes(), density: f.Density * a * a * a,
-		reach: a / f.SoundSpeed, depth: f.Depth / a,
+		reach: a / f.SoundSpeed, depth: f.Depth / a, live: o.tables.n,
 	}
 	if f.Vent != nil && f.Vent.Area > 0 && o.m == 0 {
 		ratio := math.Pi * a * a / f.Vent.Area

@@ -7,11 +7,12 @@ import (
 )
 
 // cavityModes is the number of radial modes of a cavity that are summed; what
-// lies beyond is added in the limit of short waves. The first cavityLive of
-// them follow the frequency exactly, the others by a power series.
+// lies beyond is added in the limit of short waves. Those below cavityAbove
+// times the largest sound number follow the frequency exactly, the others by a
+// power series of four terms, which errs by cavityAbove^-8.
 const (
 	cavityModes = 128
-	cavityLive  = 24
+	cavityAbove = 12
 )
 
 // cavityTable holds, for one order and number of shapes, the radial modes of a
@@ -62,10 +63,10 @@ func (t *fluidTables) radialModes() *cavityTable {
 	return c
 }
 
-// addMode adds factor times the square of radial mode q to the lower triangle
-// of x.
-func (c *cavityTable) addMode(x []float64, q int, factor float64) {
-	row := c.part[q*c.n : (q+1)*c.n]
+// addMode adds factor times the square of radial mode q, for the first live
+// shapes, to the lower triangle of x (n by n).
+func (c *cavityTable) addMode(x []float64, q int, factor float64, live int) {
+	row := c.part[q*c.n : q*c.n+live]
 	for i, v := range row {
 		v *= factor
 		xi := x[i*c.n : i*c.n+i+1]

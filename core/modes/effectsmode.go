@@ -104,10 +104,7 @@ func (p *wetPlan) weigh(o *wetOrder, w wetMode, mode *RealMode) {
 	// With y'y = 1 the mass in the denominator of the response near the mode,
 	// -d(1 - omega^2 C)/d omega^2, is theta (1 - slope); theta alone if the fluid
 	// is still.
-	y := make([]float64, len(w.y))
-	for i, v := range w.y {
-		y[i] = real(v)
-	}
+	y := o.unknowns(w)
 	q := make([]float64, n)
 	o.strain.shapes(q, y)
 	sheetShare := o.sheet * bilinear(o.tables.sheetMass(), n, q)

@@ -169,7 +169,7 @@ func TestBaffledRadiation(t *testing.T) {
 		tables := tablesOf(c.m, n)
 		square := bilinear(tables.sheetMass(), n, q)
 		for i, k0 := range []float64{0.25, 0.5, 1, 2, 3} {
-			face := &baffledFace{tables: tables, density: 1, reach: 1}
+			face := &baffledFace{tables: tables, live: tables, density: 1, reach: 1}
 			z := dynamicForm(face, tables, q, complex(k0, 0))
 			mass, resistance := real(z)/square, k0*imag(z)/square
 			// Half a unit of the last printed decimal.
@@ -192,7 +192,7 @@ func TestSeriesReach(t *testing.T) {
 			n := series.n
 			for _, k0 := range []float64{0.3, 1, 3, 6, MaxSoundNumber} {
 				re, im := make([]float64, n*n), make([]float64, n*n)
-				if !series.at(re, im, complex(k0, 0), 1) {
+				if !series.at(re, im, n, complex(k0, 0), 1) {
 					t.Errorf("m %d, k0 %v: the series is too short", m, k0)
 				}
 				for _, i := range []int{0, 2} {

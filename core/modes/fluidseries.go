@@ -48,10 +48,11 @@ func newSoundSeries(edge disc.Edge, m, n, powers int) *soundSeries {
 	return s
 }
 
-// at adds to the lower triangles of re and im (n by n) the operator at the
-// complex wave number k0, times factor. The static term is left out: it belongs
-// to the still fluid. It returns false if the series has too few terms.
-func (s *soundSeries) at(re, im []float64, k0 complex128, factor float64) bool {
+// at adds to the lower triangles of re and im (rows of the given length, of which
+// the first n are filled) the operator at the complex wave number k0, times
+// factor. The static term is left out: it belongs to the still fluid. It returns
+// false if the series has too few terms.
+func (s *soundSeries) at(re, im []float64, stride int, k0 complex128, factor float64) bool {
 	n, half := s.n, s.powers/2
 	// Real and imaginary parts of the powers, the odd ones with their i.
 	weights := make([]float64, 4*half)
@@ -87,8 +88,8 @@ func (s *soundSeries) at(re, im []float64, k0 complex128, factor float64) bool {
 					b += c * y[l]
 				}
 			}
-			re[i*n+j] += a
-			im[i*n+j] += b
+			re[i*stride+j] += a
+			im[i*stride+j] += b
 			pair += half
 		}
 	}

@@ -11,8 +11,9 @@ import "hoopsheet/core/disc"
 // and the matrix is density a^3 times B' S^-1 B. S is diagonal in still fluid.
 type openFaces struct {
 	tables  *fluidTables
-	density float64 // times a^3
-	reach   float64 // a/c0; 0 for still fluid
+	live    *fluidTables // of the shapes whose share of sound counts
+	density float64      // times a^3
+	reach   float64      // a/c0; 0 for still fluid
 	work    struct {
 		s, z   []complex128
 		re, im []float64
@@ -26,7 +27,7 @@ func (f *openFaces) static(x []float64) {
 func (f *openFaces) moving() bool { return f.reach > 0 }
 
 func (f *openFaces) dynamic(re, im []float64, omega complex128) bool {
-	n := f.tables.n
+	n, stride := f.live.n, f.tables.n
 	size := n + 1
 	w := &f.work
 	if w.s == nil {
@@ -36,7 +37,7 @@ func (f *openFaces) dynamic(re, im []float64, omega complex128) bool {
 	clear(w.re)
 	clear(w.im)
 	k0 := omega * complex(f.reach, 0)
-	good := f.tables.series(disc.RootEdge, seriesPowers(k0)).at(w.re, w.im, k0, 0.5)
+	good := f.live.series(disc.RootEdge, seriesPowers(k0)).at(w.re, w.im, size, k0, 0.5)
 	for i := range size {
 		for j := range i + 1 {
 			w.s[i*size+j] = complex(w.re[i*size+j], w.im[i*size+j])
@@ -46,7 +47,7 @@ func (f *openFaces) dynamic(re, im []float64, omega complex128) bool {
 	// S = U D U', Z = U^-1 B, matrix Z' D^-1 Z less that of still fluid. Row q of
 	// B and so of Z begins at column q-1.
 	symmetricLDL(w.s, size, 1e-300)
-	b := f.tables.openCoupling()
+	b := f.live.openCoupling()
 	for i, v := range b {
 		w.z[i] = complex(v, 0)
 	}
@@ -66,7 +67,7 @@ func (f *openFaces) dynamic(re, im []float64, omega complex128) bool {
 		inverse := complex(f.density, 0) / w.s[q*size+q]
 		for i := from; i < n; i++ {
 			v := row[i] * inverse
-			x, y := re[i*n:i*n+i+1], im[i*n:i*n+i+1]
+			x, y := re[i*stride:i*stride+i+1], im[i*stride:i*stride+i+1]
 			for j := from; j <= i; j++ {
 				p := v * row[j]
 				x[j] += real(p)
@@ -74,10 +75,10 @@ func (f *openFaces) dynamic(re, im []float64, omega complex128) bool {
 			}
 		}
 	}
-	still := f.tables.openMass()
+	still := f.live.openMass()
 	for i := range n {
 		for j := range i + 1 {
-			re[i*n+j] -= f.density * still[i*n+j]
+			re[i*stride+j] -= f.density * still[i*n+j]
 		}
 	}
 	return good

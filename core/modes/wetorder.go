@@ -3,6 +3,7 @@ package modes
 import (
 	"math"
 	"math/cmplx"
+	"slices"
 )
 
 // wetOrder is the eigenproblem of one number of nodal diameters: in the unknowns
@@ -22,12 +23,17 @@ type wetOrder struct {
 	values []float64 // theta in still fluid, largest first
 	// vectors, row by mode, in still fluid.
 	vectors []float64
+	// With many shapes the frequency-dependent problem is solved in the lowest
+	// modes in still fluid: live coefficients of each, row by mode. Nil without.
+	reduced []float64
+	live    int // shapes whose dependence on frequency counts
 
 	work *wetWork
 }
 
 type wetWork struct {
 	re, im, cre, cim []float64
+	half             []float64
 	f                []complex128
 	built            [3][]complex128 // the last matrices, newest first
 	at               [3]complex128   // and the theta each belongs to
@@ -37,9 +43,9 @@ type wetWork struct {
 
 func (o *wetOrder) space() *wetWork {
 	if o.work == nil {
-		n, size := o.strain.n, o.strain.size
+		n, size := o.strain.n, o.size()
 		w := &wetWork{
-			re: make([]float64, n*n), im: make([]float64, n*n),
+			re: make([]float64, n*n), im: make([]float64, n*n), half: make([]float64, size*o.live),
 			cre: make([]float64, size*size), cim: make([]float64, size*size),
 			f: make([]complex128, size*size),
 		}
@@ -65,21 +71,52 @@ func (o *wetOrder) solveStill(count int) {
 	o.values = newSymmetric(size).largest(o.static, count, o.vectors)
 }
 
+// size is the number of unknowns of the frequency-dependent problem.
+func (o *wetOrder) size() int {
+	if o.reduced != nil {
+		return len(o.values)
+	}
+	return o.strain.size
+}
+
+// reduceAbove is the number of unknowns above which a reduced basis of
+// count + reducedMore modes pays; it leaves out 1e-8 of the frequency of the
+// last mode and far less of the first (TestReducedBasis).
+const (
+	reduceAbove = 30
+	reducedMore = 14
+)
+
 // solve returns the count lowest modes of the order, lowest first, with sound in
 // a cavity but not yet on other faces.
 func (o *wetOrder) solve(count int) []wetMode {
 	if o.cavity != nil {
-		o.solveStill(1)
-		size := o.strain.size
-		search := &cavitySearch{o: o, re: make([]float64, o.strain.n*o.strain.n), im: make([]float64, o.strain.n*o.strain.n), c: make([]float64, size*size)}
-		return search.find(count)
+		o.solveStill(count)
+		return newCavitySearch(o).find(count)
 	}
-	o.solveStill(count)
+	if o.moving() && o.strain.size > reduceAbove && count+reducedMore < o.strain.size {
+		o.solveStill(count + reducedMore)
+		o.reduce()
+	} else {
+		o.solveStill(count)
+	}
 	modes := make([]wetMode, count)
 	for k := range modes {
 		modes[k] = o.still(k)
 	}
 	return modes
+}
+
+// reduce goes over to the modes in still fluid as unknowns.
+func (o *wetOrder) reduce() {
+	size := o.strain.size
+	o.reduced = make([]float64, len(o.values)*o.live)
+	q := make([]float64, o.strain.n)
+	for k := range o.values {
+		o.strain.shapes(q, o.vectors[k*size:(k+1)*size])
+		copy(o.reduced[k*o.live:(k+1)*o.live], q)
+	}
+	o.work = nil
 }
 
 // moving tells whether anything is left to refine after solve: sound on a face
@@ -95,7 +132,6 @@ func (o *wetOrder) moving() bool {
 
 // at writes the matrix at omega to the lower triangle of c.
 func (o *wetOrder) at(c []complex128, omega complex128) bool {
-	size := o.strain.size
 	w := o.space()
 	clear(w.re)
 	clear(w.im)
@@ -109,14 +145,54 @@ func (o *wetOrder) at(c []complex128, omega complex128) bool {
 			good = f.dynamic(w.re, w.im, omega*complex(o.sound, 0)) && good
 		}
 	}
+	size := o.size()
+	if !slices.ContainsFunc(w.im, func(v float64) bool { return v != 0 }) {
+		clear(w.cim)
+	} else if o.reduced != nil {
+		o.project(w.cim, w.im)
+	} else {
+		o.strain.congruence(w.cim, w.im)
+	}
+	if o.reduced != nil {
+		o.project(w.cre, w.re)
+		for i := range size {
+			for k := i * size; k <= i*size+i; k++ {
+				c[k] = complex(w.cre[k], w.cim[k])
+			}
+			c[i*size+i] += complex(o.values[i], 0)
+		}
+		return good
+	}
 	o.strain.congruence(w.cre, w.re)
-	o.strain.congruence(w.cim, w.im)
 	for i := range size {
 		for k := i * size; k <= i*size+i; k++ {
 			c[k] = complex(o.static[k]+w.cre[k], w.cim[k])
 		}
 	}
 	return good
+}
+
+// project writes the lower triangle of the reduced matrix of x, of which the
+// lower triangle of the live part is given.
+func (o *wetOrder) project(dst, x []float64) {
+	n, live, size := o.strain.n, o.live, o.size()
+	for i := range live {
+		for j := range i {
+			x[j*n+i] = x[i*n+j]
+		}
+	}
+	half := o.work.half
+	for k := range size {
+		row, out := o.reduced[k*live:(k+1)*live], half[k*live:(k+1)*live]
+		for i := range out {
+			out[i] = dot(x[i*n:i*n+live], row)
+		}
+	}
+	for k := range size {
+		for l := range k + 1 {
+			dst[k*size+l] = dot(half[k*live:(k+1)*live], o.reduced[l*live:(l+1)*live])
+		}
+	}
 }
 
 // wetMode is one solution: 1/omega^2 and the vector, y'y = 1 (not conjugated).
@@ -131,12 +207,31 @@ type wetMode struct {
 
 // still returns mode number k in still fluid.
 func (o *wetOrder) still(k int) wetMode {
-	size := o.strain.size
-	y := make([]complex128, size)
-	for i, v := range o.vectors[k*size : (k+1)*size] {
-		y[i] = complex(v, 0)
+	y := make([]complex128, o.size())
+	if o.reduced != nil {
+		y[k] = 1
+	} else {
+		for i, v := range o.vectors[k*len(y) : (k+1)*len(y)] {
+			y[i] = complex(v, 0)
+		}
 	}
 	return wetMode{theta: complex(o.values[k], 0), y: y, good: true}
+}
+
+// unknowns returns the real part of a mode in the unknowns of the strain. The
+// vector is as near to real as a phase can make it when y'y = 1.
+func (o *wetOrder) unknowns(mode wetMode) []float64 {
+	y := make([]float64, o.strain.size)
+	for k, v := range mode.y {
+		if o.reduced == nil {
+			y[k] = real(v)
+			continue
+		}
+		for i, u := range o.vectors[k*len(y) : (k+1)*len(y)] {
+			y[i] += real(v) * u
+		}
+	}
+	return y
 }
 
 // refine follows a mode from still fluid to the solution with sound and other
@@ -178,26 +273,26 @@ func (o *wetOrder) iterate(start wetMode) (mode wetMode, overlap float64) {
 	// complex symmetric, so the left vector is y itself and the functional errs
 	// by the square of the error of y. Between the values of omega at which the
 	// matrix was built it is interpolated.
-	size := o.strain.size
+	size := o.size()
 	w := o.space()
 	w.count, w.slope = 0, start.slope
 	theta := start.theta
 	y := append([]complex128(nil), start.y...)
-	last := 1.0
 	for range maxBuilds {
 		mode.good = o.build(theta)
 		next, slope := w.functional(size, y, theta)
-		// Near a pole of a cavity the slope is large, theta moves little and what
-		// tells the error of y is the change of the other side.
-		change := cmplx.Abs(next-theta) / cmplx.Abs(next) * math.Max(1, cmplx.Abs(1-slope))
-		theta = next
-		mode.change, mode.slope = change*last, slope
-		// The value errs by the square of the error of y and by the product of the
-		// distances from the places of interpolation.
-		if w.count >= 3 && mode.change < 1e-12 || change < 1e-14 {
+		// Near a pole of a cavity the slope is large and theta moves little; the
+		// other side of the equation tells how far off it was.
+		steep := math.Max(1, cmplx.Abs(1-slope))
+		change := cmplx.Abs(next-theta) / cmplx.Abs(next) * steep
+		theta, mode.slope = next, slope
+		// The value errs by the square of the residual over the gap to other modes,
+		// taken as a quarter, and by what interpolation left.
+		r := residualOf(w.built[0], size, y) / cmplx.Abs(theta)
+		mode.change = (4*r*r + change*change) / steep
+		if w.count >= 2 && mode.change < 1e-12 || change+r < 1e-14 {
 			break
 		}
-		last = change
 		if w.count == 1 && cmplx.Abs(w.slope) > 1 {
 			continue // the matrix at theta cannot be told from one alone
 		}
@@ -278,6 +373,30 @@ func (w *wetWork) between(theta complex128) {
 	}
 }
 
+// residualOf returns |Cy - (y'Cy)y| for the lower triangle of C and y'y = 1.
+func residualOf(c []complex128, n int, y []complex128) float64 {
+	z := make([]complex128, n)
+	for i := range n {
+		row := c[i*n : i*n+i+1]
+		s, v := row[i]*y[i], y[i]
+		for j, x := range row[:i] {
+			s += x * y[j]
+			z[j] += x * v
+		}
+		z[i] += s
+	}
+	q := complex(0, 0)
+	for i, v := range z {
+		q += v * y[i]
+	}
+	sum := 0.0
+	for i, v := range z {
+		v -= q * y[i]
+		sum += real(v)*real(v) + imag(v)*imag(v)
+	}
+	return math.Sqrt(sum)
+}
+
 // quadratic returns y'Cy from the lower triangle.
 func quadratic(c []complex128, n int, y []complex128) complex128 {
 	sum := complex(0, 0)
@@ -297,21 +416,14 @@ func quadratic(c []complex128, n int, y []complex128) complex128 {
 func (o *wetOrder) truncation(mode wetMode, drop int) float64 {
 	// The Rayleigh functional of the shortened vector in the smaller problem. In
 	// still fluid that problem's own value lies between it and the full one.
-	size := o.strain.size
+	y := o.unknowns(mode)
+	size := len(y)
 	keep := size - drop
-	cross, norm := complex(0, 0), complex(0, 0)
-	for i := range keep {
-		norm += mode.y[i] * mode.y[i]
-	}
+	cross := 0.0
 	for i := keep; i < size; i++ {
-		row := o.static[i*size : (i+1)*size]
-		s := complex(0, 0)
-		for j := range keep {
-			s += complex(row[j], 0) * mode.y[j]
-		}
-		cross += mode.y[i] * s
+		cross += y[i] * dot(o.static[i*size:i*size+keep], y[:keep])
 	}
-	return cmplx.Abs(cross / (norm * mode.theta))
+	return math.Abs(cross) / (dot(y[:keep], y[:keep]) * cmplx.Abs(mode.theta))
 }
 
 // omega returns the complex angular frequency, real part positive.
@@ -323,14 +435,9 @@ func (m wetMode) omega() complex128 {
 	return w
 }
 
-// realPart turns y by a constant phase so that it is as real as may be (it is,
-// with y'y = 1) and returns the real part of the shape coefficients.
+// realPart returns the real part of the shape coefficients.
 func (o *wetOrder) realPart(mode wetMode) []float64 {
-	y := make([]float64, len(mode.y))
-	for i, v := range mode.y {
-		y[i] = real(v)
-	}
 	q := make([]float64, o.strain.n)
-	o.strain.shapes(q, y)
+	o.strain.shapes(q, o.unknowns(mode))
 	return q
 }

@@ -18,6 +18,7 @@ type strain struct {
 	scale []float64
 	// Stiff: the Cholesky factor of the tridiagonal strain matrix in tails.
 	diag, below []float64
+	inverse     []float64 // 1/diag
 	bending     []float64 // bending energy is sum bending_i t_i^2
 }
 
@@ -48,7 +49,8 @@ func newStrain(m, n int, T, d, nu float64, rim Rim) *strain {
 	if rim == RimClamped {
 		s.first, s.size = 1, n-1
 	}
-	s.diag, s.below, s.bending = make([]float64, s.size), make([]float64, s.size), make([]float64, s.size)
+	s.diag, s.below = make([]float64, s.size), make([]float64, s.size)
+	s.inverse, s.bending = make([]float64, s.size), make([]float64, s.size)
 	for k := range s.size {
 		i := k + s.first
 		s.bending[k] = d * 2 * float64(m+2*i+1)
@@ -65,6 +67,7 @@ func newStrain(m, n int, T, d, nu float64, rim Rim) *strain {
 			v -= s.below[k] * s.below[k]
 		}
 		s.diag[k] = math.Sqrt(v)
+		s.inverse[k] = 1 / s.diag[k]
 	}
 	return s
 }
@@ -155,29 +158,35 @@ func (s *strain) congruence(dst, x []float64) {
 			row[j] -= before[j]
 		}
 	}
-	// L^-1 from the left, then from the right.
+	// L^-1 from the left, then from the right, by symmetry for the lower triangle
+	// only.
 	m := s.size
 	for i := range m {
-		row := x[(i+s.first)*n+s.first : (i+s.first+1)*n]
+		row := x[(i+s.first)*n+s.first:][:m]
 		out := dst[i*m : (i+1)*m]
-		if i > 0 {
-			f, before := s.below[i], dst[(i-1)*m:i*m]
-			for j := range out {
-				out[j] = (row[j] - f*before[j]) / s.diag[i]
+		g := s.inverse[i]
+		if i == 0 {
+			for j, v := range row {
+				out[j] = g * v
 			}
-		} else {
-			for j := range out {
-				out[j] = row[j] / s.diag[0]
-			}
+			continue
+		}
+		f, before := g*s.below[i], dst[(i-1)*m:][:m]
+		for j, v := range row {
+			out[j] = g*v - f*before[j]
 		}
 	}
 	for i := range m {
-		row := dst[i*m : (i+1)*m]
-		for j := range row {
-			if j > 0 {
-				row[j] -= s.below[j] * row[j-1]
-			}
-			row[j] /= s.diag[j]
+		row := dst[i*m : i*m+i+1]
+		before := 0.0
+		for j, v := range row {
+			before = (v - s.below[j]*before) * s.inverse[j]
+			row[j] = before
+		}
+	}
+	for i := range m {
+		for j := range i {
+			dst[j*m+i] = dst[i*m+j]
 		}
 	}
 }
