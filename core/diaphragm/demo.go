@@ -16,7 +16,7 @@ func Demo(id, created string) Diaphragm {
 	doc.Notes = "Invented for demonstration: there is no such port, and its figures prove nothing about a real one."
 	doc.Invented = true
 	doc.Ring = Ring{Radius: 0.45, Clamps: 16, CTE: 23e-6}
-	doc.Sheet.Thickness = 50e-6
+	doc.Sheet.Thickness, doc.Sheet.LossFactor = 50e-6, 0.015
 	doc.Tension = Tension{Nominal: 310, Tolerance: 0.08}
 	doc.Faces = Faces{Upper: Face{Kind: FaceBaffled}, Lower: Face{Kind: FaceBaffled}}
 	doc.Surroundings.ServiceMin, doc.Surroundings.ServiceMax = 278.15, 308.15

@@ -214,6 +214,9 @@ func TestEditsThatCannotBeDone(t *testing.T) {
 		{Edit{"sheet.material", ActionAdopt, "unobtainium"}, CodeChoice, `There is no material "unobtainium" in the list; type a name and its properties instead.`},
 		{Edit{"sheet.e", ActionAdopt, "polyester-film"}, CodeAction, `Modulus of elasticity cannot adopt a material; only the field "sheet.material" can.`},
 		{Edit{"ring.radius", ActionAdd, ""}, CodeAction, `Nothing can be added to "ring.radius", only to "tension.harmonics", "attached.patches", "attached.strips" or "avoid.lines".`},
+		{Edit{"attached.patches.0", ActionRemove, ""}, CodeUnknownField, `There is no patch named "attached.patches.0"; there are 0, counted from "attached.patches.0".`},
+		{Edit{"ring", ActionRemove, ""}, CodeAction, `"ring" cannot be removed; it is no entry of a list.`},
+		{Edit{"attached", ActionAdd, ""}, CodeAction, `Nothing can be added to "attached", only to "tension.harmonics", "attached.patches", "attached.strips" or "avoid.lines".`},
 		{Edit{"avoid.lines.3", ActionRemove, ""}, CodeUnknownField, `There is no line to keep clear of named "avoid.lines.3"; there are 3, counted from "avoid.lines.0".`},
 		{Edit{"avoid.lines.0.name", ActionRemove, ""}, CodeUnknownField, `There is no line to keep clear of named "avoid.lines.0.name"; there are 3, counted from "avoid.lines.0".`},
 	} {

@@ -145,6 +145,28 @@ func TestSpecificationLines(t *testing.T) {
 	if _, there := find(list, "depth of the upper cavity"); there {
 		t.Error("the depth of no cavity is listed")
 	}
+	for _, name := range []string{"edge of the sheet", "sheet along the rim", "fluid at the upper face", "hub radius", "direction of the warp"} {
+		if l, there := find(list, name); there {
+			t.Errorf("what goes without saying is listed: %+v", l)
+		}
+	}
+	for _, want := range []SpecificationLine{
+		{GroupRing, "", "out of round", "0.4", "mm"},
+		{GroupTension, "", "edge of the sheet", "supported: free to turn, as over a sharp edge", ""},
+		{GroupEvenness, "", "sheet along the rim", "bonded: glued or welded to the rim", ""},
+		{GroupEvenness, "k", "order of harmonic 2", "3", ""},
+		{GroupAttached, "M", "mass of patch 1", "2.3", "g"},
+		{GroupAttached, "", "stiffness of patch 1", "rigid: stays flat", ""},
+		{GroupAttached, "", "stiffness of patch 2", "limp: bends with the sheet", ""},
+		{GroupAttached, "θ", "angle of strip 1", "90", "°"},
+		{GroupFaces, "", "fluid at the upper face", "nitrogen, dry", ""},
+		{GroupFaces, "d", "wall before the upper face", "650", "mm"},
+		{GroupFaces, "", "vent of the lower cavity", "12.5", "cm²"},
+	} {
+		if got, _ := find(SpecificationLines(richDocument(), nil, quantity.SI), want.Name); got != want {
+			t.Errorf("%+v, want %+v", got, want)
+		}
+	}
 	doc.Faces.Upper = Face{Kind: FaceCavity, Depth: 0.12}
 	if got, _ := find(SpecificationLines(doc, nil, quantity.SI), "depth of the upper cavity"); got.Text != "120" || got.Unit != "mm" {
 		t.Errorf("%+v", got)

@@ -42,6 +42,36 @@ func TestLinkRoundTrip(t *testing.T) {
 	}
 }
 
+// TestLinkOfARealDiaphragm: one with everything, at full length, still fits.
+func TestLinkOfARealDiaphragm(t *testing.T) {
+	sent := fullParcel()
+	sent.Document = richDocument()
+	link, err := EncodeLink(sent)
+	if err != nil {
+		t.Fatal(err)
+	}
+	got, err := DecodeLink(link)
+	if want := roundParcel(sent); err != nil || !reflect.DeepEqual(got, want) {
+		t.Errorf("got %+v (%v)\nwant %+v", got, err, want)
+	}
+	const address = 120 // characters for the address of the page
+	t.Logf("the link of a real diaphragm has %d characters after #", len(link))
+	if len(link)+address >= MostLink {
+		t.Errorf("%d characters, and %d for the address, are not below %d", len(link), address, MostLink)
+	}
+	if problems := Validate(sent.Document); len(problems) > 0 {
+		t.Errorf("it is not sound: %v", problems)
+	}
+	for len(sent.Document.Attached.Patches) < MostPatches {
+		newest := len(sent.Document.Attached.Patches)
+		sent.Document.Attached.Patches = append(sent.Document.Attached.Patches, Patch{Name: "tape", Radius: 0.1137 * float64(newest), Angle: 0.7123 * float64(newest), Size: 0.0125, Mass: 0.00041})
+	}
+	if link, err = EncodeLink(sent); err != nil || len(link)+address >= MostLink {
+		t.Errorf("with %d patches the link has %d characters, %v", MostPatches, len(link), err)
+	}
+	t.Logf("with %d patches it has %d", MostPatches, len(link))
+}
+
 // TestLinkKeepsEveryBit sends documents whose numbers use all 53 bits.
 func TestLinkKeepsEveryBit(t *testing.T) {
 	random := rand.New(rand.NewPCG(11, 3))
@@ -86,20 +116,23 @@ func TestRoundForLink(t *testing.T) {
 // TestGoldenLink reads a link that was sent in the past: every version that
 // was ever sent must stay readable.
 func TestGoldenLink(t *testing.T) {
-	path := filepath.Join(linksDir, "whole-1.txt")
 	if *update {
 		writeLinkSeeds(t)
 	}
-	text, err := os.ReadFile(path)
-	if err != nil {
-		t.Fatal(err)
-	}
-	got, err := DecodeLink(string(text))
-	if err != nil {
-		t.Fatal(err)
-	}
-	if want := roundParcel(fullParcel()); !reflect.DeepEqual(got, want) {
-		t.Errorf("got %+v\nwant %+v", got, want)
+	real := fullParcel()
+	real.Document = richDocument()
+	for name, sent := range map[string]Parcel{"whole-1.txt": fullParcel(), "real-1.txt": real} {
+		text, err := os.ReadFile(filepath.Join(linksDir, name))
+		if err != nil {
+			t.Fatal(err)
+		}
+		got, err := DecodeLink(string(text))
+		if err != nil {
+			t.Fatal(err)
+		}
+		if want := roundParcel(sent); !reflect.DeepEqual(got, want) {
+			t.Errorf("%s: got %+v\nwant %+v", name, got, want)
+		}
 	}
 }
 
@@ -220,8 +253,14 @@ func writeLinkSeeds(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
+	parcel := fullParcel()
+	parcel.Document = richDocument()
+	real, err := EncodeLink(parcel)
+	if err != nil {
+		t.Fatal(err)
+	}
 	for name, text := range map[string]string{
-		"whole-1.txt": link, "bare-1.txt": bare, "cut-short.txt": link[:600], "altered.txt": link[:300] + "x" + link[301:], "newer.txt": "h=2" + link[3:],
+		"whole-1.txt": link, "bare-1.txt": bare, "real-1.txt": real, "cut-short.txt": link[:600], "altered.txt": link[:300] + "x" + link[301:], "newer.txt": "h=2" + link[3:],
 		"not-a-link.txt": "#section-3", "bomb.txt": linkOf(bytes.Repeat([]byte(" "), 1<<20)), "newer-document.txt": linkOf([]byte(`{"document":{"schema":9}}`)),
 		"text-for-number.txt": linkOf([]byte(`{"document":{"schema":1,"ring":{"radius":"wide"}}}`)),
 	} {

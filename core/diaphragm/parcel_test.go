@@ -143,6 +143,8 @@ func TestDecodeParcelRefuses(t *testing.T) {
 		{"NaN", replace(`1.4925`, `NaN`), CodeUnreadable, "cannot be read"},
 		{"unknown member", replace(`"clamps": 96`, `"clamps": 96, "bolts": 3`), CodeUnreadable, `"bolts"`},
 		{"unknown face", replace(`"baffled"`, `"glued"`), CodeUnreadable, `"glued"`},
+		{"unknown fluid", replace(`"kind": "baffled"`, `"kind": "baffled", "fluid": "gravy"`), CodeUnreadable, `fluid at the upper face that is not known: "gravy"`},
+		{"unknown rim", replace(`"nominal": 213.4`, `"nominal": 213.4, "rim": "nailed"`), CodeUnreadable, `kind of rim that is not known: "nailed"`},
 		{"no document", `{"format":"hoopsheet hand-over","version":1}`, CodeUnreadable, "no specification"},
 		{"list for a document", `{"format":"hoopsheet hand-over","version":1,"document":[]}`, CodeUnreadable, "a list"},
 		{"negative frequency", replace(`"frequency": 7`, `"frequency": -7`), CodeUnreadable, "a peak must have"},
