@@ -218,3 +218,17 @@ func (o *wetOrder) addCavity(f Face) {
 	o.cavity = c
 	o.faces = append(o.faces, c)
 }
+
+// addWall puts a gap with a wall at one face of the order.
+func (o *wetOrder) addWall(f Face) {
+	a := o.radius
+	w := &wallFace{m: o.m, cavityFace: cavityFace{
+		modes: o.tables.gapModes(), density: f.Density * a * a * a,
+		reach: a / f.SoundSpeed, depth: f.WallDistance / a, live: o.tables.n,
+	}}
+	w.prepare()
+	if o.m == 0 {
+		w.ref = 0.1
+	}
+	o.faces = append(o.faces, w)
+}

@@ -22,6 +22,10 @@ type cavityTable struct {
 	n    int
 	k    []float64 // k_q; for m = 0 the first is 0, the piston
 	part []float64 // row q: integral u_j J_m(k_q r) r dr / norm, n to a row
+	// What lies beyond the last mode starts at the wave number last and is the
+	// multiple beyond of that of a cavity.
+	last, beyond float64
+	weights      []float64 // of a quadrature rule
 }
 
 // radialModes returns the table, made when first asked for.
@@ -31,7 +35,7 @@ func (t *fluidTables) radialModes() *cavityTable {
 	if t.cavity != nil {
 		return t.cavity
 	}
-	c := &cavityTable{n: t.n, part: make([]float64, cavityModes*t.n)}
+	c := &cavityTable{n: t.n, beyond: 1, part: make([]float64, cavityModes*t.n)}
 	zeros := make([]float64, cavityModes)
 	if t.m == 0 {
 		zeros = zeros[1:]
@@ -59,6 +63,7 @@ func (t *fluidTables) radialModes() *cavityTable {
 			row[j] = f * values[t.m+2*j+2]
 		}
 	}
+	c.last = c.k[len(c.k)-1] + math.Pi/2
 	t.cavity = c
 	return c
 }
@@ -80,8 +85,8 @@ func (c *cavityTable) addMode(x []float64, q int, factor float64, live int) {
 func (c *cavityTable) addBeyond(x []float64, l float64) {
 	// There J_b(k) = (-1)^(j+1) J_m(k) but for terms in (b^2/k)^2, so each mode
 	// adds 2 (-1)^(i+j) k^-4 coth(k l)/k; their distance is pi.
-	k := c.k[len(c.k)-1] + math.Pi/2
-	f := 2 / (4 * math.Pi * math.Pow(k, 4)) / math.Tanh(k*l)
+	k := c.last
+	f := c.beyond * 2 / (4 * math.Pi * math.Pow(k, 4)) / math.Tanh(k*l)
 	for i := range c.n {
 		for j := range i + 1 {
 			if (i+j)%2 == 0 {

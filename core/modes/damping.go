@@ -30,17 +30,25 @@ func (d *Damping) sum(omega float64) {
 }
 
 // viscousRatio returns the damping ratio from friction at one face: square is
-// the integral of the squared shape over the sheet, m^2, mass the modal mass.
-func viscousRatio(f Face, omega, square, mass float64) float64 {
+// the integral of the squared shape over the sheet, m^2, mass the modal mass, k
+// the wave number on the sheet, 1/m.
+func viscousRatio(f Face, omega, square, mass, k float64) float64 {
 	// A Stokes layer of depth delta takes (rho omega delta/4) |u_t|^2 per area
 	// (Landau & Lifshitz, Fluid Mechanics, section 24). In a still half-space the
 	// velocities along and across a plane have equal integrals of the square,
 	// |u_t|^2 = |k phi|^2 = |u_n|^2 in wave numbers, over sheet and baffle
 	// together. Power over twice omega times the energy mass |u|^2/2. With open
-	// faces this leaves out the flow around the edge.
+	// faces this leaves out the flow around the edge. In a gap the flow along is
+	// coth(kd) of that across at the sheet and 1/sinh(kd) at the wall, taken at
+	// the one wave number of the mode.
 	if f.Viscosity == 0 || f.Kind == diaphragm.FaceCavity {
 		return 0
 	}
 	delta := math.Sqrt(2 * f.Viscosity / omega)
-	return f.Density * delta / 4 * square / mass
+	ratio := f.Density * delta / 4 * square / mass
+	if f.WallDistance > 0 {
+		s := math.Sinh(k * f.WallDistance)
+		ratio *= 1 + 2/(s*s)
+	}
+	return ratio
 }

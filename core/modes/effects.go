@@ -88,7 +88,7 @@ func Solve(real Real, request Request) (*Solution, error) {
 		request.MaxM, request.MaxN = 12, 8
 	}
 	if request.MaxM < 0 || request.MaxM > MaxDiameters || request.MaxN < 1 || request.MaxN > MaxCircles {
-		return nil, errors.New("the nodal diameters asked for must be 0 to 40 and the nodal circles 1 to 20")
+		return nil, errBounds
 	}
 	s := &Solution{Real: real, Complete: math.Inf(1)}
 	plan := newWetPlan(real, request.Effects)
@@ -200,11 +200,11 @@ func checkFace(f Face, name string) error {
 		return errors.New("the kinematic viscosity at the " + name + " face must be zero or a positive number of m^2/s")
 	case f.Kind == diaphragm.FaceCavity && !positive(f.Depth):
 		return errors.New("the depth of the cavity at the " + name + " face must be a positive number of metres")
-	case f.WallDistance != 0:
-		return errors.New("a wall at the " + name + " face is not among the effects that can be computed")
 	case f.Kind == diaphragm.FaceCavity && f.Vent != nil && !(f.Vent.Area >= 0 && f.Vent.Length >= 0 && f.Vent.Resistance >= 0):
 		return errors.New("area, length and resistance of the vent at the " + name + " face must be zero or positive")
-	case !(f.WallDistance >= 0):
+	case f.WallDistance != 0 && f.Kind != diaphragm.FaceBaffled:
+		return errors.New("a wall can only be given for a baffled face, but the " + name + " face is not one")
+	case !(f.WallDistance >= 0) || math.IsInf(f.WallDistance, 0):
 		return errors.New("the distance of the wall from the " + name + " face must be zero or a positive number of metres")
 	}
 	return nil

@@ -124,8 +124,9 @@ func (p *wetPlan) weigh(o *wetOrder, w wetMode, mode *RealMode) {
 	}
 	d.Sheet = r.LossFactor / 2 * mode.BendingShare
 	d.Remainder = r.Remainder
+	k := bessel.ZeroJ(float64(o.m), mode.N) / p.radius
 	for _, f := range p.faces {
-		d.Viscous += viscousRatio(f, omega, mode.SheetMass/r.ArealDensity, mode.SheetMass+mode.FluidMass)
+		d.Viscous += viscousRatio(f, omega, mode.SheetMass/r.ArealDensity, mode.SheetMass+mode.FluidMass, k)
 	}
 	d.sum(omega)
 }

@@ -101,6 +101,10 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 		}
 		switch f.Kind {
 		case diaphragm.FaceBaffled:
+			if f.WallDistance > 0 {
+				o.addWall(f)
+				continue
+			}
 			o.faces = append(o.faces, &baffledFace{tables: o.tables, live: liveTables, density: f.Density * a * a * a, reach: reach})
 		case diaphragm.FaceOpen:
 			if !open { // one for both sides

@@ -49,3 +49,18 @@ type fluidFace interface {
 	// of re and im; false if omega is out of reach.
 	dynamic(re, im []float64, omega complex128) bool
 }
+
+// outside tells whether there is fluid on an open or baffled face.
+func (r Real) outside() bool {
+	for _, f := range []Face{r.Upper, r.Lower} {
+		if f.Density > 0 && (f.Kind == diaphragm.FaceOpen || f.Kind == diaphragm.FaceBaffled) {
+			return true
+		}
+	}
+	return false
+}
+
+// cavity tells whether there is a cavity behind a face.
+func (r Real) cavity() bool {
+	return r.Upper.Kind == diaphragm.FaceCavity || r.Lower.Kind == diaphragm.FaceCavity
+}

@@ -18,7 +18,7 @@ type fluidTables struct {
 	soundBaffled *soundSeries
 	soundOpen    *soundSeries
 	grid         []float64 // see gridShapes
-	cavity       *cavityTable
+	cavity, gap  *cavityTable
 }
 
 var fluidCache struct {

@@ -94,6 +94,7 @@ func (o *wetOrder) solve(count int) []wetMode {
 		o.solveStill(count)
 		return newCavitySearch(o).find(count)
 	}
+	o.settleWalls()
 	if o.moving() && o.strain.size > reduceAbove && count+reducedMore < o.strain.size {
 		o.solveStill(count + reducedMore)
 		o.reduce()
@@ -105,6 +106,19 @@ func (o *wetOrder) solve(count int) []wetMode {
 		modes[k] = o.still(k)
 	}
 	return modes
+}
+
+// settleWalls gives gaps with a wall, for m = 0, the sound number of the lowest
+// mode for their static part.
+func (o *wetOrder) settleWalls() {
+	for _, f := range o.faces {
+		if w, ok := f.(*wallFace); ok && o.m == 0 {
+			for range 3 {
+				o.solveStill(1)
+				w.ref = math.Min(MaxSoundNumber, w.reach/math.Sqrt(o.values[0]))
+			}
+		}
+	}
 }
 
 // reduce goes over to the modes in still fluid as unknowns.
