@@ -1,13 +1,15 @@
 package tap
 
+import "math"
+
 // pair is one peak read as one mode, both as indices of the search.
 type pair struct{ line, mode int }
 
-// match assigns peaks to modes one to one at a given c, so that the sum of the
-// gains is largest. A pair gains ln N(residual; 0, s^2) - ln(foreign rate),
+// match assigns peaks to modes one to one at the c of the view, so that the sum
+// of the gains is largest. A pair gains ln N(residual; 0, s^2) - ln(foreign rate),
 // the logarithm of how much better the mode explains the peak than chance
 // does; pairs that gain nothing are not made. Pinned peaks keep their modes.
-func (s *search) match(c float64) []pair {
+func (s *search) match() []pair {
 	// On the logarithmic scale both are ordered. With equal s an assignment
 	// that crosses is never better than the uncrossed one, because the cost is
 	// convex in the distance; so the best one is the heaviest chain of pairs in
@@ -29,27 +31,28 @@ func (s *search) match(c float64) []pair {
 		back  int     // the link before, or -1
 	}
 	var links []link
-	best := &s.best
-	best.clear(len(s.modes))
+	best, v, c := &s.best, &s.view, s.view.c
+	best.clear(v.admitted)
 	for i, l := range s.lines {
 		if l.pin >= 0 {
 			continue
 		}
-		gate := l.s * gateWidth
+		gate := (l.s + v.widest) * gateWidth
 		first := len(links)
-		for k := countUpTo(s.modes, l.log-c-gate); k < len(s.modes) && s.modes[k].log <= l.log-c+gate; k++ {
-			gain := logNormal(s.residual(pair{i, k}, c), l.s, l.logS) - logForeign
-			if gain <= 0 || taken[k] {
+		for rank := v.upTo(l.log - c - gate); rank < v.admitted && v.log[v.order[rank]] <= l.log-c+gate; rank++ {
+			p := pair{i, v.order[rank]}
+			gain := s.logDensity(p, l.log-c-v.log[p.mode]) - logForeign
+			if gain <= 0 || taken[p.mode] {
 				continue
 			}
-			total, back := best.before(k)
-			links = append(links, link{pair{i, k}, total + gain, back})
+			total, back := best.before(rank)
+			links = append(links, link{p, total + gain, back})
 		}
 		for j := first; j < len(links); j++ {
-			best.add(links[j].mode, links[j].total, j)
+			best.add(v.rank[links[j].mode], links[j].total, j)
 		}
 	}
-	_, end := best.before(len(s.modes))
+	_, end := best.before(v.admitted)
 	for ; end >= 0; end = links[end].back {
 		pairs = append(pairs, links[end].pair)
 	}
@@ -60,6 +63,16 @@ func (s *search) match(c float64) []pair {
 // N(r) > foreign rate means r < s sqrt(2 ln(1 / (sqrt(2 pi) s rate))), which is
 // below 5 for every s from 1e-5, the smallest model error allowed.
 const gateWidth = 5
+
+// logDensity is the logarithm of the density of a pair's residual.
+func (s *search) logDensity(p pair, residual float64) float64 {
+	l := s.lines[p.line]
+	if s.view.variance == nil || s.view.variance[p.mode] == 0 {
+		return logNormal(residual, l.s, l.logS)
+	}
+	deviation := math.Sqrt(s.spread(p))
+	return logNormal(residual, deviation, math.Log(deviation))
+}
 
 // logNormal is the logarithm of the normal density with standard deviation s,
 // whose logarithm the caller has at hand.

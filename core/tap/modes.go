@@ -36,18 +36,3 @@ var allModes = sync.OnceValue(func() []mode {
 	sort.Slice(modes, func(a, b int) bool { return modes[a].zero < modes[b].zero })
 	return modes
 })
-
-// countUpTo is the number of modes with ln j <= x.
-func countUpTo(modes []mode, x float64) int {
-	return sort.Search(len(modes), func(i int) bool { return modes[i].log > x })
-}
-
-// findMode is the index of mode (m, n), or -1 where it lies above the bound.
-func findMode(modes []mode, m, n int) int {
-	for i, k := range modes {
-		if k.m == m && k.n == n {
-			return i
-		}
-	}
-	return -1
-}

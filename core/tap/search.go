@@ -6,43 +6,55 @@ import (
 )
 
 // line is one used peak on the logarithmic scale, where a change of tension
-// shifts all modes alike: ln f = ln j + c with
+// shifts all modes of the ideal sheet alike: ln f = ln j + c with
 //
 //	c = ln( sqrt(T/sigma) / (2 pi a) )
+//
+// and those of the real diaphragm nearly so.
 type line struct {
 	peak int     // index in the question
 	log  float64 // ln f
-	// s is the relative standard deviation about the ideal sheet: the model
+	// s is the relative standard deviation about the model: the model
 	// error alone where the peak states no uncertainty; logS its logarithm.
 	s, logS float64
-	pin     int // index of the mode it is pinned to, or -1
+	u       float64 // what the peak itself states
+	pin     int     // index of the mode it is pinned to, or -1
 }
 
 // search holds what one Read needs.
 type search struct {
 	q        Question
-	modes    []mode
+	spectrum *Spectrum
 	lines    []line  // lowest first
 	c0       float64 // c of the nominal tension
 	reach    float64 // largest |c - c0| looked at
 	pinCount int
 	best     runningBest // working memory of match
+	view     view
+	// shift moves the curves of modes to where they were solved exactly, by
+	// mode; unused where the spectrum is fixed.
+	shift []float64
+	exact []bool
 }
 
 func newSearch(q Question, o Options) *search {
 	s := &search{
-		q: q, modes: allModes(),
-		c0:    math.Log(math.Sqrt(q.Nominal/q.ArealDensity) / (2 * math.Pi * q.Radius)),
+		q: q, spectrum: q.Spectrum,
+		c0:    q.Spectrum.position(q.Nominal),
 		reach: 0.5 * math.Log(o.Widest),
+		view:  newView(q.Spectrum),
+		shift: make([]float64, len(q.Spectrum.modes)),
+		exact: make([]bool, len(q.Spectrum.modes)),
 	}
 	for i, p := range q.Peaks {
 		if !p.Use {
 			continue
 		}
-		l := line{peak: i, log: math.Log(p.Frequency), s: math.Hypot(o.ModelError, p.Uncertainty/p.Frequency), pin: -1}
+		l := line{peak: i, log: math.Log(p.Frequency), u: p.Uncertainty / p.Frequency, pin: -1}
+		l.s = math.Hypot(o.ModelError, l.u)
 		l.logS = math.Log(l.s)
 		if p.N > 0 {
-			l.pin = findMode(s.modes, p.M, p.N)
+			l.pin = s.spectrum.find(p.M, p.N)
 			s.pinCount++
 		}
 		s.lines = append(s.lines, l)
@@ -77,7 +89,7 @@ func (s *search) starts() []start {
 		for _, l := range s.lines {
 			if l.pin >= 0 {
 				w := 1 / (l.s * l.s)
-				sum, weight = sum+w*(l.log-s.modes[l.pin].log), weight+w
+				sum, weight = sum+w*s.spectrum.invert(l.pin, l.log), weight+w
 			}
 		}
 		return []start{{c: sum / weight}}
@@ -88,8 +100,8 @@ func (s *search) starts() []start {
 	}
 	var votes []vote
 	for i, l := range s.lines {
-		for _, k := range s.modes {
-			if c := l.log - k.log; math.Abs(c-s.c0) <= s.reach {
+		for id := range s.spectrum.modes {
+			if c := s.spectrum.invert(id, l.log); math.Abs(c-s.c0) <= s.reach && l.log <= s.spectrum.limit(c) {
 				votes = append(votes, vote{c, i})
 			}
 		}
@@ -101,7 +113,13 @@ func (s *search) starts() []start {
 	}
 	sort.Float64s(spreads)
 	window := 4 * spreads[len(spreads)/2]
+	// Mode id lies below the highest line where c is at most tops[id].
 	top := s.lines[len(s.lines)-1].log
+	tops := make([]float64, len(s.spectrum.modes))
+	for id := range tops {
+		tops[id] = s.spectrum.invert(id, top+0.01)
+	}
+	sort.Float64s(tops)
 	var all []start
 	counts := make([]int, len(s.lines))
 	distinct, end := 0, 0
@@ -113,9 +131,11 @@ func (s *search) starts() []start {
 			end++
 		}
 		c := 0.5 * (votes[begin].c + votes[end-1].c)
-		inBand := countUpTo(s.modes, top-c+0.01)
+		inBand := len(tops) - sort.SearchFloat64s(tops, c)
+		limit := s.spectrum.limit(c)
+		beyond := len(s.lines) - sort.Search(len(s.lines), func(i int) bool { return s.lines[i].log > limit })
 		score := logShown(min(distinct, inBand), inBand) + float64(distinct)*math.Log(0.4/window) +
-			float64(len(s.lines)-distinct)*logForeign + s.logPrior(c)
+			float64(len(s.lines)-distinct)*logForeign + float64(beyond)*(logBeyond-logForeign) + s.logPrior(c)
 		all = append(all, start{c, score})
 		if counts[votes[begin].line]--; counts[votes[begin].line] == 0 {
 			distinct--

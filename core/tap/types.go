@@ -37,8 +37,8 @@ type Match struct {
 	Peak int `json:"peak"`
 	M    int `json:"m"`
 	N    int `json:"n"`
-	// Measured and Fitted frequency, Hz; Fitted is that of the ideal sheet at
-	// the fitted tension.
+	// Measured and Fitted frequency, Hz; Fitted is that of the model at the
+	// fitted tension.
 	Measured float64 `json:"measured"`
 	Fitted   float64 `json:"fitted"`
 	// Residual is (Measured - Fitted) / Fitted.
@@ -57,7 +57,8 @@ type Reading struct {
 	Low                 float64 `json:"low"`
 	High                float64 `json:"high"`
 	// Spread is the sample standard deviation of the tensions that the peaks
-	// give one by one, relative to Tension.
+	// give one by one, relative to Tension; a mode that follows the tension less
+	// than the others counts less.
 	Spread float64 `json:"spread"`
 	// Odds of this reading among the rivals found, 0 to 1.
 	Odds float64 `json:"odds"`
@@ -65,6 +66,9 @@ type Reading struct {
 	Unmatched []int `json:"unmatched"`
 	// Missing are modes below the highest match that show no peak.
 	Missing []ModeName `json:"missing"`
+
+	// freedom is the degrees of freedom of the interval, 0 for infinitely many.
+	freedom int
 }
 
 // ModeName names a mode by its nodal diameters and circles.

@@ -3,6 +3,7 @@ package tap
 import (
 	"math"
 	"strconv"
+	"strings"
 )
 
 // ConformanceProbability is the probability that a quantity lies within its
@@ -25,12 +26,12 @@ func ConformanceProbability(estimate, u, lower, upper float64, nu int) float64 {
 func judge(q Question, a Answer) (Verdict, string) {
 	limits := "the limits, " + newtons(a.Lower) + " to " + newtons(a.Upper)
 	if len(a.Readings) == 0 {
-		return VerdictUndecided, "No mode of the ideal sheet within the range looked at explains any of the peaks."
+		return VerdictUndecided, "No mode of " + q.Spectrum.name + " within the range looked at explains any of the peaks."
 	}
 	best := a.Readings[0]
 	interval := newtons(best.Low) + " to " + newtons(best.High)
 	if a.Poor {
-		return VerdictUndecided, "The ideal sheet explains these peaks badly: " + misfit(best) + " A tension from them would mean little."
+		return VerdictUndecided, capital(q.Spectrum.name) + " explains these peaks badly: " + misfit(best) + " A tension from them would mean little."
 	}
 	if !a.Chosen {
 		if len(a.Readings) > 1 {
@@ -52,7 +53,7 @@ func judge(q Question, a Answer) (Verdict, string) {
 	}
 	switch {
 	case air.cavity:
-		return VerdictUndecided, "A closed cavity lies on one side, and its air is left out of this reading. No verdict can be given from the ideal sheet."
+		return VerdictUndecided, "A closed cavity lies on one side, and its air is left out of this reading. No verdict can be given without it."
 	case best.Low > a.Upper:
 		return VerdictFail, "The whole interval of 95 % coverage, " + interval + ", lies above " + limits + "."
 	case high < a.Lower:
@@ -61,12 +62,14 @@ func judge(q Question, a Answer) (Verdict, string) {
 		return VerdictPass, "The whole interval of 95 % coverage, " + interval + withAir + ", lies within " + limits + "."
 	case best.Low >= a.Lower && best.High <= a.Upper, best.High < a.Lower:
 		return VerdictUndecided, "The air that moves with the sheet is left out of this reading, " + interval +
-			", and could raise the tension up to about " + newtons(high) + ". That decides whether it lies within " + limits + ", so no verdict can be given from the ideal sheet."
+			", and could raise the tension up to about " + newtons(high) + ". That decides whether it lies within " + limits + ", so no verdict can be given without it."
 	}
-	p := ConformanceProbability(best.Tension, best.StandardUncertainty, a.Lower, a.Upper, len(best.Matches)-1)
+	p := ConformanceProbability(best.Tension, best.StandardUncertainty, a.Lower, a.Upper, best.freedom)
 	return VerdictUndecided, "The interval of 95 % coverage, " + interval + ", reaches across a limit (" + limits +
 		"). The probability that the tension lies within is about " + percent(p) + ". More peaks would narrow it."
 }
+
+func capital(s string) string { return strings.ToUpper(s[:1]) + s[1:] }
 
 func misfit(r Reading) string {
 	worst := 0.0
