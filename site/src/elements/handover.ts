@@ -34,7 +34,9 @@ export class HoopHandover extends LitElement {
         th, td { padding: 1.2pt 4pt; }
         h2 { font-size: 11.5pt; margin: 4pt 0 2pt; }
         p, ul { margin: 0 0 3pt; }
-        .note { padding: 3pt 8pt; margin: 4pt 0; max-width: none; }
+        .note { padding: 3pt 8pt; margin: 3pt 0; max-width: none; }
+        .caution { display: flex; gap: 10pt; break-inside: avoid; }
+        .caution > .note-title { flex: none; align-items: start; margin: 0; }
         .specs { columns: 2; column-gap: 18pt; }
         .spec { break-inside: avoid; margin-bottom: 4pt; }
         .spec .symbol { width: 2.2em; }
