@@ -87,10 +87,9 @@ func airy(k int, angle, a, b float64) Field {
 // sigma g a/T, with down the angle of the vertical (rad) and nu Poisson's ratio.
 // The tension is higher above.
 func OwnWeight(pull, down, nu float64) Field {
-	// The displacement (1 - r^2) along the vertical satisfies Navier's equations
-	// with an even load and vanishes on the rim. Half in half-space terms of
-	// nu: for a weight p per area, N_rr = -2 p r/(3-nu) cos, N_tt = nu N_rr,
-	// N_rt = p r (1-nu)/(3-nu) sin; dN_rr/dr + (N_rr - N_tt + dN_rt/dtheta)/r = -p cos.
+	// A displacement (1 - r^2) along the vertical satisfies Navier's equations
+	// under an even load and vanishes on the rim. Its strain along theta is zero,
+	// so N_tt = nu N_rr.
 	c := pull / (3 - nu)
 	return Field{{K: 1, Angle: down, Power: 1, RR: -2 * c, TT: -2 * nu * c, RT: c * (1 - nu)}}
 }

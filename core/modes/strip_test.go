@@ -1,0 +1,115 @@
+package modes
+
+import (
+	"math"
+	"testing"
+
+	"hoopsheet/core/bessel"
+)
+
+// Against a Ritz solution with functions broken at the edges of the strip
+// (testdata/uneven/make.py).
+func TestStripReference(t *testing.T) {
+	s := drySolution(t, 12, 4)
+	for _, row := range readUnevenReference(t).Strip {
+		if row.Change > 1e-7 {
+			t.Fatalf("the reference is converged to %g only", row.Change)
+		}
+		c := coupled(t, s, Uneven{Strips: []Strip{{Offset: row.Offset, Angle: 0.4, Width: row.Width, Mass: row.Mass}}})
+		for i, want := range row.K[:6] {
+			got, e := wave(c.Modes[i]), c.Modes[i].Error/c.Modes[i].Frequency
+			d := math.Abs(got/want - 1)
+			// Five digits; a strip a third of the sheet's weight in a tenth of its
+			// width bends the modes more.
+			limit := 1e-5
+			if row.Mass > 0.5 {
+				limit = 1e-4
+			}
+			if d > limit {
+				t.Errorf("%+v mode %d: %.10f, want %.10f: %.1e", row, i, got, want, d)
+			}
+			if d > e+1e-8 {
+				t.Errorf("%+v mode %d: errs by %.1e, estimate %.1e", row, i, d, e)
+			}
+		}
+	}
+}
+
+// First order, by the mean of the squared shape over the band.
+func TestStripLight(t *testing.T) {
+	s := drySolution(t, 4, 3)
+	const mass, width, offset = 1e-6, 0.1, 0.3
+	mode := coupled(t, s, Uneven{Strips: []Strip{{Offset: offset, Angle: 2, Width: width, Mass: mass}}}).pair(0, 1)[0]
+	j := bessel.ZeroJ(0, 1)
+	sum, area := 0.0, 0.0
+	for i := range 100 {
+		x := offset + width*((float64(i)+0.5)/100-0.5)
+		half := math.Sqrt(1 - x*x)
+		for k := range 400 {
+			y := half * (2*(float64(k)+0.5)/400 - 1)
+			sum += half * square(bessel.JInt(0, j*math.Hypot(x, y)))
+			area += half
+		}
+	}
+	want := -mass / 2 * sum / area / (math.Pi * square(bessel.JInt(1, j)))
+	if got := mode.Frequency/mode.Even - 1; math.Abs(got/want-1) > 2e-5 {
+		t.Errorf("shift %v, want %v", got, want)
+	}
+}
+
+// The rule and the polynomials along a strip.
+func TestStripPolynomials(t *testing.T) {
+	x, w := legendre(30)
+	for p := range 59 {
+		sum := 0.0
+		for i, v := range x {
+			sum += w[i] * math.Pow(v, float64(p))
+		}
+		want := 0.0
+		if p%2 == 0 {
+			want = 2 / float64(p+1)
+		}
+		if math.Abs(sum-want) > 1e-14 {
+			t.Errorf("power %d: %v, want %v", p, sum, want)
+		}
+	}
+	list := vanishing(12, x, w)
+	line := &stripLine{along: list}
+	other := line.at(x)
+	for k := range list {
+		for l := range list {
+			sum := 0.0
+			for i := range x {
+				sum += w[i] / 2 * list[k][i] * other[l][i]
+			}
+			want := 0.0
+			if k == l {
+				want = 1
+			}
+			if math.Abs(sum-want) > 1e-13 {
+				t.Errorf("polynomials %d and %d: %v", k, l, sum)
+			}
+		}
+	}
+}
+
+// The mean of the logarithm across a strip against a sum over both places.
+func TestStripAcross(t *testing.T) {
+	s := &stripLine{width: 0.2}
+	x, w := legendre(40)
+	for _, u := range []float64{0.05, 0.2, 1} {
+		even, odd := 0.0, 0.0
+		for i, v := range x {
+			for j, z := range x {
+				g := -w[i] * w[j] / 4 * math.Log(math.Hypot(u, 0.1*(v-z))) / (2 * math.Pi)
+				even += g
+				odd += g * linear(1, v) * linear(1, z)
+			}
+		}
+		gotEven, gotOdd := s.across(u)
+		// The sum is Gauss's, geometric in u/width; at 0.05 it leaves 1e-9.
+		if math.Abs(gotEven-even) > 1e-8 || math.Abs(gotOdd-odd) > 1e-8 {
+			t.Errorf("u=%v: %v and %v, want %v and %v", u, gotEven, gotOdd, even, odd)
+		}
+	}
+}

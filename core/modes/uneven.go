@@ -1,0 +1,117 @@
+package modes
+
+import (
+	"errors"
+	"fmt"
+	"math"
+)
+
+// Uneven is what couples the orders of a diaphragm: everything that is not the
+// same all around.
+type Uneven struct {
+	// Field is the departure from the even tension; empty if there is none.
+	Field Field
+	// Oval is the shape of a ring that is out of round.
+	Oval Oval
+	// Patches and Strips are masses fixed to the sheet. They may overlap, rigid
+	// patches may not.
+	Patches []Patch
+	Strips  []Strip
+}
+
+// Coupled holds the modes of a diaphragm with what couples its orders, lowest
+// first. Modes with nodal diameters are listed one by one, two to a pair.
+type Coupled struct {
+	Modes []CoupledMode
+	// Smallest and Largest principal tension over the sheet, over T.
+	Smallest, Largest Tautness
+	// Unknowns of the largest eigenproblem solved.
+	Unknowns int
+}
+
+// maxUnknowns bounds the eigenproblems, for speed: the highest functions of each
+// order are left out beyond it.
+const maxUnknowns = 400
+
+// SolveCoupled returns the modes of the diaphragm of an even solution with what
+// couples its orders added. The solution must come from Solve with neither Count
+// nor MaxFrequency; its MaxM and MaxN bound the modes that are followed. With
+// MaxN = 3 or 4 and MaxM = 12 the unknowns just fit.
+//
+// In still fluid, or in vacuum, this is a Ritz solution in all functions of the
+// even solution, with the exact integrals of the field: the lowest modes are
+// good to 1e-8 or better (TestWarpWeftMathieu, TestUnevenConverges), the even
+// diaphragm comes back to 1e-12. Where the fluid depends on frequency (sound, a
+// cavity), each even mode enters with its own frequency and effective mass: the
+// frequencies are right to first order in the unevenness, and at second order but
+// for the change of the fluid's mass over the shift. A cavity or a wall stays
+// round in an oval ring. The bending stiffness of the sheet stays that of the
+// even diaphragm.
+//
+// It refuses, in words, tensions that wrinkle the sheet and attached masses that
+// do not lie on it.
+func SolveCoupled(even *Solution, uneven Uneven) (*Coupled, error) {
+	if len(even.orders) == 0 || len(even.Modes) == 0 {
+		return nil, errors.New("the even diaphragm has no modes to start from")
+	}
+	if err := uneven.check(even); err != nil {
+		return nil, err
+	}
+	c := &Coupled{}
+	c.Smallest, c.Largest = uneven.Field.Extremes()
+	if c.Smallest.Value <= 0 {
+		return nil, fmt.Errorf("the tension must stay above zero everywhere, or the sheet wrinkles: the smallest is %.3g of the mean, at %.2g of the radius and %.0f degrees",
+			c.Smallest.Value, c.Smallest.Radius, c.Smallest.Angle*180/math.Pi)
+	}
+	orders := even.coupledOrders()
+	system := newUnevenSystem(orders, uneven.Field, uneven.Oval, even)
+	system.solve()
+	for _, b := range system.blocks {
+		c.Unknowns = max(c.Unknowns, b.size)
+	}
+	raw := system.modes()
+	if len(uneven.Patches)+len(uneven.Strips) > 0 {
+		raw = system.attach(raw, uneven.Patches, uneven.Strips, even)
+	}
+	c.Modes = system.label(raw, even)
+	return c, nil
+}
+
+// check says in a sentence what is wrong.
+func (u Uneven) check(even *Solution) error {
+	radius := even.orders[0].radius
+	for _, p := range u.Field {
+		switch {
+		case p.K < 0 || p.K > MaxHarmonic || p.Power < 0 || p.Power > MaxHarmonic+2:
+			return fmt.Errorf("a harmonic of the tension must be from 0 to %d", MaxHarmonic)
+		case (p.Power-p.K)%2 != 0 || p.Power < p.K-2:
+			return errors.New("a part of the tension must go with a power of the radius that keeps it smooth at the centre")
+		case !finite(p.Angle) || !finite(p.RR) || !finite(p.TT) || !finite(p.RT):
+			return errors.New("the amplitudes and angles of the tension must be numbers")
+		}
+	}
+	if !(math.Abs(u.Oval.Half) <= MaxOval) || !finite(u.Oval.Angle) {
+		return fmt.Errorf("the half difference of the semi-axes must be at most %.0f %% of the radius", MaxOval*100)
+	}
+	for i, p := range u.Patches {
+		if err := p.check(radius); err != nil {
+			return fmt.Errorf("patch %d: %w", i+1, err)
+		}
+		for j, q := range u.Patches[:i] {
+			if (p.Rigid || q.Rigid) && p.gap(q) < 0 {
+				return fmt.Errorf("patches %d and %d: a rigid patch must not overlap another", j+1, i+1)
+			}
+		}
+	}
+	for i, s := range u.Strips {
+		if err := s.check(radius); err != nil {
+			return fmt.Errorf("strip %d: %w", i+1, err)
+		}
+	}
+	return nil
+}
+
+// MaxHarmonic is the highest harmonic of the tension that is taken.
+const MaxHarmonic = 24
+
+func finite(x float64) bool { return !math.IsNaN(x) && !math.IsInf(x, 0) }

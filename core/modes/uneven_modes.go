@@ -1,0 +1,339 @@
+package modes
+
+import (
+	"cmp"
+	"math"
+	"slices"
+
+	"hoopsheet/core/disc"
+)
+
+// CoupledMode is one mode of a diaphragm whose orders are coupled.
+type CoupledMode struct {
+	// M and N of the even mode it descends from: the one with the largest share
+	// of its energy, each even mode being given away once and a pair twice.
+	M, N int
+	// Upper marks the higher of a pair.
+	Upper bool
+	// Frequency, Hz; Error, Hz, is what a smaller set of functions would change.
+	Frequency, Error float64
+	// Even is the frequency of the even diaphragm, Hz.
+	Even float64
+	// Split is the difference of the two frequencies of the pair over their mean,
+	// or 0 for M = 0.
+	Split float64
+	// NodalAngle is where its first nodal diameter lies, rad, 0 up to pi/M; 0 for
+	// M = 0. Without a split it is arbitrary.
+	NodalAngle float64
+	// Share of the even pair in its kinetic energy, 0 to 1.
+	Share float64
+	// Damping, to first order: the losses of the even modes by their shares.
+	Damping Damping
+
+	shape *coupledShape
+}
+
+// coupledShape is a shape as coefficients of disc.HeldEdge shapes.
+type coupledShape struct {
+	inner    float64     // effective radius over the ring's
+	cos, sin [][]float64 // by order
+	scale    float64
+	mass     float64 // kg, for a largest value of one
+}
+
+// rawMode is a solution by its unknowns.
+type rawMode struct {
+	value  float64   // omega^2
+	vector []float64 // over the unknowns of all nodes, unit modal mass
+	change float64   // of value, by a smaller set
+}
+
+// modes gathers the solutions of all blocks.
+func (s *unevenSystem) modes() []rawMode {
+	var list []rawMode
+	for _, b := range s.blocks {
+		for k, v := range b.values {
+			vector := make([]float64, s.unknowns)
+			local := b.vectors[k*b.size : (k+1)*b.size]
+			for _, n := range b.nodes {
+				copy(vector[n.global:n.global+len(n.order.omega)], local[n.at:])
+			}
+			list = append(list, rawMode{value: v, vector: vector, change: s.truncation(vector, v, len(b.nodes))})
+		}
+	}
+	slices.SortStableFunc(list, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
+	return list
+}
+
+// truncation estimates how much a value would fall with more functions: by the
+// strain energy in the last shapes of every order, in the last two orders and, if
+// functions were left out, in the last of those kept.
+func (s *unevenSystem) truncation(x []float64, value float64, nodes int) float64 {
+	// Leaving out a part S changes the value by x_S'(A_SS - value)x_S to leading
+	// order; what is missing is taken to be no more than the last two terms.
+	if nodes == 1 {
+		return 0 // the even solution has its own estimate
+	}
+	sum := 0.0
+	for i, o := range s.orders {
+		count := len(o.omega)
+		first := count
+		switch {
+		case o.m > 0 && i >= len(s.orders)-2:
+			first = 0
+		case len(o.left) > 0:
+			first = count - 2
+		}
+		for k := first; k < count; k++ {
+			sum += s.share(x, i, k) * math.Max(0, square(o.omega[k])-value)
+		}
+		for k, cut := range o.cut {
+			sum += s.share(x, i, k) * cut * value
+		}
+		if first == 0 {
+			continue
+		}
+		for j := o.n - 2; j < o.n; j++ {
+			cos, sin := 0.0, 0.0
+			for k := range count {
+				c, d := s.component(x, i, k)
+				cos += c * o.coef[k*o.n+j]
+				sin += d * o.coef[k*o.n+j]
+			}
+			sum += s.tension * circle(o.m) / (2 * disc.HeldEdge.Order(o.m, j)) * (cos*cos + sin*sin)
+		}
+	}
+	return sum
+}
+
+// label names the modes and finishes them.
+func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
+	type claim struct {
+		mode, order, n int
+		share          float64
+	}
+	var claims []claim
+	for k, r := range raw {
+		for o := range s.orders {
+			for n := range s.orders[o].omega {
+				if v := s.share(r.vector, o, n); v > 1e-3 {
+					claims = append(claims, claim{k, o, n, v})
+				}
+			}
+		}
+	}
+	slices.SortStableFunc(claims, func(a, b claim) int { return cmp.Compare(b.share, a.share) })
+	taken := map[[2]int][]int{} // modes by order and function
+	labelled := make([]bool, len(raw))
+	shares := make([]float64, len(raw))
+	room := func(order int) int {
+		if s.orders[order].m == 0 {
+			return 1
+		}
+		return 2
+	}
+	for _, c := range claims {
+		key := [2]int{c.order, c.n}
+		if c.n >= s.orders[c.order].listed && c.share < 0.5 {
+			continue // only modes that clearly go on from one that is not listed
+		}
+		if !labelled[c.mode] && len(taken[key]) < room(c.order) {
+			labelled[c.mode] = true
+			shares[c.mode] = c.share
+			taken[key] = append(taken[key], c.mode)
+		}
+	}
+	// What is mixed too much for a label of its own takes those left over, by
+	// frequency, so that no mode is lost.
+	type slot struct{ order, n int }
+	var free []slot
+	for i, o := range s.orders {
+		for n := range o.listed {
+			for range room(i) - len(taken[[2]int{i, n}]) {
+				free = append(free, slot{i, n})
+			}
+		}
+	}
+	slices.SortStableFunc(free, func(a, b slot) int {
+		return cmp.Compare(s.orders[a.order].omega[a.n], s.orders[b.order].omega[b.n])
+	})
+	for k := range raw {
+		if !labelled[k] && len(free) > 0 {
+			key := [2]int{free[0].order, free[0].n}
+			shares[k] = s.share(raw[k].vector, key[0], key[1])
+			taken[key] = append(taken[key], k)
+			free = free[1:]
+		}
+	}
+	list := []CoupledMode{}
+	for key, modes := range taken {
+		o := s.orders[key[0]]
+		if key[1] >= o.listed {
+			continue
+		}
+		slices.Sort(modes) // raw is in order of frequency
+		split := 0.0
+		if len(modes) == 2 {
+			a, b := math.Sqrt(raw[modes[0]].value), math.Sqrt(raw[modes[1]].value)
+			split = 2 * (b - a) / (a + b)
+		}
+		for i, k := range modes {
+			mode := s.finish(raw[k], key[0], key[1], even)
+			mode.Upper, mode.Split, mode.Share = i == 1, split, math.Min(1, shares[k])
+			list = append(list, mode)
+		}
+	}
+	slices.SortFunc(list, func(a, b CoupledMode) int {
+		return cmp.Or(cmp.Compare(a.Frequency, b.Frequency), cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N))
+	})
+	return list
+}
+
+// share returns the share of function n of an order, cosine and sine.
+func (s *unevenSystem) share(vector []float64, order, n int) float64 {
+	c, d := s.component(vector, order, n)
+	return c*c + d*d
+}
+
+func (s *unevenSystem) component(vector []float64, order, n int) (cos, sin float64) {
+	pair := s.pairs[order]
+	cos = vector[pair[0].global+n]
+	if pair[1] != nil {
+		sin = vector[pair[1].global+n]
+	}
+	return cos, sin
+}
+
+// finish makes a mode of a solution that descends from function n of an order.
+func (s *unevenSystem) finish(r rawMode, order, n int, even *Solution) CoupledMode {
+	o := s.orders[order]
+	omega := math.Sqrt(r.value)
+	mode := CoupledMode{M: o.m, N: n + 1, Frequency: omega / (2 * math.Pi), Even: o.omega[n] / (2 * math.Pi)}
+	mode.Error = mode.Frequency * (r.change/r.value/2 + o.errors[n])
+	cos, sin := s.component(r.vector, order, n)
+	if o.m > 0 {
+		m := float64(o.m)
+		// cos, sin make cos m(theta - antinode).
+		antinode := s.axis + math.Atan2(sin, cos)/m
+		mode.NodalAngle = wrap(antinode+math.Pi/(2*m), math.Pi/m)
+	}
+	d := &mode.Damping
+	for i, p := range s.orders {
+		for k, e := range p.damping {
+			// A loss of 2 zeta omega per unit mass, by the square of the amplitude.
+			weight := s.share(r.vector, i, k) * p.omega[k] / omega
+			d.Radiation += weight * e.Radiation
+			d.Viscous += weight * e.Viscous
+			d.Sheet += weight * e.Sheet
+		}
+	}
+	d.Remainder = even.Real.Remainder
+	d.sum(omega)
+	mode.shape = s.shapeOf(r, even)
+	return mode
+}
+
+// shapeOf turns unknowns into coefficients, along the true axes.
+func (s *unevenSystem) shapeOf(r rawMode, even *Solution) *coupledShape {
+	shape := &coupledShape{inner: even.orders[0].radius / even.Real.Radius, scale: 1}
+	for i, o := range s.orders {
+		a, b := make([]float64, o.n), make([]float64, o.n)
+		for k := range o.omega {
+			cos, sin := s.component(r.vector, i, k)
+			for j, v := range o.row(k) {
+				a[j] += cos * v
+				b[j] += sin * v
+			}
+		}
+		turnS, turnC := math.Sincos(float64(o.m) * s.axis)
+		for j := range a {
+			a[j], b[j] = a[j]*turnC-b[j]*turnS, a[j]*turnS+b[j]*turnC
+		}
+		shape.cos, shape.sin = append(shape.cos, a), append(shape.sin, b)
+	}
+	return shape
+}
+
+// At returns the shape at radius r (0 to 1, of the ring's radius) and angle
+// theta (rad). Its largest value over the plan is one, to 1 %. Beside attached
+// masses it leaves out the local dent of their static deflection.
+func (m *CoupledMode) At(r, theta float64) float64 {
+	m.shape.normalise()
+	return m.shape.at(r, theta)
+}
+
+// ModalMass returns the mass, kg, that moves with the mode, of sheet, fluid and
+// what is attached, for the scale of At.
+func (m *CoupledMode) ModalMass() float64 {
+	m.shape.normalise()
+	return m.shape.mass
+}
+
+// Coefficients returns the shape at the scale of At as coefficients of
+// disc.HeldEdge shapes, by order, of cos m theta and sin m theta, on a disc of
+// the returned radius (of the ring's).
+func (m *CoupledMode) Coefficients() (cos, sin [][]float64, radius float64) {
+	m.shape.normalise()
+	for i := range m.shape.cos {
+		cos = append(cos, scaled(m.shape.cos[i], m.shape.scale))
+		sin = append(sin, scaled(m.shape.sin[i], m.shape.scale))
+	}
+	return cos, sin, m.shape.inner
+}
+
+func scaled(x []float64, f float64) []float64 {
+	y := make([]float64, len(x))
+	for i, v := range x {
+		y[i] = f * v
+	}
+	return y
+}
+
+func (s *coupledShape) at(r, theta float64) float64 {
+	x := r / s.inner
+	if x >= 1 {
+		return 0
+	}
+	w := 0.0
+	u := make([]float64, len(s.cos[0]))
+	for m := range s.cos {
+		u = slices.Grow(u[:0], len(s.cos[m]))[:len(s.cos[m])]
+		disc.HeldEdge.Shapes(u, m, x)
+		sin, cos := math.Sincos(float64(m) * theta)
+		w += dot(u, s.cos[m])*cos + dot(u, s.sin[m])*sin
+	}
+	return s.scale * w
+}
+
+// normalise sets the scale, once.
+func (s *coupledShape) normalise() {
+	if s.mass > 0 {
+		return
+	}
+	// The plan on a polar grid: radial values by order, then each angle.
+	const rings, spokes = 40, 72
+	var sin, cos [spokes]float64
+	for i := range spokes {
+		sin[i], cos[i] = math.Sincos(2 * math.Pi * float64(i) / spokes)
+	}
+	largest := 0.0
+	for i := range rings {
+		x := float64(i) / rings
+		var line [spokes]float64
+		for m := range s.cos {
+			u := make([]float64, len(s.cos[m]))
+			disc.HeldEdge.Shapes(u, m, x)
+			a, b := dot(u, s.cos[m]), dot(u, s.sin[m])
+			for k := range spokes {
+				line[k] += a*cos[k*m%spokes] + b*sin[k*m%spokes]
+			}
+		}
+		for _, v := range line {
+			if math.Abs(v) > math.Abs(largest) {
+				largest = v
+			}
+		}
+	}
+	s.scale = 1 / largest
+	s.mass = s.scale * s.scale
+}
