@@ -74,6 +74,24 @@ type FoundPeak struct {
 type TapRequest struct {
 	Document diaphragm.Diaphragm `json:"document"`
 	Peaks    []tap.Peak          `json:"peaks"`
+	// Without names effects to leave out; without all of them the peaks are read
+	// as modes of the ideal sheet.
+	Without []Effect  `json:"without,omitempty"`
+	Inputs  TapInputs `json:"inputs,omitzero"`
+}
+
+// TapInputs are the standard uncertainties of what a tension rests on beside
+// its peaks; 0 stands for the usual one, which the assumptions then state.
+type TapInputs struct {
+	// Radius and ArealDensity, relative.
+	Radius       float64 `json:"radius,omitempty"`
+	ArealDensity float64 `json:"arealDensity,omitempty"`
+	// Temperature of the air, K, and its pressure, relative.
+	Temperature float64 `json:"temperature,omitempty"`
+	Pressure    float64 `json:"pressure,omitempty"`
+	// Model is the relative standard deviation by which the frequencies of a
+	// sound diaphragm scatter about those computed.
+	Model float64 `json:"model,omitempty"`
 }
 
 // TapResult is the tension with its verdict.
@@ -88,10 +106,28 @@ type TapResult struct {
 	Verdict tap.Verdict `json:"verdict"`
 	// Reason for the verdict, in a sentence.
 	Reason string `json:"reason"`
-	// MassRatio rho a / sigma, and what leaving the moving air out does to the
-	// tension, in sentences.
-	MassRatio   float64  `json:"massRatio"`
+	// Budget of the uncertainty of the first reading, largest share first.
+	Budget []tap.Share `json:"budget"`
+	// Ideal is what the ideal sheet would make of the first reading; left out
+	// without one, or where the peaks are read as modes of the ideal sheet.
+	Ideal *IdealReading `json:"ideal,omitempty"`
+	// MassRatio rho a / sigma.
+	MassRatio float64 `json:"massRatio"`
+	// AirNote says what leaving the moving fluid out does to the tension, in
+	// sentences; empty where it is taken into account.
 	AirNote     string   `json:"airNote"`
 	Assumptions []string `json:"assumptions"`
 	Cautions    []string `json:"cautions"`
+}
+
+// IdealReading is the tension that the ideal sheet in vacuum would give for the
+// same peaks, read as the same modes.
+type IdealReading struct {
+	// Tension, N/m, and how many times as much the diaphragm really has.
+	Tension float64 `json:"tension"`
+	Factor  float64 `json:"factor"`
+	// Misfit is the largest relative deviation of a peak from the ideal sheet,
+	// and RealMisfit that from the diaphragm as it stands.
+	Misfit     float64 `json:"misfit"`
+	RealMisfit float64 `json:"realMisfit"`
 }

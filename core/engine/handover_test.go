@@ -15,7 +15,7 @@ const handedAddress = "https://example.org/h/hand-over.html"
 func demoHandOver() *SendRequest {
 	return &SendRequest{
 		Document: diaphragm.Demo("01JZZZZZZZZZZZZZZZZZZZZZZZ", "2026-05-04T09:00:00Z"),
-		Peaks:    []diaphragm.ChosenPeak{{Frequency: 56.8, Uncertainty: 0.05, M: 0, N: 1}, {Frequency: 90.51, Uncertainty: 0.03}},
+		Peaks:    []diaphragm.ChosenPeak{{Frequency: 15.94, Uncertainty: 0.05, M: 0, N: 1}, {Frequency: 36.33, Uncertainty: 0.03}},
 		Tapped:   "2026-05-04T10:00:00Z",
 		Address:  handedAddress,
 		Sent:     "2026-05-04T11:00:00Z",

@@ -55,6 +55,13 @@ func realAssumptions(doc *diaphragm.Diaphragm, effects modes.Effects, notes []mo
 	list := []string{
 		"The sheet is evenly tensioned at the nominal tension on a round, rigid ring, and moves little, so that its tension stays the same.",
 	}
+	list = append(list, effectAssumptions(doc, effects, notes)...)
+	return append(list, "Clamps, leaks and the ring lose energy too: that remainder is the damping ratio given, not computed.")
+}
+
+// effectAssumptions says what is assumed of bending, fluid and cavity.
+func effectAssumptions(doc *diaphragm.Diaphragm, effects modes.Effects, notes []modes.Note) []string {
+	var list []string
 	if effects.Stiffness {
 		list = append(list, "Its bending stiffness is taken into account, with the rim "+string(doc.Tension.Rim.OrClamped())+".")
 	} else {
@@ -88,7 +95,7 @@ func realAssumptions(doc *diaphragm.Diaphragm, effects modes.Effects, notes []mo
 			list = append(list, "Modes whose sound waves are short against the ring are computed as in still fluid, and nothing is stated of their radiation.")
 		}
 	}
-	return append(list, "Clamps, leaks and the ring lose energy too: that remainder is the damping ratio given, not computed.")
+	return list
 }
 
 // assumptionsOf are those of a diaphragm with all its effects.

@@ -28,7 +28,7 @@ func sampleRequests(t *testing.T) map[string]string {
 		t.Fatal(err)
 	}
 	recording := base64.StdEncoding.EncodeToString(wav)
-	send := `{"document":` + doc + `,"peaks":[{"frequency":56.8,"uncertainty":0.05,"m":0,"n":1},{"frequency":90.5,"uncertainty":0.05,"m":1,"n":1}],
+	send := `{"document":` + doc + `,"peaks":[{"frequency":15.94,"uncertainty":0.05,"m":0,"n":1},{"frequency":36.33,"uncertainty":0.05,"m":1,"n":1}],
 		"tapped":"2026-05-04T10:00:00Z","address":"https://example.org/h/hand-over.html","sent":"2026-05-04T11:00:00Z"}`
 	fragment := func() string {
 		response, err := Call(context.Background(), "send", []byte(send))
@@ -56,7 +56,7 @@ func sampleRequests(t *testing.T) map[string]string {
 		"respond": `{"document":` + doc + `,"displacement":{"kind":"bulge","peak":0.002,"radius":0,"angle":0,"width":0.1,"formula":""},"velocity":` + rest +
 			`,"orders":8,"circles":8,"duration":0,"frames":10,"radii":11,"angles":20,"points":[{"radius":0,"angle":0}]}`,
 		"peaks":   `{"recording":"` + recording + `","lowest":0,"highest":0,"most":0,"tap":0,"displayPoints":0}`,
-		"tap":     `{"document":` + doc + `,"peaks":[{"frequency":56.8,"uncertainty":0.05,"level":0,"use":true,"m":0,"n":0},{"frequency":90.5,"uncertainty":0.05,"level":-3,"use":true,"m":0,"n":0}]}`,
+		"tap":     `{"document":` + doc + `,"peaks":[{"frequency":15.94,"uncertainty":0.05,"level":0,"use":true,"m":0,"n":0},{"frequency":36.33,"uncertainty":0.05,"level":-3,"use":true,"m":0,"n":0}]}`,
 		"send":    send,
 		"receive": `{"fragment":"` + fragment() + `","parcel":""}`,
 	}

@@ -15,9 +15,9 @@ const (
 	mostSharpened   = 3
 	sharpenedWithin = 4.6 // ln 100
 	// sharpMove is how far on the c axis a curve moved onto its exact value may
-	// be followed: its slope errs by less than 5 % where modes do not cross, so
-	// that the tension errs by less than 1e-4 there.
-	sharpMove   = 1e-3
+	// be followed: even where modes cross the slope errs by less than one, so
+	// that the tension errs by less than 2e-6, and mostly a hundredth of it.
+	sharpMove   = 1e-6
 	mostSolving = 4
 )
 

@@ -544,6 +544,21 @@ export interface History {
   values: Numbers;
 }
 /**
+ * IdealReading is the tension that the ideal sheet in vacuum would give for the same peaks, read as the same modes.
+ */
+export interface IdealReading {
+  /**
+   * Tension, N/m, and how many times as much the diaphragm really has.
+   */
+  tension: number;
+  factor: number;
+  /**
+   * Misfit is the largest relative deviation of a peak from the ideal sheet, and RealMisfit that from the diaphragm as it stands.
+   */
+  misfit: number;
+  realMisfit: number;
+}
+/**
  * ImportRequest reads an archive or a hand-over file.
  */
 export interface ImportRequest {
@@ -624,7 +639,7 @@ export interface Match {
   m: number;
   n: number;
   /**
-   * Measured and Fitted frequency, Hz; Fitted is that of the ideal sheet at the fitted tension.
+   * Measured and Fitted frequency, Hz; Fitted is that of the model at the fitted tension.
    */
   measured: number;
   fitted: number;
@@ -1033,7 +1048,7 @@ export interface Reading {
   low: number;
   high: number;
   /**
-   * Spread is the sample standard deviation of the tensions that the peaks give one by one, relative to Tension.
+   * Spread is the sample standard deviation of the tensions that the peaks give one by one, relative to Tension; a mode that follows the tension less than the others counts less.
    */
   spread: number;
   /**
@@ -1454,6 +1469,25 @@ export interface ShapeResult {
   lobes: Lobe[];
 }
 /**
+ * Share is one part of the uncertainty of the tension.
+ */
+export interface Share {
+  name: string;
+  /**
+   * Input is the relative standard uncertainty of the input, and Sensitivity the percent of tension per percent of it; 0 for what the peaks themselves bring.
+   */
+  input: number;
+  sensitivity: number;
+  /**
+   * Relative standard uncertainty of the tension from it.
+   */
+  relative: number;
+  /**
+   * Share of the variance, 0 to 1.
+   */
+  share: number;
+}
+/**
  * Sheet is the film, foil, fabric or skin itself.
  */
 export interface Sheet {
@@ -1546,6 +1580,25 @@ export interface Surroundings {
   serviceMax: number;
 }
 /**
+ * TapInputs are the standard uncertainties of what a tension rests on beside its peaks; 0 stands for the usual one, which the assumptions then state.
+ */
+export interface TapInputs {
+  /**
+   * Radius and ArealDensity, relative.
+   */
+  radius?: number;
+  arealDensity?: number;
+  /**
+   * Temperature of the air, K, and its pressure, relative.
+   */
+  temperature?: number;
+  pressure?: number;
+  /**
+   * Model is the relative standard deviation by which the frequencies of a sound diaphragm scatter about those computed.
+   */
+  model?: number;
+}
+/**
  * TapList is the tap sessions of one diaphragm, newest first.
  */
 export interface TapList {
@@ -1577,6 +1630,11 @@ export interface TapRef {
 export interface TapRequest {
   document: Diaphragm;
   peaks: Peak[];
+  /**
+   * Without names effects to leave out; without all of them the peaks are read as modes of the ideal sheet.
+   */
+  without?: Effect[];
+  inputs?: TapInputs;
 }
 /**
  * TapResult is the tension with its verdict.
@@ -1601,9 +1659,20 @@ export interface TapResult {
    */
   reason: string;
   /**
-   * MassRatio rho a / sigma, and what leaving the moving air out does to the tension, in sentences.
+   * Budget of the uncertainty of the first reading, largest share first.
+   */
+  budget: Share[];
+  /**
+   * Ideal is what the ideal sheet would make of the first reading; left out without one, or where the peaks are read as modes of the ideal sheet.
+   */
+  ideal?: IdealReading;
+  /**
+   * MassRatio rho a / sigma.
    */
   massRatio: number;
+  /**
+   * AirNote says what leaving the moving fluid out does to the tension, in sentences; empty where it is taken into account.
+   */
   airNote: string;
   assumptions: string[];
   cautions: string[];
