@@ -2,6 +2,7 @@ package tap
 
 import (
 	"math"
+	"slices"
 	"testing"
 
 	"hoopsheet/core/diaphragm"
@@ -157,6 +158,44 @@ func TestReadRealExact(t *testing.T) {
 			for _, m := range best.Matches {
 				if names[m.Peak] != (ModeName{m.M, m.N}) || math.Abs(m.Residual) > 1e-6 {
 					t.Errorf("%s, %g N/m: %+v", c.name, tension, m)
+				}
+			}
+		}
+	}
+}
+
+// TestReadCavity gives exact peaks of sheets over a closed cavity, where curves
+// bend; within TestReadRealExact's bound, because readings are solved again.
+func TestReadCavity(t *testing.T) {
+	baffled := airAt(diaphragm.FaceBaffled, 0)
+	for _, c := range []realCase{
+		{"kettle", modes.Real{Radius: 0.42, Tension: 1300, ArealDensity: 0.26, Upper: baffled, Lower: airAt(diaphragm.FaceCavity, 0.34)}, modes.AllEffects()},
+		{"shallow, below still air", modes.Real{Radius: 0.75, Tension: 180, ArealDensity: 0.07, Upper: baffled, Lower: airAt(diaphragm.FaceCavity, 0.05)}, modes.Effects{Fluid: true, Cavity: true}},
+	} {
+		names := []ModeName{{0, 1}, {1, 1}, {2, 1}, {3, 1}, {0, 2}, {1, 2}}
+		highest := 1.2 * slices.Max(c.at(t, c.real.Tension*1.5, names...))
+		s, err := NewSpectrum(c.solver(), Range{Nominal: c.real.Tension, Widest: 3, Highest: highest, MaxM: 6, MaxN: 4})
+		if err != nil {
+			t.Fatal(err)
+		}
+		for _, factor := range []float64{0.7, 1.02, 1.5} {
+			tension := c.real.Tension * factor
+			var peaks []Peak
+			for _, f := range c.at(t, tension, names...) {
+				peaks = append(peaks, Peak{Frequency: f, Use: true})
+			}
+			a := mustRead(t, c.question(s, peaks))
+			if !a.Chosen {
+				t.Errorf("%s, %g N/m: %s", c.name, tension, a.Reason)
+				continue
+			}
+			best := a.Readings[0]
+			if math.Abs(best.Tension/tension-1) > 2e-6 || len(best.Matches) != len(names) {
+				t.Errorf("%s, %g N/m: read as %.8g by %d modes", c.name, tension, best.Tension, len(best.Matches))
+			}
+			for _, m := range best.Matches {
+				if names[m.Peak] != (ModeName{m.M, m.N}) {
+					t.Errorf("%s, %g N/m: %+v is %v", c.name, tension, m, names[m.Peak])
 				}
 			}
 		}
