@@ -17,14 +17,37 @@ func (s *unevenSystem) attach(raw []rawMode, patches []Patch, strips []Strip, ev
 	k := s.waveNumber()
 	radius := even.orders[0].radius
 	var list []*attachment
-	for i, p := range patches {
+	for i, p := range merged(patches) {
 		list = append(list, newPatchAttachment(i, p, radius, s.axis, k))
 	}
 	for _, p := range strips {
 		list = append(list, newStripAttachment(p, radius, s.axis, k))
 	}
-	f := s.flexibility(list, even.Real.Tension)
+	real := even.Real
+	f := s.flexibility(list, real.Tension)
+	fluid := 0.0
+	if len(even.orders[0].faces) > 0 {
+		fluid = (real.Upper.Density + real.Lower.Density) * radius / real.ArealDensity
+	}
+	f.weighTail(list, real.Tension, real.ArealDensity*radius*radius, fluid)
 	return s.ritz(raw, list, f)
+}
+
+// merged puts limp patches that lie on each other into one.
+func merged(patches []Patch) []Patch {
+	var list []Patch
+	for _, p := range patches {
+		same := slices.IndexFunc(list, func(q Patch) bool {
+			q.Mass = p.Mass
+			return p == q && !p.Rigid
+		})
+		if same >= 0 {
+			list[same].Mass += p.Mass
+		} else {
+			list = append(list, p)
+		}
+	}
+	return list
 }
 
 // waveNumber returns the largest j_mn of the reported modes.
@@ -40,12 +63,13 @@ func (s *unevenSystem) waveNumber() float64 {
 
 // flexibility is the static answer of a system to loads like its functionals.
 type flexibility struct {
-	count  int
-	values []float64 // functionals of every unknown: count by unknowns
-	shapes []float64 // the static deflections by unknowns: count by unknowns
-	matrix []float64 // functionals of the deflections: count by count
-	tail   []float64 // the part of matrix that the unknowns do not express
-	load   []bool
+	count   int
+	values  []float64 // functionals of every unknown: count by unknowns
+	shapes  []float64 // the static deflections by unknowns: count by unknowns
+	matrix  []float64 // functionals of the deflections: count by count
+	tail    []float64 // the part of matrix that the unknowns do not express
+	load    []bool
+	inertia []float64 // of the tail, count by count
 }
 
 func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
@@ -95,6 +119,27 @@ func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
 		}
 	}
 	return f
+}
+
+// weighTail fills in the inertia of the tail.
+func (f *flexibility) weighTail(list []*attachment, T, sheet, fluid float64) {
+	scale := make([]float64, 0, f.count)
+	for _, a := range list {
+		energy := make([]float64, len(a.list))
+		for i := range energy {
+			at := len(scale) + i
+			energy[i] = T * f.tail[at*f.count+at]
+		}
+		for _, v := range a.inertiaOf(energy, fluid) {
+			scale = append(scale, math.Sqrt(v*sheet/T))
+		}
+	}
+	f.inertia = make([]float64, f.count*f.count)
+	for i, x := range scale {
+		for j, y := range scale {
+			f.inertia[i*f.count+j] = x * y * f.tail[i*f.count+j]
+		}
+	}
 }
 
 func (f *flexibility) add(row, column int, x []float64, n int, factor float64) {
@@ -339,10 +384,12 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	for k, m := range raw {
 		c[k*size+k] = 1 / m.value
 	}
+	tail := f.between(f.inertia, pivots, factor)
+	strips := f.between(f.onlyStrips(list), pivots, factor)
 	for e := range extra {
 		y := s.inertia(extras[e*u : (e+1)*u])
 		for d := range e + 1 {
-			v := dot(y, extras[d*u:(d+1)*u])
+			v := dot(y, extras[d*u:(d+1)*u]) + tail[e*extra+d]
 			c[(modes+e)*size+modes+d], c[(modes+d)*size+modes+e] = v, v
 		}
 	}
@@ -380,8 +427,6 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	vectors := make([]float64, wanted*size)
 	values := newSymmetric(size).largest(c, wanted, vectors)
 	out := make([]rawMode, wanted)
-	tail := f.tailOf(pivots, factor)
-	beyond := square(s.orders[len(s.orders)-1].omega[0])
 	for k, v := range values {
 		y := vectors[k*size : (k+1)*size]
 		m := rawMode{value: 1 / v, vector: make([]float64, u)}
@@ -402,9 +447,10 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 				m.vector[j] += p * x
 			}
 		}
-		// The inertia of what the unknowns do not express is left out: at most its
-		// strain energy times the square of its frequency ratio.
-		inertia := math.Abs(bilinear(tail, extra, y[modes:])) * m.value / beyond
+		// The inertia of what the unknowns do not express is an estimate, so it is
+		// counted twice; of the deflection under strips, a quarter of what the
+		// unknowns do not express, for square ends and for what bends across them.
+		inertia := 2*math.Abs(bilinear(tail, extra, y[modes:]))*m.value + math.Abs(bilinear(strips, extra, y[modes:]))/4/v
 		m.change = m.value * (m.change + inertia + s.unresolved(list, rows, size, y, v))
 		out[k] = m
 	}
@@ -424,15 +470,30 @@ func span(x []float64) (lo, hi int) {
 	return lo, hi
 }
 
-// tailOf returns the strain energy of the part that the unknowns do not express
-// in the residual deflections, as a matrix between them.
-func (f *flexibility) tailOf(pivots []int, factor []float64) []float64 {
+// onlyStrips returns the tail of strips.
+func (f *flexibility) onlyStrips(list []*attachment) []float64 {
+	x := make([]float64, len(f.tail))
+	at := 0
+	for _, a := range list {
+		if a.strip != nil {
+			for i := at; i < at+len(a.list); i++ {
+				copy(x[i*f.count:(i+1)*f.count], f.tail[i*f.count:(i+1)*f.count])
+			}
+		}
+		at += len(a.list)
+	}
+	return x
+}
+
+// between turns a matrix between functionals into one between the residual
+// deflections.
+func (f *flexibility) between(matrix []float64, pivots []int, factor []float64) []float64 {
 	n := len(pivots)
 	l, x := make([]float64, n*n), make([]float64, n*n)
 	for i, p := range pivots {
 		copy(l[i*n:i*n+i+1], factor[p*n:p*n+i+1])
 		for j, q := range pivots {
-			x[i*n+j] = f.tail[p*f.count+q]
+			x[i*n+j] = matrix[p*f.count+q]
 		}
 	}
 	congruent(x, l, n)

@@ -36,8 +36,7 @@ func (s Strip) check(radius float64) error {
 // radius of the sheet).
 func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	width, middle := s.Width/radius, s.Offset/radius
-	edge := math.Abs(middle) + width/2
-	a := &attachment{strip: &stripLine{width: width, middle: middle, half: math.Sqrt(1 - edge*edge)}}
+	a := &attachment{strip: &stripLine{width: width, middle: middle}}
 	// Legendre coefficients of a wave of k over a length 2 fall off beyond degree
 	// k; the modes with the longest waves are resolved best.
 	degrees := min(8+int(math.Ceil(k)), maxAlong)
@@ -52,6 +51,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 		half[i] = math.Sqrt(1 - offset*offset)
 		sum += wx[i] * half[i]
 	}
+	a.strip.half = sum / 2 // of the same area
 	measure := make([]float64, len(x))
 	for i := range measure {
 		measure[i] = wx[i] * half[i] / sum

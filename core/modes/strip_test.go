@@ -10,7 +10,7 @@ import (
 // Against a Ritz solution with functions broken at the edges of the strip
 // (testdata/uneven/make.py).
 func TestStripReference(t *testing.T) {
-	s := drySolution(t, 12, 4)
+	s := drySolution(t, 12, 6)
 	for _, row := range readUnevenReference(t).Strip {
 		if row.Change > 1e-7 {
 			t.Fatalf("the reference is converged to %g only", row.Change)
@@ -19,11 +19,11 @@ func TestStripReference(t *testing.T) {
 		for i, want := range row.K[:6] {
 			got, e := wave(c.Modes[i]), c.Modes[i].Error/c.Modes[i].Frequency
 			d := math.Abs(got/want - 1)
-			// Five digits; a strip a third of the sheet's weight in a tenth of its
-			// width bends the modes more.
+			// Five digits; less for a third of the sheet's weight on a tenth of its
+			// width, across which the sixth mode has a fifth of a wave.
 			limit := 1e-5
 			if row.Mass > 0.5 {
-				limit = 1e-4
+				limit = 2e-4
 			}
 			if d > limit {
 				t.Errorf("%+v mode %d: %.10f, want %.10f: %.1e", row, i, got, want, d)

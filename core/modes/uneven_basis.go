@@ -92,9 +92,9 @@ func (o *coupledOrder) fill(n int) {
 	o.n, o.coef, o.omega, o.cut = n, nil, nil, nil
 	last := 0.0
 	for _, mode := range o.known {
+		last = real(mode.omega)
 		// A change of the strain energy moves omega^2 by it over this mass, which
 		// has the change of the fluid's mass with frequency in it.
-		last = real(mode.omega)
 		o.add(mode.coef[:n], mode.SheetMass+mode.FluidMass, last)
 		o.cut = append(o.cut, energy(o.m, mode.coef, n)/energy(o.m, mode.coef, 0))
 	}
@@ -106,15 +106,58 @@ func (o *coupledOrder) fill(n int) {
 	values := newSymmetric(size).largest(static, size, vectors)
 	y, q := make([]float64, whole), make([]float64, source.strain.n)
 	for k := range size {
-		omega := 1 / math.Sqrt(values[k])
-		// With a cavity the places of its own modes are not among these.
-		if source.cavity == nil && k < len(o.known) || source.cavity != nil && omega <= last {
+		if source.cavity == nil && k < len(o.known) {
 			continue
 		}
 		copy(y, vectors[k*size:(k+1)*size])
 		source.strain.shapes(q, y)
+		omega := 1 / math.Sqrt(values[k])
+		// With a cavity the modes known are not the first of these: what they say
+		// already is left out.
+		if source.cavity != nil && (omega <= last || !o.beside(q[:n])) {
+			continue
+		}
 		o.add(q[:n], area*values[k], omega)
 	}
+}
+
+// beside takes from a function what lies, by strain energy, in the span of the
+// known modes and keeps its energy; false if that is most of it.
+func (o *coupledOrder) beside(q []float64) bool {
+	inner := func(a, b []float64) float64 {
+		sum := 0.0
+		for j, v := range a {
+			sum += v * b[j] / (2 * disc.HeldEdge.Order(o.m, j))
+		}
+		return sum
+	}
+	whole := inner(q, q)
+	var basis [][]float64
+	for k := range o.known {
+		b := append([]float64(nil), o.row(k)...)
+		before := inner(b, b)
+		for _, c := range basis {
+			p := inner(b, c)
+			for j, v := range c {
+				b[j] -= p * v
+			}
+		}
+		if after := inner(b, b); after > 1e-9*before {
+			basis = append(basis, scaled(b, 1/math.Sqrt(after)))
+		}
+	}
+	for _, c := range basis {
+		p := inner(q, c)
+		for j, v := range c {
+			q[j] -= p * v
+		}
+	}
+	left := inner(q, q)
+	if left < whole/2 {
+		return false
+	}
+	copy(q, scaled(q, math.Sqrt(whole/left)))
+	return true
 }
 
 // energy returns the strain energy of unit tension in the shapes from first on.
