@@ -4,6 +4,7 @@ import (
 	"context"
 	"errors"
 	"math"
+	"math/rand/v2"
 	"strings"
 	"testing"
 
@@ -265,5 +266,44 @@ func BenchmarkTapFivePeaks(b *testing.B) {
 				}
 			}
 		})
+	}
+}
+
+// TestTapExtremes: whatever the peaks, an answer with finite figures, also for
+// a cavity.
+func TestTapExtremes(t *testing.T) {
+	random := rand.New(rand.NewPCG(4, 4))
+	kettle := tapDemo()
+	kettle.Faces.Lower = diaphragm.Face{Kind: diaphragm.FaceCavity, Depth: 0.1}
+	open := tapDemo()
+	open.Faces.Upper.Kind, open.Faces.Lower.Kind = diaphragm.FaceOpen, diaphragm.FaceOpen
+	for i := range 6 {
+		request := &TapRequest{Document: []diaphragm.Diaphragm{kettle, open, tapDemo()}[i%3]}
+		for range 1 + random.IntN(8) {
+			p := tap.Peak{Frequency: math.Exp(12 * (random.Float64() - 0.2)), Use: true}
+			if random.IntN(8) == 0 {
+				p.M, p.N = random.IntN(9), 1+random.IntN(3)
+			}
+			request.Peaks = append(request.Peaks, p)
+		}
+		result, err := runTap(context.Background(), request)
+		var refused *Error
+		if errors.As(err, &refused) && strings.Contains(refused.Problems[0].Message, "both set to mode") {
+			continue
+		}
+		if err != nil {
+			t.Errorf("%+v: %v", request.Peaks, err)
+			continue
+		}
+		for _, r := range result.Readings {
+			for _, x := range []float64{r.Tension, r.StandardUncertainty, r.Low, r.High, r.Spread, r.Odds} {
+				if math.IsNaN(x) || math.IsInf(x, 0) || x < 0 {
+					t.Errorf("%+v from %+v", r, request.Peaks)
+				}
+			}
+		}
+		if result.Reason == "" {
+			t.Errorf("no reason for %+v", request.Peaks)
+		}
 	}
 }
