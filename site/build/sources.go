@@ -69,7 +69,7 @@ func command(dir string, env []string, stdin io.Reader, name string, args ...str
 	return out.Bytes(), nil
 }
 
-// buildWasm compiles ./wasm with the build id linked in, and gzips it.
+// buildWasm compiles ./wasm with the build id linked in, makes it small (slim.go), and gzips it.
 func buildWasm(root, id string) ([]byte, error) {
 	dir, err := os.MkdirTemp("", "hoopsheet-wasm-")
 	if err != nil {
@@ -83,6 +83,9 @@ func buildWasm(root, id string) ([]byte, error) {
 	}
 	raw, err := os.ReadFile(file)
 	if err != nil {
+		return nil, err
+	}
+	if raw, err = slim(raw); err != nil {
 		return nil, err
 	}
 	return gzipped(raw)
