@@ -89,13 +89,14 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 	// loads the sheet is the inertia of long waves, so fewer are needed there; and
 	// a rigid patch is held by no more than what loads it.
 	top := min(4+int(math.Ceil(1.5*k*size)), 14)
-	loads := min(4+int(k*size/2), 8)
+	loads := min(3+int(k*size/2), 8)
 	if p.Rigid {
 		top = loads
 	}
-	spokes := 2*top + 8
-	rings := top/2 + 6
-	// Enough for products with functions of the sheet beyond k.
+	// Enough for products with functions of the sheet beyond k, whose own
+	// coefficients fall off alike.
+	spokes := 2*top + 6
+	rings := top/2 + 4
 	radii, weights := make([]float64, rings), make([]float64, rings)
 	disc.RadialRule(radii, weights, 0)
 	for _, s := range radii {

@@ -7,6 +7,7 @@ import (
 
 	"hoopsheet/core/bessel"
 	"hoopsheet/core/disc"
+	"hoopsheet/core/internal/sorting"
 )
 
 // attach adds masses to a solved system. It is a Ritz solution in the solved
@@ -58,7 +59,8 @@ func (s *unevenSystem) waveNumber() float64 {
 			k = math.Max(k, bessel.ZeroJ(float64(o.m), o.listed))
 		}
 	}
-	return k
+	// The highest modes only just: their answer is right to fewer digits.
+	return 0.75 * k
 }
 
 // flexibility is the static answer of a system to loads like its functionals.
@@ -252,13 +254,18 @@ func (s *unevenSystem) takeOff(f *flexibility, list []*attachment, T float64) {
 					}
 				}
 				lefts := len(o.left)
-				for i := range a.list {
-					for j := range b.list {
+				weighed := make([]float64, o.n)
+				for i, g := range a.list {
+					for k, c := range scale {
+						weighed[k] = c * p.shapes[i*o.n+k]
+					}
+					for j, h := range b.list {
+						if !g.load && !h.load {
+							continue
+						}
 						v := 0.0
 						if whole {
-							for k, c := range scale {
-								v += c * p.shapes[i*o.n+k] * q.shapes[j*o.n+k]
-							}
+							v = dot(weighed, q.shapes[j*o.n:(j+1)*o.n])
 						}
 						for k, omega := range o.left {
 							v += p.left[i*lefts+k] * q.left[j*lefts+k] / (omega * omega)
@@ -404,7 +411,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	for _, a := range list {
 		for i, g := range a.list {
 			if g.mass > 0 {
-				addOuter(c, size, rows[(at+i)*size:(at+i+1)*size], g.mass)
+				addLower(c, size, rows[(at+i)*size:(at+i+1)*size], g.mass)
 			}
 		}
 		if a.rigid() {
@@ -421,6 +428,11 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 			}
 		}
 		at += len(a.list)
+	}
+	for i := range size { // the upper triangle
+		for j := range i {
+			c[j*size+i] = c[i*size+j]
+		}
 	}
 	constrain(c, size, constraints)
 	wanted := min(modes, size-len(constraints))
@@ -454,7 +466,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		m.change = m.value * (m.change + inertia + s.unresolved(list, rows, size, y, v))
 		out[k] = m
 	}
-	slices.SortStableFunc(out, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
+	sorting.By(out, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
 	return out
 }
 
@@ -520,12 +532,13 @@ func (s *unevenSystem) unresolved(list []*attachment, rows []float64, size int, 
 	return sum
 }
 
-// addOuter adds factor v v' to a matrix.
-func addOuter(c []float64, n int, v []float64, factor float64) {
+// addLower adds factor v v' to the lower triangle of a matrix.
+func addLower(c []float64, n int, v []float64, factor float64) {
 	for i, x := range v {
 		if x *= factor; x != 0 {
-			for j, y := range v {
-				c[i*n+j] += x * y
+			row := c[i*n : i*n+i+1]
+			for j, y := range v[:len(row)] {
+				row[j] += x * y
 			}
 		}
 	}

@@ -42,8 +42,8 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	degrees := min(8+int(math.Ceil(k)), maxAlong)
 	loads := min(8+int(k/3), degrees)
 	across := min(2+int(k*width/2), 5) // at least 1 and linear
-	x, wx := legendre(across + 3)
-	y, wy := legendre(degrees + 12)
+	x, wx := legendre(across + 1)
+	y, wy := legendre(degrees + 8)
 	along := vanishing(degrees, y, wy)
 	half, sum := make([]float64, len(x)), 0.0
 	for i, v := range x {
@@ -79,7 +79,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 					straight[i*len(y)+j] = wx[i] / 2 * linear(d, x[i]) * q
 				}
 			}
-			f := functional{patch: -1, mass: s.Mass, degree: l, order: d, load: d <= 1 && l < loads}
+			f := functional{patch: -1, mass: s.Mass, degree: l, order: d, load: d <= 1 && l < loads/(1+d)}
 			a.list, a.weights = append(a.list, f), append(a.weights, row)
 			if d <= 1 {
 				a.strip.weights = append(a.strip.weights, straight)

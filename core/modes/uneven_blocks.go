@@ -4,6 +4,8 @@ import (
 	"cmp"
 	"math"
 	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // unevenSystem is the eigenproblem of a diaphragm whose orders are coupled by a
@@ -231,7 +233,7 @@ func (b *unevenBlock) solve() {
 		for i := range place {
 			place[i] = i
 		}
-		slices.SortFunc(place, func(i, j int) int { return cmp.Compare(b.matrix[i*n+i], b.matrix[j*n+j]) })
+		sorting.By(place, func(i, j int) int { return cmp.Compare(b.matrix[i*n+i], b.matrix[j*n+j]) })
 		for k := range b.values {
 			b.values[k] = b.matrix[place[k]*n+place[k]]
 			b.vectors[k*n+place[k]] = 1
@@ -248,7 +250,7 @@ func (b *unevenBlock) solve() {
 		congruent(c, l, n)
 	}
 	// The lowest are wanted, so the matrix is turned over: top - A. That rounds
-	// to eps top, so the values are taken anew from the vectors.
+	// to eps top, so the lowest values are taken anew from the vectors.
 	top := 0.0 // Gershgorin's bound
 	for i := range n {
 		sum := 0.0
@@ -268,6 +270,10 @@ func (b *unevenBlock) solve() {
 		v := b.vectors[k*n : (k+1)*n]
 		if l != nil {
 			backward(l, n, v)
+		}
+		b.values[k] = top - b.values[k]
+		if b.values[k] > 1e-3*top {
+			continue
 		}
 		b.values[k] = bilinear(b.matrix, n, v)
 		if l != nil {

@@ -6,6 +6,7 @@ import (
 	"slices"
 
 	"hoopsheet/core/disc"
+	"hoopsheet/core/internal/sorting"
 )
 
 // CoupledMode is one mode of a diaphragm whose orders are coupled.
@@ -61,7 +62,7 @@ func (s *unevenSystem) modes() []rawMode {
 			list = append(list, rawMode{value: v, vector: vector, change: s.truncation(vector, v, len(b.nodes))})
 		}
 	}
-	slices.SortStableFunc(list, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
+	sorting.By(list, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
 	return list
 }
 
@@ -122,7 +123,7 @@ func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
 			}
 		}
 	}
-	slices.SortStableFunc(claims, func(a, b claim) int { return cmp.Compare(b.share, a.share) })
+	sorting.By(claims, func(a, b claim) int { return cmp.Compare(b.share, a.share) })
 	taken := map[[2]int][]int{} // modes by order and function
 	labelled := make([]bool, len(raw))
 	shares := make([]float64, len(raw))
@@ -154,7 +155,7 @@ func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
 			}
 		}
 	}
-	slices.SortStableFunc(free, func(a, b slot) int {
+	sorting.By(free, func(a, b slot) int {
 		return cmp.Compare(s.orders[a.order].omega[a.n], s.orders[b.order].omega[b.n])
 	})
 	for k := range raw {
@@ -183,7 +184,7 @@ func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
 			list = append(list, mode)
 		}
 	}
-	slices.SortFunc(list, func(a, b CoupledMode) int {
+	sorting.By(list, func(a, b CoupledMode) int {
 		return cmp.Or(cmp.Compare(a.Frequency, b.Frequency), cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N))
 	})
 	return list
