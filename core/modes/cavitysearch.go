@@ -201,11 +201,11 @@ func turnToUnit(y []complex128) {
 	}
 }
 
-// addCavity puts a cavity behind one face of the order.
-func (o *wetOrder) addCavity(f Face) {
-	a := o.radius
+// addCavity puts a cavity of radius a behind one face of the order, whose sheet
+// moves on a disc of radius a (1 - edge).
+func (o *wetOrder) addCavity(f Face, a, edge float64) {
 	c := &cavityFace{
-		modes: o.tables.radialModes(), density: f.Density * a * a * a,
+		modes: o.tables.radialModes().shrunk(edge), density: f.Density * a * a * a,
 		reach: a / f.SoundSpeed, depth: f.Depth / a, live: o.tables.n,
 	}
 	if f.Vent != nil && f.Vent.Area > 0 && o.m == 0 {

@@ -22,6 +22,9 @@ type cavityTable struct {
 	n    int
 	k    []float64 // k_q; for m = 0 the first is 0, the piston
 	part []float64 // row q: integral u_j J_m(k_q r) r dr / norm, n to a row
+	// slope is what part gains when the sheet moves on a disc of radius 1 - e in a
+	// cavity of radius 1, over e.
+	slope []float64
 	// What lies beyond the last mode starts at the wave number last and is the
 	// multiple beyond of that of a cavity.
 	last, beyond float64
@@ -35,7 +38,7 @@ func (t *fluidTables) radialModes() *cavityTable {
 	if t.cavity != nil {
 		return t.cavity
 	}
-	c := &cavityTable{n: t.n, beyond: 1, part: make([]float64, cavityModes*t.n)}
+	c := &cavityTable{n: t.n, beyond: 1, part: make([]float64, cavityModes*t.n), slope: make([]float64, cavityModes*t.n)}
 	zeros := make([]float64, cavityModes)
 	if t.m == 0 {
 		zeros = zeros[1:]
@@ -44,10 +47,10 @@ func (t *fluidTables) radialModes() *cavityTable {
 	if t.m == 0 {
 		// J_2(k)/k^2 is 1/8 at k = 0, and the norm of 1 is 1/2.
 		c.k = append(c.k, 0)
-		c.part[0] = math.Sqrt2 / 8
+		c.part[0], c.slope[0] = math.Sqrt2/8, -2*math.Sqrt2/8
 	}
 	c.k = append(c.k, zeros...)
-	values := make([]float64, t.m+2*t.n+1)
+	values := make([]float64, t.m+2*t.n+2)
 	for q, k := range c.k {
 		if k == 0 {
 			continue
@@ -60,7 +63,10 @@ func (t *fluidTables) radialModes() *cavityTable {
 		f := 1 / (k * k * math.Sqrt((1-m/k)*(1+m/k)/2) * math.Abs(v))
 		row := c.part[q*t.n : (q+1)*t.n]
 		for j := range row {
-			row[j] = f * values[t.m+2*j+2]
+			// (1-e)^2 U(k(1-e)) = U - e (2U + kU'), and 2U + kU' = J_b'(k)/k.
+			b := t.m + 2*j + 2
+			row[j] = f * values[b]
+			c.slope[q*t.n+j] = -f * k * (values[b-1] - values[b+1]) / 2
 		}
 	}
 	c.last = c.k[len(c.k)-1] + math.Pi/2
@@ -116,4 +122,17 @@ func cothSeries(k, l float64) [4]float64 {
 	d3 := (u*(6*c*c-2) + 12*c*u/x + 15*u/(x*x) - 15*c/math.Pow(x, 3)) / math.Pow(x, 4)
 	h := l * l / 2
 	return [4]float64{l * g, -l * h * d1, l * h * h * d2 / 2, -l * h * h * h * d3 / 6}
+}
+
+// shrunk returns the table for a sheet that moves on a disc of radius 1 - e.
+func (c *cavityTable) shrunk(e float64) *cavityTable {
+	if e == 0 {
+		return c
+	}
+	out := *c
+	out.part = make([]float64, len(c.part))
+	for i, v := range c.part {
+		out.part[i] = v + e*c.slope[i]
+	}
+	return &out
 }

@@ -7,6 +7,7 @@ import (
 	"slices"
 
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/internal/sorting"
 )
 
 // Real is a diaphragm as it stands, in SI units.
@@ -114,7 +115,7 @@ func Solve(real Real, request Request) (*Solution, error) {
 	if beyond {
 		s.Notes = append(s.Notes, NoteBeyondSound)
 	}
-	slices.SortStableFunc(s.Modes, func(a, b RealMode) int { return cmp.Compare(a.Frequency, b.Frequency) })
+	sorting.By(s.Modes, func(a, b RealMode) int { return cmp.Compare(a.Frequency, b.Frequency) })
 	if request.MaxFrequency > 0 {
 		s.Modes = slices.DeleteFunc(s.Modes, func(m RealMode) bool { return m.Frequency > request.MaxFrequency })
 	}
@@ -133,7 +134,7 @@ type candidate struct {
 // complete returns the lowest frequency of the modes left out, Hz.
 func (p *wetPlan) complete(left []candidate) float64 {
 	lowest := math.Inf(1)
-	slices.SortFunc(left, func(a, b candidate) int { return cmp.Compare(real(b.mode.theta), real(a.mode.theta)) })
+	sorting.By(left, func(a, b candidate) int { return cmp.Compare(real(b.mode.theta), real(a.mode.theta)) })
 	for i, c := range left {
 		// Sound moves a mode of an open or baffled face by some percent, so the
 		// next two above the lowest in still fluid are looked at as well.

@@ -14,8 +14,9 @@ type RealMode struct {
 	// M nodal diameters; N is the place within the order, lowest first, which is
 	// the number of nodal circles counting the rim.
 	M, N int
-	// Frequency of the damped oscillation, Hz; Error, Hz, is what leaving out the
-	// last few shapes would change.
+	// Frequency of the damped oscillation, Hz. Error, Hz, is what leaving out the
+	// last four shapes would change, and what taking a clamped edge as a smaller
+	// ring may.
 	Frequency, Error float64
 	// Ideal is the frequency of the ideal sheet in vacuum, Hz.
 	Ideal float64
@@ -48,8 +49,9 @@ type RealMode struct {
 func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 	r := p.real
 	mode := RealMode{M: o.m, N: n, inner: p.radius / r.Radius}
+	zero := bessel.ZeroJ(float64(o.m), n)
 	if r.Tension > 0 {
-		mode.Ideal = bessel.ZeroJ(float64(o.m), n) * math.Sqrt(r.Tension/r.ArealDensity) / (2 * math.Pi * r.Radius)
+		mode.Ideal = zero * math.Sqrt(r.Tension/r.ArealDensity) / (2 * math.Pi * r.Radius)
 	}
 	if o.moving() {
 		if p.soundNumber(real(w.omega())) > MaxSoundNumber {
@@ -69,7 +71,7 @@ func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 		mode.FilmShare = real(1 / (1 - w.slope))
 	}
 	mode.SoundNumber = p.soundNumber(omega)
-	mode.Error = mode.Frequency * (o.truncation(w, 4)/2 + w.change)
+	mode.Error = mode.Frequency * (o.truncation(w, 4)/2 + w.change + p.edgeError(zero))
 	mode.coef = o.realPart(w)
 	peak := o.peak(mode.coef)
 	for i := range mode.coef {

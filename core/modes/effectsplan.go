@@ -57,6 +57,16 @@ func (p *wetPlan) edge() float64 {
 	return math.Sqrt(p.real.Stiffness/p.real.Tension) / p.real.Radius
 }
 
+// edgeError bounds the relative error of a frequency from taking a clamped edge
+// as a smaller ring, for zero j_mn of the ideal sheet (TestThinEdge).
+func (p *wetPlan) edgeError(zero float64) float64 {
+	if !p.thin {
+		return 0
+	}
+	e := p.edge()
+	return e * e * (10 + zero*zero/8)
+}
+
 // shapes returns how many shapes the first count modes of order m take.
 func (p *wetPlan) shapes(m, count int) int {
 	// A mode n has a polynomial of degree m + 2j; 2 count + 6 + m/6 shapes leave
@@ -94,6 +104,10 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 	}
 	open := false
 	liveTables := tablesOf(m, live)
+	edge := 0.0
+	if p.thin {
+		edge = p.edge()
+	}
 	for _, f := range p.faces {
 		reach := 0.0
 		if p.effects.Sound && !math.IsInf(f.SoundSpeed, 1) {
@@ -108,11 +122,14 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 			o.faces = append(o.faces, &baffledFace{tables: o.tables, live: liveTables, density: f.Density * a * a * a, reach: reach})
 		case diaphragm.FaceOpen:
 			if !open { // one for both sides
-				open = true
-				o.faces = append(o.faces, &openFaces{tables: o.tables, live: liveTables, density: f.Density * a * a * a, reach: reach})
+				open, o.open = true, true
+				b := r.Radius
+				o.faces = append(o.faces, &openFaces{
+					tables: o.tables, live: liveTables, edge: edge, density: f.Density * b * b * b, reach: reach * b / a,
+				})
 			}
 		case diaphragm.FaceCavity:
-			o.addCavity(f)
+			o.addCavity(f, r.Radius, edge)
 		}
 	}
 	return o
