@@ -107,7 +107,7 @@ export class HoopHandover extends LitElement {
     }
     const bench = session.recall('tap', emptyBench());
     const peaks = bench.peaks.map(asPeak).filter((p) => p.use);
-    const address = session.linkAddress || pageHref('hand-over').split('#')[0]?.split('?')[0] || '';
+    const address = session.linkAddress || ownAddress();
     const key = JSON.stringify([document, peaks, address]);
     if (key === this.asked) {
       return;
@@ -194,4 +194,12 @@ export class HoopHandover extends LitElement {
       </section>
       ${handOverView(sending.page, false)}`;
   }
+}
+
+/** Address of this page, of the file where it is the single one: without query and fragment. */
+function ownAddress(): string {
+  const url = new URL(pageHref('hand-over'), location.href);
+  url.search = '';
+  url.hash = '';
+  return url.href;
 }
