@@ -85,10 +85,10 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 	d := p.Distance / radius
 	a := &attachment{patch: &p, centre: complex(d*cos, d*sin), size: size}
 	// A plane wave of wave number k has Zernike coefficients falling like
-	// (k size/2)^n/n!, below 1e-8 for n = 4 + 1.5 k size where k size < 30. What
+	// (k size/2)^n/n!, whose square is below 1e-7 from n = 4 + 1.5 k size on. What
 	// loads the sheet is the inertia of long waves, so fewer are needed there; and
 	// a rigid patch is held by no more than what loads it.
-	top := min(4+int(math.Ceil(1.5*k*size)), 14)
+	top := min(3+int(math.Ceil(1.5*k*size)), 14)
 	loads := min(3+int(k*size/2), 8)
 	if p.Rigid {
 		top = loads

@@ -77,42 +77,70 @@ func (a *attachment) staticBetween(b *attachment) []float64 {
 	})
 }
 
+// circlePoints returns how many points on the rim of a patch take a kernel whose
+// Fourier terms fall like ratio^l to 1e-12.
+func circlePoints(ratio float64, top int) int {
+	points := 16
+	for points < 128 && (math.Pow(ratio, float64(points-top)) > 1e-12 || points < 2*top+2) {
+		points *= 2
+	}
+	return points
+}
+
 // harmonicPart applies the functionals of a and b to a kernel that is harmonic
 // in both places.
 func (a *attachment) harmonicPart(b *attachment, kernel func(z, w complex128) float64) []float64 {
 	// Such a kernel is sum c s^l s'^l' cos l phi cos l' phi' and so on; Fourier
 	// sums along the rims of the patches give c. They converge geometrically,
-	// slowly only where a rim all but touches another.
-	const points = 64
+	// slowly only where a rim all but touches another or the image of one.
 	top := 0
 	for _, f := range append(append([]functional{}, a.list...), b.list...) {
 		top = max(top, f.order)
 	}
-	var turn [points]complex128
+	away := math.Inf(1) // of the image of b from the middle of a, less its radius
+	if d := cmplx.Abs(b.centre) + b.size; d > 0 {
+		away = 1/d - cmplx.Abs(a.centre)
+	}
+	if a != b {
+		away = math.Min(away, cmplx.Abs(a.centre-b.centre)-math.Max(a.size, b.size))
+	}
+	points := circlePoints(math.Max(a.size, b.size)/away, top)
+	turn := make([]complex128, points)
 	for i := range turn {
-		turn[i] = cmplx.Rect(1, 2*math.Pi*float64(i)/points)
+		turn[i] = cmplx.Rect(1, 2*math.Pi*float64(i)/float64(points))
 	}
 	// By row: sums over w of kernel times conj(turn)^l.
 	inner := make([]complex128, points*(top+1))
 	for i, u := range turn {
 		z := a.centre + complex(a.size, 0)*u
 		for j, v := range turn {
-			k := complex(kernel(z, b.centre+complex(b.size, 0)*v)/points, 0)
+			k := complex(kernel(z, b.centre+complex(b.size, 0)*v)/float64(points), 0)
 			for l := range top + 1 {
 				inner[i*(top+1)+l] += k * cmplx.Conj(turn[j*l%points])
 			}
 		}
 	}
-	at := func(f functional, l int, get func(int) float64) float64 {
+	// And over z: outer[l, l'] by cosine and sine of a.
+	outer := func(f, g functional) float64 {
 		sum := 0.0
 		for i := range points {
-			c := real(turn[i*l%points])
-			if f.sine {
-				c = imag(turn[i*l%points])
+			v := inner[i*(top+1)+g.order]
+			x := real(v)
+			if g.sine {
+				x = -imag(v)
 			}
-			sum += c * get(i) / points
+			c := turn[i*f.order%points]
+			if f.sine {
+				sum += imag(c) * x
+			} else {
+				sum += real(c) * x
+			}
 		}
-		if l > 0 {
+		sum /= float64(points)
+		if f.order > 0 {
+			sum *= 2
+		}
+		if g.order > 0 {
 			sum *= 2
 		}
 		return sum
@@ -120,24 +148,10 @@ func (a *attachment) harmonicPart(b *attachment, kernel func(z, w complex128) fl
 	n := len(b.list)
 	x := make([]float64, len(a.list)*n)
 	for j, g := range b.list {
-		weight := g.onHarmonic()
-		if weight == 0 {
-			continue
-		}
-		if g.order > 0 {
-			weight *= 2
-		}
 		for i, f := range a.list {
-			if f.onHarmonic() == 0 {
-				continue
+			if weight := f.onHarmonic() * g.onHarmonic(); weight != 0 {
+				x[i*n+j] = weight * outer(f, g)
 			}
-			x[i*n+j] = weight * f.onHarmonic() * at(f, f.order, func(p int) float64 {
-				v := inner[p*(top+1)+g.order]
-				if g.sine {
-					return -imag(v)
-				}
-				return real(v)
-			})
 		}
 	}
 	return x

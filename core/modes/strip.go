@@ -41,6 +41,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	// k; the modes with the longest waves are resolved best.
 	degrees := min(8+int(math.Ceil(k)), maxAlong)
 	loads := min(8+int(k/3), degrees)
+	a.strip.loads = loads
 	across := min(2+int(k*width/2), 5) // at least 1 and linear
 	x, wx := legendre(across + 1)
 	y, wy := legendre(degrees + 8)
@@ -69,21 +70,28 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 			a.strip.r, a.strip.t = append(a.strip.r, r), append(a.strip.t, t)
 		}
 	}
-	for d, shape := range orthonormal(across, x, measure) {
+	// Lines along the strip first, then their combinations across it.
+	for i := range x {
 		for l := range degrees {
-			row, straight := make([]float64, len(a.r)), make([]float64, len(a.r))
-			for i := range x {
-				for j := range y {
-					q := wy[j] / 2 * along[l][j]
-					row[i*len(y)+j] = measure[i] * shape[i] * q
-					straight[i*len(y)+j] = wx[i] / 2 * linear(d, x[i]) * q
-				}
+			row := make([]float64, len(a.r))
+			for j := range y {
+				row[i*len(y)+j] = wy[j] / 2 * along[l][j]
 			}
+			a.weights = append(a.weights, row)
+		}
+	}
+	for d, shape := range orthonormal(across, x, measure) {
+		mix, straight := make([]float64, len(x)), make([]float64, len(x))
+		for i := range x {
+			mix[i], straight[i] = measure[i]*shape[i], wx[i]/2*linear(d, x[i])
+		}
+		a.strip.mix = append(a.strip.mix, mix)
+		if d <= 1 {
+			a.strip.square = append(a.strip.square, straight)
+		}
+		for l := range degrees {
 			f := functional{patch: -1, mass: s.Mass, degree: l, order: d, load: d <= 1 && l < loads/(1+d)}
-			a.list, a.weights = append(a.list, f), append(a.weights, row)
-			if d <= 1 {
-				a.strip.weights = append(a.strip.weights, straight)
-			}
+			a.list = append(a.list, f)
 		}
 	}
 	a.strip.nodes, a.strip.along = y, along
@@ -151,8 +159,9 @@ func orthonormal(count int, x, w []float64) [][]float64 {
 // that the functions of the sheet do not express.
 type stripLine struct {
 	width, middle, half float64
-	r, t                []float64
-	weights             [][]float64
+	loads               int         // how many of the polynomials along it load the sheet
+	r, t                []float64   // the points, with square ends
+	mix, square         [][]float64 // functionals from lines, by degree across; with square ends
 	nodes, measure      []float64
 	along               [][]float64 // polynomials at the nodes
 }
@@ -172,6 +181,7 @@ func (s *stripLine) staticSelf() []float64 {
 	n := len(s.along)
 	x := make([]float64, 4*n*n)
 	s.addFree(x)
+	s.mirror(x)
 	s.addImage(x)
 	return x
 }
@@ -204,14 +214,24 @@ func (s *stripLine) addFree(x []float64) {
 				for p := range a[k] {
 					a[k][p] *= weights[p] * (1 - u/2) * wg[j] * length / 4
 				}
-				for l := range n {
-					c := dot(a[k], b[l])
+				// Odd sums vanish when both ends are exchanged; and so the sum over
+				// k, l equals that over l, k. Only loads matter on one side.
+				for l := k % 2; l <= k && l < s.loads; l += 2 {
+					c := 2 * dot(a[k], b[l])
 					x[k*2*n+l] += c * even
-					x[l*2*n+k] += c * even
 					x[(n+k)*2*n+n+l] += c * odd
-					x[(n+l)*2*n+n+k] += c * odd
 				}
 			}
+		}
+	}
+}
+
+// mirror fills the entries above the diagonal of the part without the rim.
+func (s *stripLine) mirror(x []float64) {
+	n := len(s.along)
+	for k := range 2 * n {
+		for l := range k {
+			x[l*2*n+k] = x[k*2*n+l]
 		}
 	}
 }
@@ -220,7 +240,7 @@ func (s *stripLine) addFree(x []float64) {
 // vanish.
 func (s *stripLine) addImage(x []float64) {
 	n, m := len(s.along), len(s.nodes)
-	side, ws := legendre(4)
+	side, ws := legendre(3)
 	var image [2][2][]float64
 	for d := range 2 {
 		for e := range 2 {

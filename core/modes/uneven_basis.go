@@ -16,7 +16,7 @@ type coupledOrder struct {
 	// coef are disc.HeldEdge coefficients, row by function, scaled to a modal
 	// mass of 1 kg over the whole disc, for cos m theta and sin m theta alike.
 	coef []float64
-	// listed functions come first: modes that are reported. Their damping:
+	// Solved modes come first, the listed ones of them are followed. Of the solved:
 	listed  int
 	damping []Damping
 	errors  []float64 // relative, of frequency
@@ -36,8 +36,9 @@ func circle(m int) float64 {
 
 func (o *coupledOrder) row(i int) []float64 { return o.coef[i*o.n : (i+1)*o.n] }
 
-// coupledOrders takes the orders of a solution apart.
-func (s *Solution) coupledOrders() []*coupledOrder {
+// coupledOrders takes the orders of a solution apart; modes up to a frequency, if
+// positive, are listed.
+func (s *Solution) coupledOrders(highest float64) []*coupledOrder {
 	listed := make([][]*RealMode, len(s.orders))
 	for i := range s.Modes {
 		mode := &s.Modes[i]
@@ -55,7 +56,11 @@ func (s *Solution) coupledOrders() []*coupledOrder {
 				break
 			}
 		}
-		orders[i] = newCoupledOrder(o, known)
+		c := newCoupledOrder(o, known)
+		for highest > 0 && c.listed > 0 && known[c.listed-1].Frequency > highest {
+			c.listed--
+		}
+		orders[i] = c
 	}
 	return orders
 }
@@ -77,7 +82,7 @@ func (o *coupledOrder) shortest() int {
 	if o.source.strain.scale == nil {
 		return o.source.strain.n
 	}
-	return min(o.source.strain.n, o.listed+6)
+	return min(o.source.strain.n, len(o.known)+6)
 }
 
 // fill sets the functions up in the first n shapes; fewer than there are only for

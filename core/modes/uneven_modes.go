@@ -12,7 +12,8 @@ import (
 // CoupledMode is one mode of a diaphragm whose orders are coupled.
 type CoupledMode struct {
 	// M and N of the even mode it descends from: the one with the largest share
-	// of its energy, each even mode being given away once and a pair twice.
+	// of its energy, each even mode being given away once and a pair twice. A mode
+	// mixed too much for that (see Share) takes a label left over, by frequency.
 	M, N int
 	// Upper marks the higher of a pair.
 	Upper bool
