@@ -95,6 +95,14 @@ func (f *cavityFace) moving() bool { return true }
 
 // mobility returns the mass per area over density of radial mode q at k0.
 func (f *cavityFace) mobility(q int, k0, omega complex128) complex128 {
+	if k, x := f.modes.k[q], real(k0); imag(k0) == 0 && (k > 0 || !f.vented) && k != x {
+		if k > x {
+			kappa := math.Sqrt((k - x) * (k + x))
+			return complex(1/(kappa*math.Tanh(kappa*f.depth)), 0)
+		}
+		kappa := math.Sqrt((x - k) * (x + k))
+		return complex(-1/(kappa*math.Tan(kappa*f.depth)), 0)
+	}
 	k := complex(f.modes.k[q], 0)
 	kappa := cmplx.Sqrt((k - k0) * (k + k0))
 	l := complex(f.depth, 0)

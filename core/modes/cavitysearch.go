@@ -89,12 +89,12 @@ func (s *cavitySearch) fromRest(count int) ([]wetMode, bool) {
 	for k := range modes {
 		mode := s.lossless(s.o.still(k))
 		w := real(mode.omega())
-		if !mode.good || mode.change > 1e-9 || w <= before*(1+1e-9) || math.Abs(imag(mode.omega())) > 1e-9*w {
+		if !mode.good || mode.change > 2*roughEnd || w <= before*(1+1e-6) || math.Abs(imag(mode.omega())) > 1e-9*w {
 			return nil, false
 		}
 		modes[k], before = mode, w
 	}
-	found, _ := s.below(before * (1 + 1e-10))
+	found, _ := s.below(before * (1 + 1e-6))
 	return modes, found == count
 }
 
@@ -166,7 +166,7 @@ func (s *cavitySearch) polish(a, b float64) (wetMode, bool) {
 	}
 	mode := s.lossless(wetMode{theta: theta, y: y, good: true})
 	w := real(mode.omega())
-	return mode, mode.good && mode.change < 1e-9 && w > a && w < b && math.Abs(imag(mode.omega())) < 1e-9*w
+	return mode, mode.good && mode.change < 2*roughEnd && w > a && w < b && math.Abs(imag(mode.omega())) < 1e-9*w
 }
 
 // lossless solves for a mode from a start, other faces still, a vent without
@@ -174,9 +174,16 @@ func (s *cavitySearch) polish(a, b float64) (wetMode, bool) {
 func (s *cavitySearch) lossless(start wetMode) wetMode {
 	resistance := s.o.quiet()
 	defer s.o.loud(resistance)
-	mode, _ := s.o.iterate(start)
+	end := iterateEnd
+	if resistance > 0 || s.o.moving() {
+		end = roughEnd // losses are still to come
+	}
+	mode, _ := s.o.iterate(start, end)
 	return mode
 }
+
+// roughEnd is the error of a start for what follows.
+const roughEnd = 1e-7
 
 // quiet takes losses away and returns the resistance for loud to put back.
 func (o *wetOrder) quiet() float64 {

@@ -11,8 +11,8 @@ import (
 
 // RealMode is one mode of a diaphragm as it stands, or one degenerate pair.
 type RealMode struct {
-	// M nodal diameters; N is the place within the order, lowest first, which is
-	// the number of nodal circles counting the rim.
+	// M nodal diameters; N is the place within the order, lowest first. Without a
+	// cavity that is the number of nodal circles counting the rim.
 	M, N int
 	// Frequency of the damped oscillation, Hz. Error, Hz, is what leaving out the
 	// last four shapes would change, and what taking a clamped edge as a smaller
