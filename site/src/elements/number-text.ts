@@ -11,9 +11,10 @@ export function figure(value: number, digits = 4): string {
   const size = Math.abs(value);
   if (size >= 1e6 || size < 1e-4) {
     const [mantissa, exponent] = value.toExponential(digits - 1).split('e');
-    return `${mantissa} × 10${superscript(Number(exponent))}`;
+    return `${mantissa?.replace('-', '−')} × 10${superscript(Number(exponent))}`;
   }
-  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(size)));
+  // Of the rounded value: 999.96 to four digits is 1000, not 1000.0.
+  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(Number(size.toPrecision(digits)))));
   return value.toFixed(decimals).replace('-', '−');
 }
 
