@@ -40,9 +40,10 @@ type cavityFace struct {
 	live   int       // shapes whose change with frequency counts
 	most   float64   // the largest sound number the sums are ready for
 	exact  int       // radial modes that follow the frequency exactly
+	terms  int       // of tail in use
 	atRest []float64 // coth(k l)/k of each mode, none for the piston
 	still  []float64 // their matrix
-	tail   [3][]float64
+	tail   [cavityTerms - 1][]float64
 }
 
 // prepare sums what does not depend on frequency.
@@ -66,7 +67,7 @@ func (f *cavityFace) prepare() {
 
 // follow sets the largest sound number that the face has to follow.
 func (f *cavityFace) follow(most float64) {
-	f.most, f.exact = most, 1
+	f.most, f.exact, f.terms = most, 1, 0
 	for f.exact < len(f.modes.k) && f.modes.k[f.exact] < cavityAbove*most {
 		f.exact++
 	}
@@ -76,14 +77,18 @@ func (f *cavityFace) follow(most float64) {
 	}
 	for q := f.exact; q < len(f.modes.k); q++ {
 		k := f.modes.k[q]
+		largest := 0.0
+		for _, v := range f.modes.part[q*n : (q+1)*n] {
+			largest = math.Max(largest, v*v)
+		}
 		series := cothSeries(k, f.depth)
-		size := most * most
 		for p, v := range series[1:] {
-			if v*size < 1e-14 {
-				break // of the first entry of the matrix, about 0.03, times 1/k^3
+			largest *= most * most
+			if v*largest < 1e-15 {
+				break // the first entry of the matrix is about 0.03
 			}
-			size *= most * most
 			f.modes.addMode(f.tail[p], q, v, f.live)
+			f.terms = max(f.terms, p+1)
 		}
 	}
 }
@@ -134,7 +139,7 @@ func (f *cavityFace) dynamic(re, im []float64, omega complex128) bool {
 	z := k0 * k0
 	power := complex(f.density, 0)
 	n := f.modes.n
-	for _, x := range f.tail {
+	for _, x := range f.tail[:f.terms] {
 		power *= z
 		a, b := real(power), imag(power)
 		for i := range f.live {

@@ -223,3 +223,28 @@ func TestCavityVent(t *testing.T) {
 		t.Errorf("damping ratio %.6g, want %.6g", mode.Damping.Radiation, wantZeta)
 	}
 }
+
+func TestCothSeries(t *testing.T) {
+	// The series against the function, at |z| = (k/cavityAbove)^2 of either sign,
+	// and to each side of the switch at k l = 20.
+	for _, k := range []float64{0.3, 2, 30} {
+		for _, x := range []float64{0.001, 0.1, 1, 5, 19.99, 20.01, 200} {
+			l := x / k
+			g := cothSeries(k, l)
+			for _, sign := range []float64{1, -1} {
+				z := sign * k * k / (cavityAbove * cavityAbove)
+				sum, power := 0.0, 1.0
+				for _, v := range g {
+					sum += v * power
+					power *= z
+				}
+				kappa := math.Sqrt(k*k - z)
+				want := 1 / (kappa * math.Tanh(kappa*l))
+				// What is left out is at most 2 x 16^-9 = 3e-11 (1/kappa^2 for small x).
+				if math.Abs(sum-want) > 4e-11*want {
+					t.Errorf("k %v, kl %v, z %v: %.14g, want %.14g", k, x, z, sum, want)
+				}
+			}
+		}
+	}
+}
