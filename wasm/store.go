@@ -100,6 +100,6 @@ func (s *store) answer(ctx context.Context, name string, request []byte, blobs [
 }
 
 // stampTime is the present time as it is stored.
-func (s *store) stampTime() string { return s.now().UTC().Format(time.RFC3339) }
+func (s *store) stampTime() string { return diaphragm.FormatTime(s.now().Unix()) }
 
 func (s *store) newID() (string, error) { return diaphragm.NewID(s.now(), s.random) }

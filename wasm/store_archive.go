@@ -54,7 +54,7 @@ func (s *store) export(*engine.NoRequest) (*engine.ArchiveFile, error) {
 	if err != nil {
 		return nil, err
 	}
-	return &engine.ArchiveFile{Name: "hoopsheet-" + s.now().UTC().Format("2006-01-02") + ".zip", File: engine.Blob{Bytes: data}}, nil
+	return &engine.ArchiveFile{Name: "hoopsheet-" + diaphragm.FormatTime(s.now().Unix())[:len("2006-01-02")] + ".zip", File: engine.Blob{Bytes: data}}, nil
 }
 
 // archiveEntry is a record with its revisions and taps.

@@ -5,7 +5,6 @@ import (
 	"encoding/json"
 	"math"
 	"strconv"
-	"time"
 )
 
 // The hand-over file: JSON with these two members before those of Parcel.
@@ -137,7 +136,7 @@ func checkParcel(p Parcel, what, verb string) error {
 		}
 	}
 	for _, when := range []string{p.Tapped, p.Sent} {
-		if _, err := time.Parse(time.RFC3339, when); when != "" && err != nil {
+		if when != "" && !ValidTime(when) {
 			return refuse("parcel", CodeUnreadable, what+verb+"it holds "+shorten(when, "nothing")+", which is not a time.")
 		}
 	}

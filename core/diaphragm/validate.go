@@ -3,7 +3,6 @@ package diaphragm
 import (
 	"strconv"
 	"strings"
-	"time"
 	"unicode"
 	"unicode/utf8"
 
@@ -83,7 +82,7 @@ func identityProblems(doc Diaphragm) []Problem {
 	if doc.ID != "" && !soundID(doc.ID) {
 		add("id", CodeText, "The document's id must be 1 to 64 letters, digits, - or _.")
 	}
-	if _, err := time.Parse(time.RFC3339, doc.Created); doc.Created != "" && err != nil {
+	if doc.Created != "" && !ValidTime(doc.Created) {
 		add("created", CodeText, "The time of creation must be written like 2031-05-17T09:30:00Z.")
 	}
 	if doc.Revision < 0 || doc.Revision > 1e9 {

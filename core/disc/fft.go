@@ -2,14 +2,15 @@ package disc
 
 import "math"
 
-// angleFFT is the real Fourier transform along one circle of a polar grid. It
-// is written for the two things a disc transform needs and a general library
-// does not offer: only the orders 0..M of the spectrum are formed, and the
-// loops are short and flat enough to run well as WebAssembly. Its results are
-// held against gonum's dsp/fourier by TestFFTAgainstGonum.
+// RealFFT is the Fourier transform of n real samples, along one circle of a
+// polar grid or of a recording. The loops are short and flat enough to run well
+// as WebAssembly, and only as much of the spectrum is formed as is asked for.
+// Its results are held against gonum's dsp/fourier by TestFFTAgainstGonum. One
+// RealFFT serves one goroutine at a time.
 //
-// The length n is even and n/2 has no prime factor above 5.
-type angleFFT struct {
+// The length n is even and n/2 has no prime factor above 5; NewRealFFT panics
+// otherwise.
+type RealFFT struct {
 	n      int          // samples on the circle
 	stages []fftStage   // factors of n/2
 	rot    []complex128 // exp(-2 pi i k/n), k = 0..n/2
@@ -23,7 +24,7 @@ type fftStage struct {
 	tw      []complex128 // (r-1) per group
 }
 
-// smoothEven reports whether n is a length that angleFFT takes.
+// smoothEven reports whether n is a length that RealFFT takes.
 func smoothEven(n int) bool {
 	if n < 2 || n%2 != 0 {
 		return false
@@ -37,12 +38,13 @@ func smoothEven(n int) bool {
 	return n == 1
 }
 
-func newAngleFFT(n int) *angleFFT {
+// NewRealFFT prepares the transform of n samples.
+func NewRealFFT(n int) *RealFFT {
 	if !smoothEven(n) {
 		panic(errAngles)
 	}
 	h := n / 2
-	f := &angleFFT{
+	f := &RealFFT{
 		n:   n,
 		rot: make([]complex128, h+1),
 		a:   make([]complex128, h),
@@ -96,9 +98,9 @@ func unitRoot(k, n int) complex128 {
 	return complex(re, -im)
 }
 
-// forward writes sum_j row[j] exp(-i k theta_j), k = 0..len(dst)-1, to dst.
+// Forward writes sum_j row[j] exp(-i k theta_j), k = 0..len(dst)-1, to dst.
 // len(row) = n and len(dst) <= n/2+1.
-func (f *angleFFT) forward(dst []complex128, row []float64) {
+func (f *RealFFT) Forward(dst []complex128, row []float64) {
 	h := f.n / 2
 	a := f.a
 	row = row[:2*len(a)]
@@ -121,9 +123,9 @@ func (f *angleFFT) forward(dst []complex128, row []float64) {
 	}
 }
 
-// inverse writes src[0] + 2 Re sum_{k>=1} src[k] exp(i k theta_j) to row.
+// Inverse writes src[0] + 2 Re sum_{k>=1} src[k] exp(i k theta_j) to row.
 // len(row) = n and len(src) <= n/2; the imaginary part of src[0] is ignored.
-func (f *angleFFT) inverse(row []float64, src []complex128) {
+func (f *RealFFT) Inverse(row []float64, src []complex128) {
 	h := f.n / 2
 	a := f.a
 	clear(a)
@@ -148,7 +150,7 @@ func (f *angleFFT) inverse(row []float64, src []complex128) {
 }
 
 // run transforms f.a and returns the slice that holds the result (f.a or f.b).
-func (f *angleFFT) run() []complex128 {
+func (f *RealFFT) run() []complex128 {
 	// Stockham's self-sorting form: C. Van Loan, Computational Frameworks for
 	// the Fast Fourier Transform, SIAM 1992, section 1.7,
 	// doi:10.1137/1.9781611970999.

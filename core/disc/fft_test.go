@@ -23,7 +23,7 @@ func fftTol(n int) float64 {
 func TestFFTAgainstGonum(t *testing.T) {
 	rng := rand.New(rand.NewPCG(1, 2))
 	for _, n := range fftLengths {
-		f := newAngleFFT(n)
+		f := NewRealFFT(n)
 		g := fourier.NewFFT(n)
 		row := make([]float64, n)
 		var norm float64
@@ -35,7 +35,7 @@ func TestFFTAgainstGonum(t *testing.T) {
 		want := g.Coefficients(nil, row)
 		for _, m := range []int{1, n/4 + 1, n / 2, n/2 + 1} {
 			got := make([]complex128, m)
-			f.forward(got, row)
+			f.Forward(got, row)
 			for k := range got {
 				if d := cmplx.Abs(got[k] - want[k]); d > fftTol(n)*norm*math.Sqrt(2) {
 					t.Errorf("n=%d k=%d: got %v want %v", n, k, got[k], want[k])
@@ -57,7 +57,7 @@ func TestFFTAgainstGonum(t *testing.T) {
 			full[0] = complex(real(full[0]), 0)
 			want := g.Sequence(nil, full)
 			got := make([]float64, n)
-			f.inverse(got, src)
+			f.Inverse(got, src)
 			for j := range got {
 				if d := math.Abs(got[j] - want[j]); d > fftTol(n)*math.Sqrt(norm)*math.Sqrt(float64(n)) {
 					t.Errorf("inverse n=%d m=%d j=%d: got %v want %v", n, m, j, got[j], want[j])
@@ -89,7 +89,7 @@ func TestUnitRoot(t *testing.T) {
 }
 
 func BenchmarkFFT512(b *testing.B) {
-	f := newAngleFFT(512)
+	f := NewRealFFT(512)
 	row := make([]float64, 512)
 	for i := range row {
 		row[i] = float64(i % 7)
@@ -97,12 +97,12 @@ func BenchmarkFFT512(b *testing.B) {
 	dst := make([]complex128, 65)
 	b.Run("forward", func(b *testing.B) {
 		for range b.N {
-			f.forward(dst, row)
+			f.Forward(dst, row)
 		}
 	})
 	b.Run("inverse", func(b *testing.B) {
 		for range b.N {
-			f.inverse(row, dst)
+			f.Inverse(row, dst)
 		}
 	})
 }

@@ -11,7 +11,7 @@ type Table struct {
 	NTheta int       // angles theta_k = 2 pi k / NTheta
 
 	radial *radialTable
-	fft    *angleFFT
+	fft    *RealFFT
 	orders []pair       // (M+1) rows of stride values: one order on all radii
 	stride int          // nr and a little more, see newTable
 	line   []complex128 // one circle's spectrum
@@ -33,7 +33,7 @@ func newTable(b *Basis, radii []float64, ntheta int, f radialFunc) *Table {
 	if ntheta < 2*b.M+2 {
 		panic(errFewAngles)
 	}
-	fft := newAngleFFT(ntheta)
+	fft := NewRealFFT(ntheta)
 	// A stride that is a multiple of a large power of two would put the same
 	// radius of every order in the same few cache lines; three more pairs keep
 	// them apart.
@@ -91,6 +91,6 @@ func (t *Table) Synthesise(dst, coef []float64) {
 			t.line[m] = complex(v.c, v.s)
 			at += t.stride
 		}
-		t.fft.inverse(dst[i*t.NTheta:(i+1)*t.NTheta], t.line)
+		t.fft.Inverse(dst[i*t.NTheta:(i+1)*t.NTheta], t.line)
 	}
 }

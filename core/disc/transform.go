@@ -112,7 +112,7 @@ func (t *Transform) angles(samples []float64) (energy, kept float64) {
 	inv := 1 / float64(nt)
 	for i, w := range g.W {
 		row := samples[i*nt : (i+1)*nt]
-		tab.fft.forward(tab.line, row)
+		tab.fft.Forward(tab.line, row)
 		var square, zero, sum float64
 		for _, x := range row {
 			square += x * x

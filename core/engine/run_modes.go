@@ -8,6 +8,7 @@ import (
 
 	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/internal/sorting"
 	"hoopsheet/core/modes"
 )
 
@@ -129,7 +130,7 @@ func distances(frequency float64, lines []diaphragm.Line) []Distance {
 			Clearance:     clearance,
 		})
 	}
-	slices.SortStableFunc(list, func(a, b Distance) int {
+	sorting.By(list, func(a, b Distance) int {
 		switch da, db := math.Abs(a.Relative), math.Abs(b.Relative); {
 		case da < db:
 			return -1

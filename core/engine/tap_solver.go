@@ -3,12 +3,12 @@ package engine
 import (
 	"cmp"
 	"math"
-	"slices"
 	"strconv"
 	"strings"
 
 	"hoopsheet/core/bessel"
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/internal/sorting"
 	"hoopsheet/core/modes"
 	"hoopsheet/core/tap"
 )
@@ -92,7 +92,7 @@ func tapModes(solution *modes.Solution) []tap.ModeFrequency {
 		}
 		list = append(list, f)
 	}
-	slices.SortStableFunc(list, func(a, b tap.ModeFrequency) int {
+	sorting.By(list, func(a, b tap.ModeFrequency) int {
 		return cmp.Or(cmp.Compare(a.M, b.M), cmp.Compare(a.Frequency, b.Frequency))
 	})
 	for i := range list {
@@ -138,7 +138,7 @@ func tapSpectrum(real modes.Real, effects modes.Effects, peaks []tap.Peak) (*tap
 			wanted.Include = append(wanted.Include, tap.ModeName{M: p.M, N: p.N})
 		}
 	}
-	slices.SortFunc(wanted.Include, func(a, b tap.ModeName) int { return cmp.Or(cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N)) })
+	sorting.By(wanted.Include, func(a, b tap.ModeName) int { return cmp.Or(cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N)) })
 	for _, name := range wanted.Include {
 		include.WriteString(strconv.Itoa(name.M) + " " + strconv.Itoa(name.N) + " ")
 	}

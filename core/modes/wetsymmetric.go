@@ -2,7 +2,8 @@ package modes
 
 import (
 	"math"
-	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // symmetric finds the largest eigenvalues of real symmetric matrices, with
@@ -198,7 +199,7 @@ func (s *symmetric) eigenvalues() {
 			e[l], e[m] = g, 0
 		}
 	}
-	slices.SortFunc(d, func(x, y float64) int {
+	sorting.By(d, func(x, y float64) int {
 		switch {
 		case x > y:
 			return -1

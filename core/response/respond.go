@@ -7,6 +7,7 @@ import (
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/disc"
+	"hoopsheet/core/internal/sorting"
 )
 
 // Motion is the answer to a Case.
@@ -214,7 +215,7 @@ func (mo *motion) strongest(whole float64, c *Case) []Share {
 			shares = append(shares, Share{M: k.m, N: k.n, Share: energy / whole, Frequency: k.omega * hertz})
 		}
 	}
-	slices.SortStableFunc(shares, func(p, q Share) int {
+	sorting.By(shares, func(p, q Share) int {
 		switch {
 		case p.Share > q.Share:
 			return -1

@@ -6,6 +6,7 @@ import (
 	"slices"
 
 	"hoopsheet/core/disc"
+	"hoopsheet/core/internal/sorting"
 )
 
 // Travel is a displacement with its place and time.
@@ -70,7 +71,7 @@ func newSearch(mo *motion, end float64) *search {
 // small together.
 func (mo *motion) slower() *motion {
 	order := slices.Clone(mo.modes)
-	slices.SortFunc(order, func(p, q modal) int {
+	sorting.By(order, func(p, q modal) int {
 		switch {
 		case p.omega > q.omega:
 			return -1
@@ -146,7 +147,7 @@ func (s *search) run(ctx context.Context, report func(share float64)) ([]candida
 			peaks = append(peaks, c)
 		}
 	}
-	slices.SortStableFunc(peaks, byValue)
+	sorting.By(peaks, byValue)
 	return peaks, nil
 }
 
@@ -204,7 +205,7 @@ func (mo *motion) largestTravel(ctx context.Context, end float64, start candidat
 		return candidate{}, false, err
 	}
 	places := append([]candidate{start}, peaks[:min(refined, len(peaks))]...)
-	slices.SortStableFunc(places, byValue)
+	sorting.By(places, byValue)
 	var tops []candidate
 	for _, p := range places {
 		if p.value < hopeless*math.Abs(found.value) || s.near(p, tops) {

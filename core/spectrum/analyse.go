@@ -6,6 +6,8 @@ import (
 	"math"
 	"slices"
 	"strings"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // Options says what to look for. The zero value asks for the defaults.
@@ -260,7 +262,7 @@ func (a *Analyzer) limit(n int) {
 // sortByLoudness puts first what is largest on average over the rung it was seen on: by that a
 // short strong line and a long weak one are compared as the display shows them.
 func (a *Analyzer) sortByLoudness() {
-	slices.SortFunc(a.found, func(p, q found) int { return cmp.Compare(q.loudness, p.loudness) })
+	sorting.By(a.found, func(p, q found) int { return cmp.Compare(q.loudness, p.loudness) })
 }
 
 func (res *Result) note(code Code, format string, args ...any) {

@@ -3,13 +3,13 @@ package spectrum
 import (
 	"math"
 
-	"gonum.org/v1/gonum/dsp/fourier"
+	"hoopsheet/core/disc"
 )
 
 // Analyzer holds FFT plans, windows and buffers, so that one after another recording is read
 // without new memory. It is not safe for use from several goroutines at once.
 type Analyzer struct {
-	plans   map[int]*fourier.FFT
+	plans   map[int]*disc.RealFFT
 	windows map[windowKey][]float64
 	padded  []float64
 	bins    []complex128
@@ -34,7 +34,7 @@ type windowKey struct {
 
 // NewAnalyzer returns an empty work space.
 func NewAnalyzer() *Analyzer {
-	return &Analyzer{plans: map[int]*fourier.FFT{}, windows: map[windowKey][]float64{}}
+	return &Analyzer{plans: map[int]*disc.RealFFT{}, windows: map[windowKey][]float64{}}
 }
 
 // Power writes the squared magnitudes of the windowed, zero-padded transform
@@ -57,7 +57,8 @@ func (a *Analyzer) Power(dst, x []float64, padded int, w Window) []float64 {
 	if cap(a.bins) < padded/2+1 {
 		a.bins = make([]complex128, padded/2+1)
 	}
-	a.bins = plan.Coefficients(a.bins[:padded/2+1], a.padded)
+	a.bins = a.bins[:padded/2+1]
+	plan.Forward(a.bins, a.padded)
 	dst = resize(dst, padded/2+1)
 	for k, v := range a.bins {
 		dst[k] = real(v)*real(v) + imag(v)*imag(v)
@@ -65,13 +66,13 @@ func (a *Analyzer) Power(dst, x []float64, padded int, w Window) []float64 {
 	return dst
 }
 
-func (a *Analyzer) plan(n int) *fourier.FFT {
+func (a *Analyzer) plan(n int) *disc.RealFFT {
 	p := a.plans[n]
 	if p == nil {
 		if len(a.plans) >= mostPlans {
 			clear(a.plans)
 		}
-		p = fourier.NewFFT(n)
+		p = disc.NewRealFFT(n)
 		a.plans[n] = p
 	}
 	return p

@@ -3,7 +3,8 @@ package spectrum
 import (
 	"cmp"
 	"math"
-	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // saddleDrop is how far the spectrum must fall (power ratio, 3 dB) on both sides of a top before
@@ -34,7 +35,7 @@ func findTops(dst []top, power, floor []float64, lo, hi int, ratio, natural floa
 			dst = append(dst, top{k, p})
 		}
 	}
-	slices.SortFunc(dst, func(a, b top) int { return cmp.Compare(b.power, a.power) })
+	sorting.By(dst, func(a, b top) int { return cmp.Compare(b.power, a.power) })
 	dst = dst[:min(len(dst), mostTops)]
 	kept := dst[:0]
 	for _, t := range dst {

@@ -4,6 +4,8 @@ import (
 	"cmp"
 	"math"
 	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // Kind tells whether a peak rings down.
@@ -74,7 +76,7 @@ func (a *Analyzer) peaks(n int, rate float64, o *Options) (out []Peak, left int)
 		p.judge(c.ring, float64(n)/rate)
 		out = append(out, p)
 	}
-	slices.SortFunc(out, func(p, q Peak) int { return cmp.Compare(p.Frequency, q.Frequency) })
+	sorting.By(out, func(p, q Peak) int { return cmp.Compare(p.Frequency, q.Frequency) })
 	return out, left
 }
 

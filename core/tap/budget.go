@@ -3,7 +3,8 @@ package tap
 import (
 	"cmp"
 	"math"
-	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // Nuisance is an input x that the tension rests on and that is not known
@@ -115,6 +116,6 @@ func (s *search) budget(r reading, inputs []Share) []Share {
 			shares[i].Share = shares[i].Relative * shares[i].Relative / total
 		}
 	}
-	slices.SortStableFunc(shares, func(a, b Share) int { return cmp.Compare(b.Relative, a.Relative) })
+	sorting.By(shares, func(a, b Share) int { return cmp.Compare(b.Relative, a.Relative) })
 	return shares
 }

@@ -5,6 +5,8 @@ import (
 	"errors"
 	"math"
 	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // Range says over which tensions and modes a Spectrum is solved.
@@ -151,7 +153,7 @@ func (s *Spectrum) join(all []knot) {
 			list = append(list, named{name, newCurve(s.knots[:len(y)], y, own)})
 		}
 	}
-	slices.SortFunc(list, func(a, b named) int {
+	sorting.By(list, func(a, b named) int {
 		return cmp.Or(cmp.Compare(a.y[0], b.y[0]), cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N))
 	})
 	for _, n := range list {

@@ -3,7 +3,8 @@ package tap
 import (
 	"cmp"
 	"math"
-	"slices"
+
+	"hoopsheet/core/internal/sorting"
 )
 
 // report turns a reading into figures. nuisance is the relative variance of the
@@ -24,7 +25,7 @@ func (s *search) report(r reading, nuisance float64) Reading {
 		matched[p.line], shown[p.mode] = true, true
 		highest = max(highest, s.view.rank[p.mode])
 	}
-	slices.SortStableFunc(out.Matches, func(a, b Match) int { return cmp.Compare(a.Fitted, b.Fitted) })
+	sorting.By(out.Matches, func(a, b Match) int { return cmp.Compare(a.Fitted, b.Fitted) })
 	for i, l := range s.lines {
 		if !matched[i] {
 			out.Unmatched = append(out.Unmatched, l.peak)

@@ -11,9 +11,9 @@ import (
 //
 //   - The linker cuts the initial memory into a data segment at every 8 zeros: 72,000 segments here, each with a header
 //     of 6 bytes that does not compress. Fewer segments with the zeros in them saved 82 kB of 1,366 kB after brotli.
-//   - The tables from program counters to files and lines serve stack traces only. Without them a trace names functions
-//     and no lines (the runtime answers "?" where a function has no such table), and 114 kB more were saved. Tables that
-//     the runtime needs to unwind, to collect garbage and to recover from a panic stay.
+//   - The tables from program counters to files, lines, inlined calls and live arguments serve stack traces only. Without
+//     them a trace names functions and no lines (the runtime answers "?" where a function has no such table), and 114 kB
+//     more were saved. Tables that the runtime needs to unwind, to collect garbage and to recover from a panic stay.
 //
 // It knows the tables of Go 1.20 and later and returns an error for anything else, so that a new toolchain is noticed.
 func slim(wasm []byte) ([]byte, error) {
@@ -121,8 +121,8 @@ func dataSegments(memory []byte) []byte {
 
 // lineTable is the header of the runtime's table of functions (runtime.pcHeader): where its parts begin.
 type lineTable struct {
-	at                                int // of the header in memory
-	functions, counters, functionData int
+	functions                            int // how many
+	names, units, counters, functionData int // where in memory
 }
 
 // tableStart is the magic number of Go 1.20's tables, two zeros, the least instruction size and the pointer size.
@@ -144,7 +144,7 @@ func findLineTable(memory []byte) (lineTable, error) {
 		// Functions, files, text start, then the offsets of names, units, files, counters and functions in rising order.
 		rising := w[3] < w[4] && w[4] < w[5] && w[5] < w[6] && w[6] < w[7]
 		if rising && w[7] < uint64(len(memory)-at) && w[0] > 0 && w[0] < w[7] {
-			return lineTable{at: at, functions: int(w[0]), counters: at + int(w[6]), functionData: at + int(w[7])}, nil
+			return lineTable{functions: int(w[0]), names: at + int(w[3]), units: at + int(w[4]), counters: at + int(w[6]), functionData: at + int(w[7])}, nil
 		}
 	}
 }
@@ -155,7 +155,15 @@ const (
 	funcFile  = 20 // pcfile
 	funcLine  = 24 // pcln
 	funcCount = 28 // npcdata
+	funcUnit  = 32 // cuOffset
+	funcStart = 36 // startLine
 	funcData  = 44 // the first pcdata
+)
+
+// Which pcdata serve stack traces only: the inlined calls, and which arguments are alive (internal/abi, symtab.go).
+const (
+	dataInlined   = 2
+	dataArguments = 3
 )
 
 // dropLines takes the tables of files and lines out of every function, and zeroes what no function refers to then.
@@ -165,6 +173,8 @@ func dropLines(memory []byte) error {
 		return err
 	}
 	word := func(at int) int { return int(binary.LittleEndian.Uint32(memory[at:])) }
+	shortenNames(memory[t.names:t.units])
+	clear(memory[t.units:t.counters]) // names of files, which only the dropped tables refer to
 	kept := make([]bool, t.functionData-t.counters)
 	for i := range t.functions {
 		entry := t.functionData + 8*i
@@ -176,10 +186,15 @@ func dropLines(memory []byte) error {
 			return fmt.Errorf("slim: function %d lies outside the memory", i)
 		}
 		clear(memory[f+funcFile : f+funcLine+4])
+		clear(memory[f+funcUnit : f+funcStart+4])
 		if err := keepTable(memory, kept, t, word(f+funcStack)); err != nil {
 			return err
 		}
 		for k := range word(f + funcCount) {
+			if k == dataInlined || k == dataArguments {
+				clear(memory[f+funcData+4*k : f+funcData+4*k+4])
+				continue
+			}
 			if err := keepTable(memory, kept, t, word(f+funcData+4*k)); err != nil {
 				return err
 			}
@@ -191,6 +206,19 @@ func dropLines(memory []byte) error {
 		}
 	}
 	return nil
+}
+
+// shortenNames cuts the names of instances of generic functions, which spell out whole types, at their bracket.
+func shortenNames(names []byte) {
+	inside := false
+	for i, b := range names {
+		switch {
+		case b == 0:
+			inside = false
+		case b == '[' || inside:
+			names[i], inside = 0, true
+		}
+	}
 }
 
 // keepTable marks the bytes of one table: pairs of varints up to a value step of zero that is not the first. Offset 0
