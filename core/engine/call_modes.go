@@ -34,6 +34,15 @@ type Mode struct {
 	// M nodal diameters; N nodal circles counting the rim.
 	M int `json:"m"`
 	N int `json:"n"`
+	// Upper marks the higher of a pair that unevenness or masses split; then
+	// Even is the frequency without them, Hz, Split the difference of the pair
+	// over its mean, NodalAngle where the first nodal diameter lies, rad, and
+	// Share the share of the even pair in the mode. All are 0 otherwise.
+	Upper      bool    `json:"upper"`
+	Even       float64 `json:"even"`
+	Split      float64 `json:"split"`
+	NodalAngle float64 `json:"nodalAngle"`
+	Share      float64 `json:"share"`
 	// Frequency, Hz, with the error of the computation, Hz.
 	Frequency float64 `json:"frequency"`
 	Error     float64 `json:"error"`
@@ -90,8 +99,10 @@ type ShapeRequest struct {
 	// Document of the diaphragm; without it the ideal sheet is drawn.
 	Document *diaphragm.Diaphragm `json:"document,omitempty"`
 	Without  []Effect             `json:"without,omitempty"`
-	M        int                  `json:"m"`
-	N        int                  `json:"n"`
+	// Upper asks for the higher of a split pair.
+	Upper bool `json:"upper,omitempty"`
+	M     int  `json:"m"`
+	N     int  `json:"n"`
 	// Orientation of the first antinode, rad.
 	Orientation float64 `json:"orientation"`
 	// Size of the square raster, pixels a side, 16 to 1024.

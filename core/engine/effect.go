@@ -16,14 +16,19 @@ const (
 	EffectSound Effect = "sound"
 	// EffectCavity is the closed cavity behind a face.
 	EffectCavity Effect = "cavity"
+	// EffectMasses are the patches and strips fixed to the sheet.
+	EffectMasses Effect = "masses"
+	// EffectUnevenness is uneven tension and a ring out of round.
+	EffectUnevenness Effect = "unevenness"
 )
 
 // AllEffects lists every effect.
 func AllEffects() []Effect {
-	return []Effect{EffectStiffness, EffectFluid, EffectSound, EffectCavity}
+	return []Effect{EffectStiffness, EffectFluid, EffectSound, EffectCavity, EffectMasses, EffectUnevenness}
 }
 
-// effectsWithout has every effect on but those named.
+// effectsWithout has every effect of the even diaphragm on but those named;
+// unevenOf reads the others.
 func effectsWithout(without []Effect) (modes.Effects, error) {
 	effects := modes.AllEffects()
 	for _, e := range without {
@@ -36,8 +41,9 @@ func effectsWithout(without []Effect) (modes.Effects, error) {
 			effects.Sound = false
 		case EffectCavity:
 			effects.Cavity = false
+		case EffectMasses, EffectUnevenness:
 		default:
-			return effects, Fail("without", CodeRange, "There is no effect named "+quote(string(e))+"; it may be stiffness, fluid, sound or cavity.")
+			return effects, Fail("without", CodeRange, "There is no effect named "+quote(string(e))+"; it may be stiffness, fluid, sound, cavity, masses or unevenness.")
 		}
 	}
 	return effects, nil

@@ -66,6 +66,9 @@ func costSteps(doc *diaphragm.Diaphragm, m, n int) ([]CostStep, error) {
 		return nil, err
 	}
 	for _, e := range effectsOf(doc) {
+		if e == EffectMasses || e == EffectUnevenness {
+			continue
+		}
 		name := ""
 		switch e {
 		case EffectStiffness:
@@ -81,21 +84,35 @@ func costSteps(doc *diaphragm.Diaphragm, m, n int) ([]CostStep, error) {
 			return nil, err
 		}
 	}
+	for _, e := range []struct {
+		effect  Effect
+		name    string
+		without []Effect
+	}{{EffectMasses, "+ attached masses", []Effect{EffectUnevenness}}, {EffectUnevenness, "+ unevenness", nil}} {
+		uneven, ok := unevenOf(doc, e.without)
+		if !ok || !slices.Contains(effectsOf(doc), e.effect) {
+			continue
+		}
+		coupled, _, _, err := solveCoupled(real, effects, uneven)
+		if err != nil {
+			return nil, err
+		}
+		mode, err := coupledShapeOf(coupled, m, n, false)
+		if err != nil {
+			continue // beyond what is coupled
+		}
+		steps = append(steps, CostStep{Name: e.name, Frequency: mode.Frequency, Change: mode.Frequency/steps[len(steps)-1].Frequency - 1})
+	}
 	return steps, nil
 }
 
 // frequencyOf is the frequency of one mode, Hz.
 func frequencyOf(real modes.Real, effects modes.Effects, m, n int) (float64, error) {
-	solution, err := solve(real, effects, m, n)
+	mode, err := modes.SolveMode(real, effects, m, n)
 	if err != nil {
-		return 0, err
+		return 0, asError(err, "document")
 	}
-	for _, mode := range solution.Modes {
-		if mode.M == m && mode.N == n {
-			return mode.Frequency, nil
-		}
-	}
-	return 0, Fail("n", CodeRange, "This diaphragm has no such mode among those computed.")
+	return mode.Frequency, nil
 }
 
 // input is one quantity that a frequency depends on.

@@ -46,26 +46,40 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 	if err != nil {
 		return nil, err
 	}
-	list, notes, err := solveLowest(real, effects, request.Count)
-	if err != nil {
-		return nil, err
+	result := &ModesResult{Applies: effectsOf(doc)}
+	if uneven, ok := unevenOf(doc, request.Without); ok {
+		coupled, complete, notes, err := solveCoupled(real, effects, uneven)
+		if err != nil {
+			return nil, err
+		}
+		for i := range coupled.Modes {
+			if mode := &coupled.Modes[i]; mode.Frequency <= complete && len(result.Modes) < request.Count {
+				result.Modes = append(result.Modes, coupledLine(doc, mode))
+			}
+		}
+		result.Assumptions = append(realAssumptions(doc, effects, notes)[1:], unevenWords(doc, uneven, coupled)...)
+		if len(result.Modes) < request.Count {
+			result.Assumptions = append(result.Assumptions, "The list ends where modes beyond 12 nodal diameters or 4 circles could be missing.")
+		}
+	} else {
+		list, notes, err := solveLowest(real, effects, request.Count)
+		if err != nil {
+			return nil, err
+		}
+		for _, mode := range list {
+			result.Modes = append(result.Modes, modeLine(doc, mode))
+		}
+		result.Assumptions = realAssumptions(doc, effects, notes)
 	}
 	sigma := doc.Sheet.ArealDensity()
-	result := &ModesResult{
-		ArealDensity: sigma,
-		WaveSpeed:    math.Sqrt(doc.Tension.Nominal / sigma),
-		Applies:      effectsOf(doc),
-		Assumptions:  realAssumptions(doc, effects, notes),
-	}
+	result.ArealDensity = sigma
+	result.WaveSpeed = math.Sqrt(doc.Tension.Nominal / sigma)
 	around := doc.Surroundings
 	if state, err := air.Moist(around.Temperature, around.Pressure, around.Humidity); err == nil {
 		result.AirDensity = state.Density
 		result.MassRatio = state.Density * doc.Ring.Radius / sigma
 	}
-	for _, mode := range list {
-		result.Modes = append(result.Modes, modeLine(doc, mode))
-	}
-	result.Cautions = effectCautions(doc, request.Without)
+	result.Cautions = append(effectCautions(doc, request.Without), hubCautions(doc)...)
 	return result, nil
 }
 
@@ -104,7 +118,21 @@ func effectsOf(doc *diaphragm.Diaphragm) []Effect {
 	if upper == diaphragm.FaceCavity || lower == diaphragm.FaceCavity {
 		list = append(list, EffectCavity)
 	}
+	if len(doc.Attached.Patches)+len(doc.Attached.Strips) > 0 {
+		list = append(list, EffectMasses)
+	}
+	if len(fieldOf(doc)) > 0 || doc.Ring.OutOfRound != 0 {
+		list = append(list, EffectUnevenness)
+	}
 	return list
+}
+
+// hubCautions says that a hub is not in these figures.
+func hubCautions(doc *diaphragm.Diaphragm) []string {
+	if doc.Ring.HubRadius == 0 {
+		return nil
+	}
+	return []string{"The hub in the middle is not in these frequencies: they are those of the whole sheet. A hub raises them, the modes without nodal diameters most."}
 }
 
 // effectCautions warns where an effect that the diaphragm has is left out.
@@ -157,11 +185,39 @@ func runShape(_ context.Context, request *ShapeRequest) (*ShapeResult, error) {
 	if request.Document == nil {
 		return drawShape(request, modes.NewShape(request.M, request.N, request.Orientation)), nil
 	}
+	if uneven, ok := unevenOf(request.Document, request.Without); ok {
+		mode, err := coupledModeOf(request, uneven)
+		if err != nil {
+			return nil, err
+		}
+		return drawCoupled(request, mode), nil
+	}
 	mode, err := realModeOf(request)
 	if err != nil {
 		return nil, err
 	}
 	return drawShape(request, modes.NewRealShape(mode, request.Orientation)), nil
+}
+
+// coupledModeOf finds the mode of an uneven diaphragm that a drawing is asked
+// of.
+func coupledModeOf(request *ShapeRequest, uneven modes.Uneven) (*modes.CoupledMode, error) {
+	if err := refuse(diaphragm.Validate(*request.Document)); err != nil {
+		return nil, err
+	}
+	effects, err := effectsWithout(request.Without)
+	if err != nil {
+		return nil, err
+	}
+	real, err := realOf(request.Document)
+	if err != nil {
+		return nil, err
+	}
+	coupled, _, _, err := solveCoupled(real, effects, uneven)
+	if err != nil {
+		return nil, err
+	}
+	return coupledShapeOf(coupled, request.M, request.N, request.Upper)
 }
 
 // realModeOf finds the mode that a drawing is asked of.

@@ -3,6 +3,7 @@ package engine
 import (
 	"context"
 	"math"
+	"slices"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
@@ -11,16 +12,18 @@ import (
 
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
 	c := respondCase(request)
-	if err := refuse(append(diaphragm.Validate(request.Document), c.Check()...)); err != nil {
+	doc := &request.Document
+	// How long a duration may be depends on the modes, which are still to come.
+	problems := slices.DeleteFunc(append(diaphragm.Validate(*doc), c.Check()...), func(p Problem) bool { return p.Field == "duration" })
+	if err := refuse(problems); err != nil {
 		return nil, err
 	}
-	wet, err := wetOf(&request.Document, request.Without, request.Orders, request.Circles)
-	if err != nil {
+	var err error
+	if c.Wet, err = wetOf(doc, request.Without, request.Orders, request.Circles); err != nil {
 		return nil, err
 	}
-	c.Wet = wet
-	if request.Duration == 0 && wet != nil {
-		c.Duration = shownPeriods * 2 * math.Pi / wet.Orders[0][0].Omega
+	if request.Duration == 0 && c.Wet != nil {
+		c.Duration = shownPeriods * 2 * math.Pi / c.Wet.Orders[0][0].Omega
 	}
 	motion, problems, err := response.Respond(ctx, c, progress(ctx))
 	if err != nil {
@@ -48,7 +51,7 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		Histories:          []History{},
 		Strongest:          []ModeShare{},
 		Assumptions:        motion.Assumptions,
-		Warnings:           append(effectCautions(&request.Document, request.Without), motion.Warnings...),
+		Warnings:           append(respondCautions(&request.Document, request.Without), motion.Warnings...),
 	}
 	for i, values := range motion.Histories {
 		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values})
@@ -87,4 +90,13 @@ func respondCase(request *RespondRequest) *response.Case {
 		Angles:       request.Angles,
 		Points:       request.Points,
 	}
+}
+
+// respondCautions warns of what the motion leaves out.
+func respondCautions(doc *diaphragm.Diaphragm, without []Effect) []string {
+	list := append(effectCautions(doc, without), hubCautions(doc)...)
+	if _, uneven := unevenOf(doc, nil); uneven {
+		list = append(list, "Uneven tension, the ring's being out of round and attached masses are left out of the motion: it is that of the even diaphragm.")
+	}
+	return list
 }

@@ -42,7 +42,7 @@ export type Dimension =
 /**
  * Effect names one effect that a calculation can leave out.
  */
-export type Effect = 'stiffness' | 'fluid' | 'sound' | 'cavity';
+export type Effect = 'stiffness' | 'fluid' | 'sound' | 'cavity' | 'masses' | 'unevenness';
 /**
  * FaceKind says how the fluid on one side of the sheet is bounded.
  */
@@ -698,6 +698,14 @@ export interface Mode {
    */
   m: number;
   n: number;
+  /**
+   * Upper marks the higher of a pair that unevenness or masses split; then Even is the frequency without them, Hz, Split the difference of the pair over its mean, NodalAngle where the first nodal diameter lies, rad, and Share the share of the even pair in the mode. All are 0 otherwise.
+   */
+  upper: boolean;
+  even: number;
+  split: number;
+  nodalAngle: number;
+  share: number;
   /**
    * Frequency, Hz, with the error of the computation, Hz.
    */
@@ -1427,6 +1435,10 @@ export interface ShapeRequest {
    */
   document?: Diaphragm;
   without?: Effect[];
+  /**
+   * Upper asks for the higher of a split pair.
+   */
+  upper?: boolean;
   m: number;
   n: number;
   /**

@@ -39,6 +39,8 @@ export class HoopModeDrawing extends LitElement {
   @property({ attribute: false }) without: readonly Effect[] = [];
   @property({ type: Number }) m = 0;
   @property({ type: Number }) n = 1;
+  /** The higher of a pair that unevenness splits. */
+  @property({ type: Boolean }) upper = false;
   @property({ type: Number }) clamps = 0;
   @property() caption = '';
   @state() private shape: ShapeResult | null = null;
@@ -73,14 +75,14 @@ export class HoopModeDrawing extends LitElement {
   };
 
   protected override willUpdate(changed: PropertyValues<this>): void {
-    if (changed.has('m') || changed.has('n') || changed.has('document') || changed.has('without')) {
+    if (changed.has('m') || changed.has('n') || changed.has('upper') || changed.has('document') || changed.has('without')) {
       void this.load();
     }
   }
 
   private async load(): Promise<void> {
     const answer = await engine.call('shape', {
-      ...(this.document ? { document: this.document, without: [...this.without] } : {}),
+      ...(this.document ? { document: this.document, without: [...this.without], upper: this.upper } : {}),
       m: this.m, n: this.n, orientation: Math.PI / 9, size: rasterSize, sectionAngle: this.sectionAngle, sectionPoints,
     }, { key: 'mode-drawing' });
     if (answer.kind === 'result') {

@@ -21,7 +21,7 @@ const shownFields = ['ring.radius', 'tension.nominal', 'sheet.thickness'];
 const shownDerived = ['sigma', 'rho', 'mass-ratio'];
 const counts = [12, 24, 48, 100, 200];
 const effectNames: Readonly<Record<Effect, string>> = {
-  stiffness: 'bending stiffness', fluid: 'fluid that moves along', sound: 'its sound', cavity: 'cavity',
+  stiffness: 'bending stiffness', fluid: 'fluid that moves along', sound: 'its sound', cavity: 'cavity', masses: 'attached masses', unevenness: 'unevenness',
 };
 
 @customElement('hoop-modes')
@@ -47,7 +47,7 @@ export class HoopModes extends LitElement {
 
   @state() private result: ModesResult | null = null;
   @state() private refusal = '';
-  @state() private chosen = { m: 0, n: 1 };
+  @state() private chosen = { m: 0, n: 1, upper: false };
   @state() private count = 24;
   @state() private without: readonly Effect[] = [];
   @state() private sort: 'frequency' | 'order' | 'ring-down' = 'frequency';
@@ -57,8 +57,8 @@ export class HoopModes extends LitElement {
     super();
     new SessionController(this, () => void this.compute());
     session.addEventListener('opened', () => {
-      const desk = session.recall('modes', { m: 0, n: 1, count: 24, without: [] as Effect[] });
-      this.chosen = { m: desk.m, n: desk.n };
+      const desk = session.recall('modes', { m: 0, n: 1, upper: false, count: 24, without: [] as Effect[] });
+      this.chosen = { m: desk.m, n: desk.n, upper: desk.upper };
       this.without = desk.without;
       this.count = counts.includes(desk.count) ? desk.count : 24;
       void this.compute();
@@ -81,8 +81,8 @@ export class HoopModes extends LitElement {
     }
   }
 
-  private pick(mode: { m: number; n: number }): void {
-    this.chosen = { m: mode.m, n: mode.n };
+  private pick(mode: Mode): void {
+    this.chosen = { m: mode.m, n: mode.n, upper: mode.upper };
     this.keepDesk();
   }
 
@@ -102,7 +102,7 @@ export class HoopModes extends LitElement {
       return html`<section class="panel"><p role="status">${session.message || 'Opening the diaphragm…'}</p></section>`;
     }
     const rows = session.rows.filter((r) => shownFields.includes(r.field));
-    const mode = this.result?.modes.find((m) => m.m === this.chosen.m && m.n === this.chosen.n);
+    const mode = this.result?.modes.find((m) => this.isChosen(m));
     return html`
       <section class="panel" aria-label="The diaphragm and the chosen mode"><div class="split">
         <div>
@@ -115,7 +115,7 @@ export class HoopModes extends LitElement {
         </div>
         <div class="drawing">
           <h2>Mode (${this.chosen.m}, ${this.chosen.n})</h2>
-          <hoop-mode-drawing .document=${document} .without=${this.without} .m=${this.chosen.m} .n=${this.chosen.n} .clamps=${document.ring.clamps}
+          <hoop-mode-drawing .document=${document} .without=${this.without} .m=${this.chosen.m} .n=${this.chosen.n} .upper=${this.chosen.upper} .clamps=${document.ring.clamps}
             .caption=${mode ? `${figure(mode.frequency)} Hz; ${mode.nodalLines}` : ''}></hoop-mode-drawing>
           ${mode ? this.modeFigures(mode) : nothing}
         </div>
@@ -178,15 +178,19 @@ export class HoopModes extends LitElement {
     </section>`;
   }
 
+  private isChosen(mode: Mode): boolean {
+    return mode.m === this.chosen.m && mode.n === this.chosen.n && mode.upper === this.chosen.upper;
+  }
+
   private modeRow(mode: Mode): TemplateResult {
-    const chosen = mode.m === this.chosen.m && mode.n === this.chosen.n;
+    const chosen = this.isChosen(mode);
     return html`<tr class=${chosen ? 'chosen' : ''} @click=${() => this.pick(mode)}>
       <th scope="row"><button type="button" class="choose" aria-pressed=${chosen ? 'true' : 'false'}
-        aria-label="Draw mode (${mode.m}, ${mode.n})">(${mode.m}, ${mode.n})</button></th>
+        aria-label="Draw mode (${mode.m}, ${mode.n})${mode.split > 0 ? (mode.upper ? ', upper of the pair' : ', lower of the pair') : ''}">(${mode.m}, ${mode.n})</button></th>
       <td class="number">${figure(mode.frequency)} Hz</td>
       <td class="number">${figure(mode.ideal)} Hz</td>
       <td class="number">${mode.ringDown > 0 ? `${figure(mode.ringDown, 2)} s` : '–'}</td>
-      <td>${mode.nodalLines}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
+      <td>${mode.nodalLines}${mode.split > 0 ? html`<br /><span class="soft">${mode.upper ? 'upper' : 'lower'} of a pair split by ${percent(mode.split, 2)}, nodal line at ${Math.round((mode.nodalAngle * 180) / Math.PI)}°</span>` : nothing}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
       <td>${nearest(mode)}</td>
     </tr>`;
   }
@@ -205,10 +209,10 @@ function words(distance: Distance): string {
 function shownTable(modes: readonly Mode[]): ShownTable {
   return {
     name: 'modes',
-    heads: ['m', 'n', 'frequency, Hz', 'ideal, Hz', 'rings for 60 dB, s', 'damping ratio', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
+    heads: ['m', 'n', 'of a split pair', 'frequency, Hz', 'ideal, Hz', 'rings for 60 dB, s', 'damping ratio', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
     rows: modes.map((mode) => {
       const d = mode.distances[0];
-      return [mode.m, mode.n, mode.frequency, mode.ideal, mode.ringDown, mode.damping.total, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
+      return [mode.m, mode.n, mode.split > 0 ? (mode.upper ? 'upper' : 'lower') : '', mode.frequency, mode.ideal, mode.ringDown, mode.damping.total, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
     }),
   };
 }
