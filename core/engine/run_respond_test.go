@@ -45,7 +45,9 @@ func TestRespondOfDemo(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if got := result.Period * table.Modes[0].Frequency; math.Abs(got-1) > 1e-9 {
+	// The table's frequency is that of the oscillation as radiation damps it.
+	lowest := table.Modes[0]
+	if got := result.Period * lowest.Frequency / math.Sqrt(1-lowest.Damping.Radiation*lowest.Damping.Radiation); math.Abs(got-1) > 1e-9 {
 		t.Errorf("period times the frequency of (0,1) is %v", got)
 	}
 	if len(result.Strongest) == 0 || len(result.Assumptions) == 0 || len(result.Warnings) != 0 {

@@ -1,10 +1,9 @@
 package engine
 
 import (
-	"math"
+	"strconv"
 
 	"hoopsheet/core/diaphragm"
-	"hoopsheet/core/disc"
 	"hoopsheet/core/modes"
 	"hoopsheet/core/response"
 )
@@ -28,8 +27,11 @@ func wetOf(doc *diaphragm.Diaphragm, without []Effect, orders, circles int) (*re
 	if err != nil || effects == (modes.Effects{}) {
 		return nil, err
 	}
-	if orders > modes.MaxDiameters || circles > modes.MaxCircles {
-		return nil, Fail("orders", CodeRange, "With the fluid, up to 40 nodal diameters and 20 nodal circles can be taken.")
+	if orders > modes.MaxDiameters {
+		return nil, Fail("orders", CodeRange, "With the fluid or the stiffness, up to "+strconv.Itoa(modes.MaxDiameters)+" nodal diameters can be taken.")
+	}
+	if circles > modes.MaxCircles {
+		return nil, Fail("circles", CodeRange, "With the fluid or the stiffness, up to "+strconv.Itoa(modes.MaxCircles)+" nodal circles can be taken.")
 	}
 	real, err := realOf(doc)
 	if err != nil {
@@ -45,55 +47,27 @@ func wetOf(doc *diaphragm.Diaphragm, without []Effect, orders, circles int) (*re
 	if err != nil {
 		return nil, err
 	}
-	wet := &response.Wet{Orders: make([][]response.WetMode, orders+1), Words: realAssumptions(doc, effects, nil)}
-	basis := disc.NewBasis(orders, circles)
-	converters := map[[2]int]*disc.Converter{}
-	for m := range wet.Orders {
-		wet.Orders[m] = make([]response.WetMode, circles)
-	}
-	for i := range all.Modes {
-		mode := &all.Modes[i]
-		coef, _ := mode.Coefficients()
-		size := [2]int{mode.M, len(coef)}
-		if converters[size] == nil {
-			converters[size] = disc.NewConverter(basis, mode.M, disc.HeldEdge, len(coef))
-		}
-		shape := make([]float64, circles)
-		converters[size].ToBessel(shape, coef)
-		wet.Orders[mode.M][mode.N-1] = response.WetMode{
-			N: mode.N, Omega: 2 * math.Pi * mode.Frequency, Zeta: mode.Damping.Total, Shape: shape, FilmShare: mode.FilmShare,
-		}
-	}
-	if effects.Sound && effects.Fluid {
-		if err := addSound(wet, real, effects, orders, circles); err != nil {
+	words := realAssumptions(doc, effects, all.Notes)
+	var loud *modes.Solution
+	if effects.Sound && effects.Fluid && radiates(real) {
+		if loud, err = solve(real, effects, min(orders, soundDiameters), min(circles, soundCircles)); err != nil {
 			return nil, err
 		}
+		words = append(words, "Radiation of sound damps the modes with up to "+strconv.Itoa(soundDiameters)+" nodal diameters and "+
+			strconv.Itoa(soundCircles)+" nodal circles; that of higher ones is left out.")
 	}
-	for _, face := range []modes.Face{real.Upper, real.Lower} {
-		if effects.Cavity && face.Kind == diaphragm.FaceCavity && face.Vent == nil {
-			wet.CavitySpring = face.Density * face.SoundSpeed * face.SoundSpeed * real.Radius * real.Radius / (math.Pi * face.Depth * real.Tension)
-		}
-	}
+	wet := response.NewWet(all, loud, effects.Cavity, orders, circles)
+	wet.Words = words
 	wets.put(key, wet)
 	return wet, nil
 }
 
-// addSound gives the lowest modes the frequency and the damping that they have
-// in a fluid that radiates sound.
-func addSound(wet *response.Wet, real modes.Real, effects modes.Effects, orders, circles int) error {
-	loud, err := solve(real, effects, min(orders, soundDiameters), min(circles, soundCircles))
-	if err != nil {
-		return err
-	}
-	for i := range loud.Modes {
-		mode := &loud.Modes[i]
-		list := wet.Orders[mode.M]
-		for k := range list {
-			if list[k].N == mode.N {
-				list[k].Omega, list[k].Zeta = 2*math.Pi*mode.Frequency, mode.Damping.Total
-			}
+// radiates tells whether sound can leave a face.
+func radiates(real modes.Real) bool {
+	for _, face := range []modes.Face{real.Upper, real.Lower} {
+		if (face.Kind == diaphragm.FaceOpen || face.Kind == diaphragm.FaceBaffled) && face.Density > 0 {
+			return true
 		}
 	}
-	wet.Words = append(wet.Words, "Radiation of sound damps the modes with up to 5 nodal diameters and 3 nodal circles; that of higher ones is left out.")
-	return nil
+	return false
 }

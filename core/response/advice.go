@@ -24,7 +24,15 @@ type warned struct {
 // assumptions says in words what was assumed.
 func (c *Case) assumptions() []string {
 	if c.Wet != nil {
-		return append(append([]string{}, c.Wet.Words...),
+		list := append([]string{}, c.Wet.Words...)
+		switch {
+		case c.Velocity.Kind == ShapeRest || c.Velocity.Peak == 0:
+		case c.Impulse:
+			list = append(list, "The blow is over before anything has moved; it sets sheet and fluid moving.")
+		default:
+			list = append(list, "At the start the fluid moves along with the sheet.")
+		}
+		return append(list,
 			"The motion is the sum of the modes with m = 0 to "+strconv.Itoa(c.Orders)+" nodal diameters and n = 1 to "+
 				strconv.Itoa(c.Circles)+" within each, each with its own damping.")
 	}
@@ -45,7 +53,12 @@ func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 	list := []string{}
 	add := func(text string) { list = append(list, text) }
 
-	if stretch := c.extraTension(m.Energy); stretch > refuseStretch {
+	energy := m.Energy
+	if c.Wet != nil {
+		// The fluid moves too, and a cavity keeps its share for itself.
+		energy = c.Sheet.Tension / 2 * s.moves.strain()
+	}
+	if stretch := c.extraTension(energy); stretch > refuseStretch {
 		add("The motion stretches the sheet: its tension could rise by up to " + percent(stretch) +
 			". This is far beyond small motion; do not use these figures.")
 	} else if stretch > warnStretch {
@@ -99,8 +112,8 @@ func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 }
 
 // extraTension bounds the mean extra tension from stretching, relative to T, by
-// the energy (J): E h/(1-nu) mean(|grad w|^2)/4, and the mean of |grad w|^2 is
-// never more than 2 energy/(pi a^2 T). An initial displacement reaches the
+// the energy (J) that the sheet can take up: E h/(1-nu) mean(|grad w|^2)/4, and
+// the mean of |grad w|^2 is never more than 2 energy/(pi a^2 T). An initial displacement reaches the
 // bound, an initial velocity approaches it.
 func (c *Case) extraTension(energy float64) float64 {
 	a := c.Sheet.Radius

@@ -67,9 +67,6 @@ func (c *Case) Check() []diaphragm.Problem {
 		problems = append(problems, diaphragm.Problem{Field: field, Code: code, Message: message, Offset: -1})
 	}
 	sound := true
-	if c.Wet != nil && (len(c.Wet.Orders) <= c.Orders) {
-		add("orders", diaphragm.CodeBounds, "The modes of the diaphragm are given up to "+strconv.Itoa(len(c.Wet.Orders)-1)+" nodal diameters only.")
-	}
 	within := func(field, name string, value, least, most int) {
 		if value < least || value > most {
 			sound = false
@@ -90,6 +87,12 @@ func (c *Case) Check() []diaphragm.Problem {
 		if c.Frames*c.Radii*c.Angles > MostMotion {
 			add("frames", diaphragm.CodeConflict, "Frames times radii times angles come to "+strconv.Itoa(c.Frames*c.Radii*c.Angles)+
 				" values; at most "+strconv.Itoa(MostMotion)+" are computed. Take fewer frames or a coarser grid.")
+		}
+	}
+	if c.Wet != nil && c.Orders >= 0 {
+		if message := c.wetProblem(); message != "" {
+			add("orders", diaphragm.CodeConflict, message)
+			return problems
 		}
 	}
 	if !(c.Zeta >= 0 && c.Zeta <= 100) {
@@ -116,10 +119,13 @@ func (c *Case) Check() []diaphragm.Problem {
 	return problems
 }
 
-// period of mode (0,1), s.
+// unit of time a/c, s.
+func (c *Case) unit() float64 { return c.Sheet.Radius / c.Sheet.WaveSpeed() }
+
+// period of mode (0,1) without damping, s.
 func (c *Case) period() float64 {
-	if c.Wet != nil && len(c.Wet.Orders) > 0 && len(c.Wet.Orders[0]) > 0 {
+	if c.Wet != nil {
 		return 2 * math.Pi / c.Wet.Orders[0][0].Omega
 	}
-	return 2 * math.Pi / basisOf(0, 1).Zero(0, 1) * c.Sheet.Radius / c.Sheet.WaveSpeed()
+	return 2 * math.Pi / basisOf(0, 1).Zero(0, 1) * c.unit()
 }

@@ -40,13 +40,21 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 	// The two solutions of a mode are stepped once and shared by the points.
 	solutions := [2][]float64{make([]float64, count), make([]float64, count)}
 	step := end / float64(count-1)
+	radials := make([][]float64, len(c.Points))
+	for i, p := range c.Points {
+		radials[i] = moves.radials(p.Radius)
+	}
+	shapes := make([]float64, len(c.Points))
 	for i := range moves.modes {
 		if i%32 == 0 {
 			if err := ctx.Err(); err != nil {
 				return nil, err
 			}
 		}
-		moves.addHistory(&moves.modes[i], sums, c.Points, solutions, step)
+		for k := range shapes {
+			shapes[k] = radials[k][i]
+		}
+		moves.modes[i].addHistory(sums, c.Points, shapes, solutions, step)
 	}
 	for i, sum := range sums {
 		h.values[i] = make([]float32, count)
@@ -57,9 +65,9 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 	return h, nil
 }
 
-// addHistory adds one mode's displacement of every point at even steps of
-// time; solutions is work space.
-func (mo *motion) addHistory(k *modal, sums [][]float64, points []Point, solutions [2][]float64, step float64) {
+// addHistory adds the mode's displacement of every point, at which the radial
+// functions are given, at even steps of time; solutions is work space.
+func (k *modal) addHistory(sums [][]float64, points []Point, radial []float64, solutions [2][]float64, step float64) {
 	advance := newStepper(k.omega, k.zeta, step)
 	cs, ss := solutions[0], solutions[1]
 	c, s := 1.0, 0.0
@@ -68,7 +76,7 @@ func (mo *motion) addHistory(k *modal, sums [][]float64, points []Point, solutio
 		c, s = advance.next(c, s)
 	}
 	for i, p := range points {
-		j := mo.radial(k, p.Radius)
+		j := radial[i]
 		sin, cos := math.Sincos(float64(k.m) * p.Angle)
 		alpha := j * (k.a*cos + k.b*sin)
 		beta := j * (k.va*cos + k.vb*sin) / k.omega

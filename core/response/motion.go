@@ -27,12 +27,14 @@ type modal struct {
 	// row holds the coefficients of J_m(j_m1 r), ... of a wet mode; nil for the
 	// ideal sheet, whose mode is the one at index.
 	row []float64
+	// film is the share of the sheet in the strain energy of the mode.
+	film float64
 	// a and b are the initial displacements of the cosine and the sine part,
 	// va and vb their initial velocities in m per a/c.
 	a, b, va, vb float64
-	// size bounds the displacement anywhere on the sheet; it decays at least as
-	// fast as exp(-decay t).
-	size, decay float64
+	// swing bounds the amplitude and size the displacement anywhere on the sheet;
+	// they decay at least as fast as exp(-decay t).
+	swing, size, decay float64
 }
 
 // negligible is the size, relative to the sum of all, below which a mode is
@@ -50,7 +52,7 @@ func newMotion(b *disc.Basis, zeta float64, displacement, velocity []float64) *m
 			i := b.Index(m, n, disc.Cos)
 			mode := modal{
 				index: i, m: m, n: n,
-				omega: b.Zero(m, n), zeta: zeta, norm: b.Norm(m, n),
+				omega: b.Zero(m, n), zeta: zeta, norm: b.Norm(m, n), film: 1,
 				a: displacement[i], b: displacement[i+1],
 				va: velocity[i], vb: velocity[i+1],
 			}
@@ -59,21 +61,28 @@ func newMotion(b *disc.Basis, zeta float64, displacement, velocity []float64) *m
 			all = append(all, mode)
 		}
 	}
-	moves := &motion{}
+	moves := &motion{basis: b, modes: all}
+	moves.keep(total)
+	return moves
+}
+
+// keep leaves out the modes that do not move, total being the sum of the sizes
+// of all, and the orders above the last that does.
+func (mo *motion) keep(total float64) {
+	kept := mo.modes[:0]
 	highest := 0
-	for _, mode := range all {
+	for _, mode := range mo.modes {
 		if mode.size > negligible*total {
-			moves.modes = append(moves.modes, mode)
+			kept = append(kept, mode)
 			highest = mode.m
 		}
 	}
+	mo.modes = kept
 	// Coefficients stand order by order, so those of a basis with fewer orders
 	// are the first ones of this.
-	moves.basis = b
-	if highest < b.M {
-		moves.basis = basisOf(highest, b.N)
+	if highest < mo.basis.M {
+		mo.basis = basisOf(highest, mo.basis.N)
 	}
-	return moves
 }
 
 // largestBessel is the largest value of |J_m|.
@@ -87,21 +96,22 @@ func largestBessel(m int) float64 {
 	return value[0]
 }
 
-// bound sets size and decay; largest is that of |J_m|.
+// bound sets swing, size and decay; largest bounds the shape.
 func (mode *modal) bound(largest float64) {
 	// cos m theta and sin m theta parts add like the sides of a right angle.
 	start := math.Hypot(mode.a, mode.b)
 	if mode.zeta < 0.99 {
 		root := math.Sqrt((1 - mode.zeta) * (1 + mode.zeta))
 		ahead := math.Hypot(mode.va/mode.omega+mode.zeta*mode.a, mode.vb/mode.omega+mode.zeta*mode.b) / root
-		mode.size = largest * math.Hypot(start, ahead)
+		mode.swing = math.Hypot(start, ahead)
 		mode.decay = mode.zeta * mode.omega
-		return
+	} else {
+		// Near and above critical damping |C| <= 1 and omega |S| < 1; see
+		// fundamental.
+		mode.swing = start + math.Hypot(mode.va, mode.vb)/mode.omega
+		mode.decay = 0
 	}
-	// Near and above critical damping |C| <= 1 and omega |S| < 1; see
-	// fundamental.
-	mode.size = largest * (start + math.Hypot(mode.va, mode.vb)/mode.omega)
-	mode.decay = 0
+	mode.size = largest * mode.swing
 }
 
 // fundamental returns the two fundamental solutions of one mode at the time t:
@@ -162,12 +172,27 @@ func (mo *motion) place(coef []float64, k *modal, q, p float64) {
 	}
 }
 
-// radial is the radial function of a mode at radius r.
-func (mo *motion) radial(k *modal, r float64) float64 {
-	if k.row == nil {
-		return bessel.JInt(k.m, k.omega*r)
+// radials returns the radial functions of all modes at radius r.
+func (mo *motion) radials(r float64) []float64 {
+	out := make([]float64, len(mo.modes))
+	var shared []float64 // Bessel functions of one order of wet modes
+	order := -1
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		if k.row == nil {
+			out[i] = bessel.JInt(k.m, k.omega*r)
+			continue
+		}
+		if k.m != order {
+			order = k.m
+			shared = shared[:0]
+			for n := range k.row {
+				shared = append(shared, bessel.JInt(k.m, mo.basis.Zero(k.m, n+1)*r))
+			}
+		}
+		out[i] = dotted(k.row, shared)
 	}
-	return radialAt(mo.basis, k.m, k.row, r)
+	return out
 }
 
 // shortest returns the largest wave number of the modes that move: 2 pi over
@@ -194,6 +219,33 @@ func (mo *motion) energy(t float64) (potential, kinetic float64) {
 		kinetic += k.norm * (dq*dq + dp*dp)
 	}
 	return potential, kinetic
+}
+
+// speeds writes the coefficients of the velocity at the start, m per a/c.
+func (mo *motion) speeds(coef []float64) {
+	clear(coef)
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		mo.place(coef, k, k.va, k.vb)
+	}
+}
+
+// strain bounds the strain energy of the sheet alone at any time, in units of
+// T/2, by the energy at the start and by the sum of what every mode reaches.
+func (mo *motion) strain() float64 {
+	potential, kinetic := mo.energy(0)
+	var reached, order float64
+	for i := range mo.modes {
+		k := &mo.modes[i]
+		// Of one order the roots add (triangle inequality), of several the
+		// energies do.
+		order += k.swing * k.omega * math.Sqrt(k.norm*k.film)
+		if i+1 == len(mo.modes) || mo.modes[i+1].m != k.m {
+			reached += order * order
+			order = 0
+		}
+	}
+	return math.Min(potential+kinetic, reached)
 }
 
 // reach bounds the displacement anywhere on the sheet from the time t on.

@@ -23,12 +23,14 @@ type Motion struct {
 	Travel   Travel
 	// MissedDisplacement and MissedVelocity are the shares, 0 to 1, of the
 	// initial potential and kinetic energy outside the chosen modes;
-	// MissedEnergy that of both.
+	// MissedEnergy that of both. With wet modes that of the kinetic energy is an
+	// estimate from above: the fluid's share in what is left out is not known.
 	MissedDisplacement, MissedVelocity, MissedEnergy float64
 	// Energy at the start, J; where the initial displacement has a jump, and so
 	// no finite energy, that of the chosen modes.
 	Energy float64
-	// Period of mode (0,1), s, and its time to -60 dB; 0 without damping.
+	// Period of mode (0,1) without damping, s, and its time to -60 dB; 0 without
+	// damping.
 	Period, RingDown float64
 	// Strongest lists the modes that carry most energy, largest first.
 	Strongest             []Share
@@ -47,8 +49,8 @@ type Share struct {
 type start struct {
 	displacement, velocity       form
 	moves                        *motion
-	potential, kinetic           float64 // exact, in units of T/2; +Inf with a jump
-	keptPotential, keptKinetic   float64 // of the chosen modes, the sheet alone
+	potential, kinetic           float64 // of all modes, in units of T/2; +Inf with a jump
+	keptPotential, keptKinetic   float64 // of the chosen modes
 	steepest                     float64 // largest initial slope per unit of a
 	displacementScale, velocityA float64 // m; velocity times a/c, m
 }
@@ -71,7 +73,7 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 	part := func(from, to float64) func(float64) {
 		return func(share float64) { report(from + (to-from)*share) }
 	}
-	unit := c.Sheet.Radius / c.Sheet.WaveSpeed() // s
+	unit := c.unit()
 	pictures, err := drawFrames(ctx, c, begin.moves, unit, part(0.1, 0.5))
 	if err != nil {
 		return nil, nil, err
@@ -107,7 +109,7 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 
 // start projects the initial values.
 func (c *Case) start() (*start, []diaphragm.Problem) {
-	basis := basisOf(c.Orders, c.Circles)
+	basis := basisOf(c.Orders, c.terms())
 	s := &start{
 		displacementScale: c.Displacement.Peak,
 		velocityA:         c.Velocity.Peak * c.Sheet.Radius / c.Sheet.WaveSpeed(),
@@ -132,15 +134,19 @@ func (c *Case) start() (*start, []diaphragm.Problem) {
 	}
 	displacement, velocity := project(s.displacement, s.displacementScale), project(s.velocity, s.velocityA)
 	if c.Wet != nil {
-		s.moves = wetMotion(basis, c.Wet, displacement, velocity, c.Impulse, c.Sheet.Radius/c.Sheet.WaveSpeed())
+		s.moves = wetMotion(basis, c.Wet, displacement, velocity, c.Impulse, c.unit())
 	} else {
 		s.moves = newMotion(basis, c.Zeta, displacement, velocity)
 	}
-	s.keptPotential, s.keptKinetic = kept(basis, displacement, velocity)
 	n := s.displacement.norms()
 	s.potential = times(s.displacementScale*s.displacementScale, n.slope)
 	s.steepest = times(math.Abs(s.displacementScale), n.steepest)
 	s.kinetic = times(s.velocityA*s.velocityA, s.velocity.norms().square)
+	if c.Wet != nil {
+		s.wetAccount(c, basis, displacement, velocity)
+	} else {
+		s.keptPotential, s.keptKinetic = kept(basis, displacement, velocity)
+	}
 	return s, nil
 }
 
@@ -160,7 +166,7 @@ func kept(b *disc.Basis, displacement, velocity []float64) (potential, kinetic f
 
 // lowestZeta is the damping ratio of mode (0,1).
 func (c *Case) lowestZeta() float64 {
-	if c.Wet != nil && len(c.Wet.Orders) > 0 && len(c.Wet.Orders[0]) > 0 {
+	if c.Wet != nil {
 		return c.Wet.Orders[0][0].Zeta
 	}
 	return c.Zeta

@@ -3,7 +3,6 @@ package response
 import (
 	"math"
 
-	"hoopsheet/core/bessel"
 	"hoopsheet/core/disc"
 )
 
@@ -12,8 +11,11 @@ import (
 // with its modes, lowest first.
 type Wet struct {
 	Orders [][]WetMode
+	// Cavity tells whether there is a cavity behind a face, vented or not.
+	Cavity bool
 	// CavitySpring is rho c0^2 a^2/(pi L T) of a closed cavity of depth L; 0
-	// without one. A slow displacement w(r) m over the unit disc then stores
+	// without one and for a vented one. A slow displacement w(r) m over the unit
+	// disc then stores
 	//
 	//	T/2 [integral of |grad w|^2 + CavitySpring (integral of w)^2].
 	CavitySpring float64
@@ -27,12 +29,47 @@ type WetMode struct {
 	// Omega is the angular frequency without damping, rad/s, and Zeta the
 	// damping ratio.
 	Omega, Zeta float64
-	// Shape holds the coefficients of J_m(j_m1 r), J_m(j_m2 r), ..., as many as
-	// the case has circles.
+	// Shape holds the coefficients of J_m(j_m1 r), J_m(j_m2 r), ...: as many in
+	// every mode, and at least as many as the case has circles. The series may
+	// go on beyond them.
 	Shape []float64
+	// Strain is twice the strain energy of the whole shape over the tension, a
+	// pure number for a shape of pure numbers: the integral of |grad w|^2 over
+	// the disc and what bending and a cavity add. The modal mass of sheet, fluid
+	// and cavity is T Strain/Omega^2.
+	Strain float64
+	// Volume is the integral of the whole shape over the unit disc; it counts
+	// for m = 0 with a CavitySpring.
+	Volume float64
 	// FilmShare is the share of the sheet in the strain energy; 1 without a
 	// cavity.
 	FilmShare float64
+}
+
+// terms returns how many Bessel functions an order of the case takes.
+func (c *Case) terms() int {
+	if c.Wet == nil {
+		return c.Circles
+	}
+	return len(c.Wet.Orders[0][0].Shape)
+}
+
+// wetProblem says what is wrong with the modes given; empty if nothing.
+func (c *Case) wetProblem() string {
+	if len(c.Wet.Orders) <= c.Orders {
+		return "The modes of the diaphragm do not reach as many nodal diameters."
+	}
+	for _, list := range c.Wet.Orders[:c.Orders+1] {
+		if len(list) == 0 {
+			return "An order of the diaphragm has no modes."
+		}
+		for _, mode := range list {
+			if len(mode.Shape) != len(c.Wet.Orders[0][0].Shape) || len(mode.Shape) < c.Circles || !(mode.Strain > 0 && mode.Omega > 0 && mode.FilmShare > 0) {
+				return "The modes of the diaphragm are not complete."
+			}
+		}
+	}
+	return ""
 }
 
 // wetMotion takes the initial coefficients of a basis to wet modes. The
@@ -40,30 +77,32 @@ type WetMode struct {
 // sigma instead. unit is a/c in s.
 //
 // In units of T/2 and lengths of a, the strain of coefficients c is c'Gc with
-// G = diag(j^2 norm). Wet modes are orthogonal in it (still fluid) or nearly so
-// (sound), so amplitudes follow from it alone and no fluid operator is needed:
+// G = diag(j^2 norm), apart from bending and cavity; K is the strain with these.
+// Wet modes are orthogonal in K, as they are in the mass of sheet and fluid, so
+// amplitudes follow from it alone and no fluid operator is needed:
 //
-//   - a displacement let go is what a static load holds, a_i = phi_i'K w0 over
-//     phi_i'K phi_i, with the cavity's spring in K; without a cavity the
-//     least-squares solution in G is taken, which is the same for orthogonal
-//     modes and returns w0 for others;
-//   - a velocity is split by least squares in G;
-//   - an impulse p gives b_i = phi_i'p/m_i with the modal mass
+//   - Without a cavity, displacements and velocities are split by least squares
+//     in G. For modes orthogonal in G that is phi_i'G w0 over phi_i'G phi_i.
+//   - With a cavity, G alone does not tell apart modes in which the sheet moves
+//     alike. A displacement let go is what a static load held, the pressure of
+//     the cavity even: a_i = phi_i'K w0 over phi_i'K phi_i, where phi_i'K w0 is
+//     phi_i'G w0 + CavitySpring (integral of phi_i) (integral of w0). With a
+//     velocity the fluid moves along as in slow motion, which is the same sum.
+//   - An impulse p gives b_i = phi_i'p/m_i with the modal mass
 //     m_i = phi_i'K phi_i/omega_i^2 of sheet, fluid and cavity together.
 func wetMotion(b *disc.Basis, wet *Wet, displacement, velocity []float64, impulse bool, unit float64) *motion {
 	moves := &motion{basis: b}
 	var total float64
-	for m := 0; m <= b.M && m < len(wet.Orders); m++ {
-		list := wet.Orders[m]
-		order := newWetOrder(b, m, list, wet.CavitySpring)
+	for m := 0; m <= b.M; m++ {
+		order := newWetOrder(b, m, wet, unit)
 		for _, part := range []disc.Part{disc.Cos, disc.Sin} {
 			if m == 0 && part == disc.Sin {
 				break
 			}
-			a := order.released(order.take(displacement, part))
+			a := order.split(order.take(displacement, part))
 			v := order.take(velocity, part)
 			if impulse {
-				v = order.struck(v, unit)
+				v = order.struck(v)
 			} else {
 				v = order.split(v)
 			}
@@ -77,168 +116,123 @@ func wetMotion(b *disc.Basis, wet *Wet, displacement, velocity []float64, impuls
 		}
 		for i := range order.modes {
 			mode := &order.modes[i]
-			mode.omega = list[i].Omega * unit
-			mode.zeta = list[i].Zeta
-			mode.norm = order.strain[i] / (mode.omega * mode.omega)
-			mode.row = list[i].Shape
 			mode.bound(order.largest[i])
 			total += mode.size
 			moves.modes = append(moves.modes, *mode)
 		}
 	}
-	kept := moves.modes[:0]
-	highest := 0
-	for _, mode := range moves.modes {
-		if mode.size > negligible*total {
-			kept = append(kept, mode)
-			highest = mode.m
-		}
-	}
-	moves.modes = kept
-	if highest < b.M {
-		moves.basis = basisOf(highest, b.N)
-	}
+	moves.keep(total)
 	return moves
 }
 
-// wetOrder holds what the projections of one order need.
-type wetOrder struct {
-	b       *disc.Basis
-	m       int
-	list    []WetMode
-	modes   []modal
-	stiff   []float64 // G
-	norm    []float64 // of the Bessel functions
-	volume  []float64 // integral of each Bessel function over the disc; m = 0
-	spring  float64
-	strain  []float64 // phi_i'K phi_i, the cavity's share included
-	largest []float64 // a bound of |phi_i|
-}
+// wetAccount adds up what wet modes hold of the initial values and what they
+// leave out.
+func (s *start) wetAccount(c *Case, b *disc.Basis, displacement, velocity []float64) {
+	held := make([]float64, b.Len())
+	s.keptPotential, s.keptKinetic = s.moves.energy(0)
 
-func newWetOrder(b *disc.Basis, m int, list []WetMode, spring float64) *wetOrder {
-	o := &wetOrder{b: b, m: m, list: list, spring: spring,
-		modes: make([]modal, len(list)), stiff: make([]float64, b.N), norm: make([]float64, b.N), volume: make([]float64, b.N),
-		strain: make([]float64, len(list)), largest: make([]float64, len(list))}
-	for n := 1; n <= b.N; n++ {
-		j := b.Zero(m, n)
-		o.norm[n-1] = b.Norm(m, n)
-		o.stiff[n-1] = j * j * b.Norm(m, n)
-		if m == 0 {
-			o.volume[n-1] = 2 * math.Pi * b.Slope(0, n) / j // DLMF 10.22.1
+	// Without a cavity the part left out is orthogonal in G to the part held. A
+	// displacement that jumps has strain without bound, all of it left out.
+	switch whole := s.potential; {
+	case math.IsInf(whole, 1):
+	case c.Wet.Cavity:
+		volume := 0.0
+		for n := 1; n <= b.N; n++ {
+			volume += displacement[b.Index(0, n, disc.Cos)] * volumeOf(b, n)
 		}
+		s.potential += c.Wet.CavitySpring * volume * volume
+	default:
+		s.moves.amplitudes(held, 0)
+		s.keptPotential = whole - leftOut(b, whole, displacement, held, 1)
 	}
-	top := largestBessel(m)
-	for i, mode := range list {
-		o.modes[i] = modal{index: b.Index(m, min(i+1, b.N), disc.Cos), m: m, n: mode.N}
-		film := 0.0
-		for k, p := range mode.Shape {
-			film += o.stiff[k] * p * p
-			o.largest[i] += top * math.Abs(p)
+
+	var left float64
+	if c.Impulse {
+		left = s.impulseLeft(b, velocity)
+	} else {
+		// The part of a velocity left out waves faster than the modes held, so the
+		// fluid adds no more to its mass than to that of the modes at the edge of
+		// the band.
+		s.moves.speeds(held)
+		left = leftOut(b, s.kinetic, velocity, held, 0) * c.Wet.edgeMass(b, c.unit())
+	}
+	s.kinetic = s.keptKinetic + left
+}
+
+// impulseLeft estimates the energy of an impulse that the modes leave out, in
+// units of T/2.
+func (s *start) impulseLeft(b *disc.Basis, impulse []float64) float64 {
+	// An impulse sets less than the sheet alone moving, which bounds what lies
+	// beyond the basis and what an order can hold. Within an order the energies
+	// are taken to go on falling as they did: those of modes (N/4, N/2] and
+	// (N/2, N] and the blocks beyond, each twice as long, form a geometric series
+	// under a power law. It is at least n^-2: the velocity of a light sheet in a
+	// heavy fluid does not vanish at the rim but for a narrow zone.
+	left := math.Max(0, s.kinetic-b.Energy(impulse))
+	for m := 0; m <= b.M; m++ {
+		var whole, held float64
+		for n := 1; n <= b.N; n++ {
+			i := b.Index(m, n, disc.Cos)
+			whole += b.Norm(m, n) * (impulse[i]*impulse[i] + impulse[i+1]*impulse[i+1])
 		}
-		o.strain[i] = film / mode.FilmShare
-	}
-	return o
-}
-
-func radialAt(b *disc.Basis, m int, shape []float64, r float64) float64 {
-	sum := 0.0
-	for k, p := range shape {
-		sum += p * bessel.JInt(m, b.Zero(m, k+1)*r)
-	}
-	return sum
-}
-
-// take reads one order's coefficients of the cosine or sine part.
-func (o *wetOrder) take(coef []float64, part disc.Part) []float64 {
-	out := make([]float64, o.b.N)
-	for n := range out {
-		out[n] = coef[o.b.Index(o.m, n+1, part)]
-	}
-	return out
-}
-
-// released gives the amplitudes of a displacement let go.
-func (o *wetOrder) released(c []float64) []float64 {
-	if o.spring == 0 {
-		return o.split(c)
-	}
-	out := make([]float64, len(o.list))
-	volume := dotted(o.volume, c)
-	for i, mode := range o.list {
-		load := o.spring * volume * dotted(o.volume, mode.Shape)
-		for k, p := range mode.Shape {
-			load += o.stiff[k] * p * c[k]
-		}
-		out[i] = load / o.strain[i]
-	}
-	return out
-}
-
-// struck gives the velocities after an impulse, momentum per area over sigma.
-func (o *wetOrder) struck(p []float64, unit float64) []float64 {
-	out := make([]float64, len(o.list))
-	for i, mode := range o.list {
-		sum := 0.0
-		for k, s := range mode.Shape {
-			sum += o.norm[k] * s * p[k]
-		}
-		omega := mode.Omega * unit
-		out[i] = sum * omega * omega / o.strain[i]
-	}
-	return out
-}
-
-// split solves the least-squares problem of writing c in the modes, in the
-// norm of G, by Cholesky's method. Modes of a cavity can have nearly the same
-// film shape; a ridge of 1e-10 keeps their amplitudes bounded.
-func (o *wetOrder) split(c []float64) []float64 {
-	n := len(o.list)
-	gram := make([][]float64, n)
-	x := make([]float64, n)
-	for i := range gram {
-		gram[i] = make([]float64, i+1)
-		for k := range gram[i] {
-			for q, s := range o.stiff {
-				gram[i][k] += s * o.list[i].Shape[q] * o.list[k].Shape[q]
+		var blocks [2]float64
+		last := 0
+		for i := range s.moves.modes {
+			if k := &s.moves.modes[i]; k.m == m {
+				last = max(last, k.n)
 			}
 		}
-		gram[i][i] *= 1 + 1e-10
-		for q, s := range o.stiff {
-			x[i] += s * o.list[i].Shape[q] * c[q]
-		}
-	}
-	for i := range n {
-		for k := 0; k <= i; k++ {
-			sum := gram[i][k]
-			for q := range k {
-				sum -= gram[i][q] * gram[k][q]
+		for i := range s.moves.modes {
+			k := &s.moves.modes[i]
+			if k.m != m {
+				continue
 			}
-			if i == k {
-				gram[i][i] = math.Sqrt(math.Max(sum, 1e-300))
-			} else {
-				gram[i][k] = sum / gram[k][k]
+			energy := k.norm * (k.va*k.va + k.vb*k.vb)
+			held += energy
+			if 2*k.n > last {
+				blocks[0] += energy
+			} else if 4*k.n > last {
+				blocks[1] += energy
 			}
 		}
-	}
-	for i := range n {
-		for k := range i {
-			x[i] -= gram[i][k] * x[k]
+		most := math.Max(0, whole-held)
+		if last >= 4 && blocks[1] > 0 {
+			ratio := math.Min(math.Max(blocks[0]/blocks[1], 0.5), 0.9)
+			most = math.Min(most, blocks[0]*ratio/(1-ratio))
 		}
-		x[i] /= gram[i][i]
+		left += most
 	}
-	for i := n - 1; i >= 0; i-- {
-		for k := i + 1; k < n; k++ {
-			x[i] -= gram[k][i] * x[k]
-		}
-		x[i] /= gram[i][i]
-	}
-	return x
+	return left
 }
 
-func dotted(a, b []float64) float64 {
-	sum := 0.0
-	for i, v := range a {
-		sum += v * b[i]
+// leftOut returns the integral of |f - g|^2 (p = 0) or |grad (f-g)|^2 (p = 1) for
+// an f of which the integral of the square is whole and coefficients are given,
+// and a g within the basis.
+func leftOut(b *disc.Basis, whole float64, f, g []float64, p int) float64 {
+	both := make([]float64, len(f))
+	for i := range both {
+		both[i] = f[i] - g[i]
 	}
-	return sum
+	// What f has beyond the basis, and the difference within.
+	return math.Max(0, whole-b.Roughness(f, p)) + b.Roughness(both, p)
+}
+
+// edgeMass is the largest mass, relative to that of the sheet alone, among the
+// last modes of every order and all of the last order.
+func (w *Wet) edgeMass(b *disc.Basis, unit float64) float64 {
+	most := 1.0
+	for m := 0; m <= b.M; m++ {
+		list := w.Orders[m]
+		if m < b.M {
+			list = list[len(list)-1:]
+		}
+		for _, mode := range list {
+			sheet, omega := 0.0, mode.Omega*unit
+			for k, p := range mode.Shape {
+				sheet += b.Norm(m, k+1) * p * p
+			}
+			most = math.Max(most, mode.Strain/(omega*omega)/sheet)
+		}
+	}
+	return most
 }
