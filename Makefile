@@ -7,9 +7,10 @@
 # make generate  the contract: JSON Schema and TypeScript types of every call
 # make accuracy  the accuracy table of the Bessel functions
 # make fuzz      every fuzz target for FUZZTIME (10s) each
+# make size      what the pages weigh, against the budget
 # make clean     take away what was built and fetched
 
-.PHONY: run build test check browser bench generate accuracy fuzz clean
+.PHONY: run build test check browser bench generate accuracy fuzz size clean
 .PHONY: format vet test-go test-wasm types test-js chromium scipy
 
 run: build
@@ -23,7 +24,7 @@ site/node_modules/.stamp: site/package.json site/package-lock.json site/.npmrc
 	cd site && npm ci
 	@touch $@
 
-test: check build browser
+test: check build size browser
 
 check: format vet test-go test-wasm types test-js
 
@@ -53,6 +54,9 @@ test-js: site/node_modules/.stamp
 T = site/tests/*.test.mjs
 browser: site/node_modules/.stamp chromium
 	node --test --test-concurrency=1 --test-timeout=600000 $(T)
+
+size:
+	node site/tools/size.mjs
 
 generate: site/node_modules/.stamp
 	go run ./site/contract

@@ -90,7 +90,7 @@ func costSteps(doc *diaphragm.Diaphragm, m, n int) ([]CostStep, error) {
 		without []Effect
 	}{{EffectMasses, "+ attached masses", []Effect{EffectUnevenness}}, {EffectUnevenness, "+ unevenness", nil}} {
 		uneven, ok := unevenOf(doc, e.without)
-		if !ok || !slices.Contains(effectsOf(doc), e.effect) {
+		if !coupledHere || !ok || !slices.Contains(effectsOf(doc), e.effect) {
 			continue
 		}
 		coupled, _, _, err := solveCoupled(real, effects, uneven)

@@ -47,7 +47,7 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 		return nil, err
 	}
 	result := &ModesResult{Applies: effectsOf(doc)}
-	if uneven, ok := unevenOf(doc, request.Without); ok {
+	if uneven, ok := unevenOf(doc, request.Without); coupledHere && ok {
 		coupled, complete, notes, err := solveCoupled(real, effects, uneven)
 		if err != nil {
 			return nil, err
@@ -80,6 +80,10 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 		result.MassRatio = state.Density * doc.Ring.Radius / sigma
 	}
 	result.Cautions = append(effectCautions(doc, request.Without), hubCautions(doc)...)
+	if _, uneven := unevenOf(doc, nil); uneven && !coupledHere {
+		result.Cautions = append(result.Cautions, "Uneven tension, the ring's being out of round and attached masses are not in these frequencies: "+
+			"the browser computes the even diaphragm. A script in Go computes them too (For scripts).")
+	}
 	return result, nil
 }
 
@@ -118,10 +122,10 @@ func effectsOf(doc *diaphragm.Diaphragm) []Effect {
 	if upper == diaphragm.FaceCavity || lower == diaphragm.FaceCavity {
 		list = append(list, EffectCavity)
 	}
-	if len(doc.Attached.Patches)+len(doc.Attached.Strips) > 0 {
+	if coupledHere && len(doc.Attached.Patches)+len(doc.Attached.Strips) > 0 {
 		list = append(list, EffectMasses)
 	}
-	if len(fieldOf(doc)) > 0 || doc.Ring.OutOfRound != 0 {
+	if coupledHere && len(fieldOf(doc)) > 0 || coupledHere && doc.Ring.OutOfRound != 0 {
 		list = append(list, EffectUnevenness)
 	}
 	return list
@@ -185,7 +189,7 @@ func runShape(_ context.Context, request *ShapeRequest) (*ShapeResult, error) {
 	if request.Document == nil {
 		return drawShape(request, modes.NewShape(request.M, request.N, request.Orientation)), nil
 	}
-	if uneven, ok := unevenOf(request.Document, request.Without); ok {
+	if uneven, ok := unevenOf(request.Document, request.Without); coupledHere && ok {
 		mode, err := coupledModeOf(request, uneven)
 		if err != nil {
 			return nil, err

@@ -1,0 +1,4 @@
+package engine
+
+// coupledHere: see coupled.go.
+const coupledHere = false
