@@ -3,8 +3,6 @@ package response
 import (
 	"context"
 	"math"
-
-	"hoopsheet/core/disc"
 )
 
 // pictures are the frames on the display grid.
@@ -38,7 +36,8 @@ func drawFrames(ctx context.Context, c *Case, moves *motion, unit float64, repor
 		motion:   make([]float32, c.Frames*size),
 		envelope: make([]float32, size),
 	}
-	frame := newFrame(moves, table)
+	values := make([]float64, size)
+	walk := newWalk(moves, c.Duration/unit/float64(c.Frames-1))
 	var steepest float64
 	for f := range c.Frames {
 		if f%8 == 0 {
@@ -50,76 +49,60 @@ func drawFrames(ctx context.Context, c *Case, moves *motion, unit float64, repor
 		share := float64(f) / float64(c.Frames-1)
 		t := share * c.Duration / unit
 		p.times[f] = float32(share * c.Duration)
-		frame.at(t)
-		dst := p.motion[f*size:][:size]
-		for i, w := range frame.values {
-			dst[i] = float32(w)
-			if w = math.Abs(w); w > float64(p.envelope[i]) {
-				p.envelope[i] = float32(w)
-			}
-		}
-		if i, value := frame.largest(); value > p.best.value {
+		table.Synthesise(values, walk.coef)
+		if i, value := p.take(f, values); value > p.best.value {
 			p.best = candidate{value: value, r: radii[i/c.Angles], theta: 2 * math.Pi * float64(i%c.Angles) / float64(c.Angles), t: t}
 		}
-		steepest = math.Max(steepest, frame.steepest())
+		steepest = max(steepest, steepestOf(values, radii, c.Angles))
+		walk.next()
 	}
 	p.steepest = steepest / c.Sheet.Radius
 	report(1)
 	return p, nil
 }
 
-// frame computes the displacement on a grid, one instant after another.
-type frame struct {
-	moves  *motion
-	table  *disc.Table
-	coef   []float64
-	values []float64
-}
-
-func newFrame(moves *motion, table *disc.Table) *frame {
-	return &frame{
-		moves:  moves,
-		table:  table,
-		coef:   make([]float64, moves.basis.Len()),
-		values: make([]float64, table.Len()),
-	}
-}
-
-// at computes the frame at the time t. It does not allocate.
-func (f *frame) at(t float64) {
-	f.moves.amplitudes(f.coef, t)
-	f.table.Synthesise(f.values, f.coef)
-}
-
-// largest returns the place and size of the largest value.
-func (f *frame) largest() (index int, value float64) {
-	return largestOf(f.values)
-}
-
-func largestOf(values []float64) (index int, value float64) {
+// take keeps frame number f and returns the place and size of its largest value.
+func (p *pictures) take(f int, values []float64) (index int, largest float64) {
+	dst := p.motion[f*len(values):][:len(values)]
+	envelope := p.envelope[:len(values)]
 	for i, w := range values {
-		if w = math.Abs(w); w > value {
-			index, value = i, w
+		dst[i] = float32(w)
+		size := math.Abs(w)
+		if size > largest {
+			index, largest = i, size
+		}
+		if size := float32(size); size > envelope[i] {
+			envelope[i] = size
 		}
 	}
-	return index, value
+	return index, largest
 }
 
-// steepest returns the largest slope between neighbours of the grid, per unit
+// largestOf returns the place and size of the largest value.
+func largestOf(values []float64) (index int, largest float64) {
+	for i, w := range values {
+		if size := math.Abs(w); size > largest {
+			index, largest = i, size
+		}
+	}
+	return index, largest
+}
+
+// steepestOf returns the largest slope between neighbours of a grid, per unit
 // of the ring radius.
-func (f *frame) steepest() float64 {
-	angles := f.table.NTheta
-	radii := f.table.R
+func steepestOf(values, radii []float64, angles int) float64 {
 	var most float64
 	for i := 1; i < len(radii); i++ {
-		inner := f.values[(i-1)*angles:][:angles]
-		row := f.values[i*angles:][:angles]
+		row := values[i*angles:][:angles]
+		inner := values[(i-1)*angles:][:len(row)]
 		out := 1 / (radii[i] - radii[i-1])
 		around := float64(angles) / (2 * math.Pi * radii[i])
-		before := row[angles-1]
+		before := row[len(row)-1]
 		for k, w := range row {
 			dr, dt := (w-inner[k])*out, (w-before)*around
-			most = math.Max(most, dr*dr+dt*dt)
+			if square := dr*dr + dt*dt; square > most {
+				most = square
+			}
 			before = w
 		}
 	}

@@ -147,28 +147,69 @@ func fundamental(omega, zeta, t float64) (c, s float64) {
 
 // amplitudes writes the coefficients at the time t.
 func (mo *motion) amplitudes(coef []float64, t float64) {
-	clear(coef)
+	parts := make([]part, len(mo.modes))
 	for i := range mo.modes {
 		k := &mo.modes[i]
 		c, s := fundamental(k.omega, k.zeta, t)
 		s /= k.omega
-		mo.place(coef, k, c*k.a+s*k.va, c*k.b+s*k.vb)
+		parts[i] = part{c*k.a + s*k.va, c*k.b + s*k.vb}
+	}
+	mo.fill(coef, parts)
+}
+
+// speeds writes the coefficients of the velocity at the start, m per a/c.
+func (mo *motion) speeds(coef []float64) {
+	parts := make([]part, len(mo.modes))
+	for i := range mo.modes {
+		parts[i] = part{mo.modes[i].va, mo.modes[i].vb}
+	}
+	mo.fill(coef, parts)
+}
+
+// part is the cosine and the sine part of a mode.
+type part struct{ c, s float64 }
+
+// fill writes the coefficients of the modes times their parts. It does not
+// allocate.
+func (mo *motion) fill(coef []float64, parts []part) {
+	clear(coef)
+	// Zero by zero, cosine before sine; wet modes of one order are summed apart.
+	var cosines, sines [MostCircles]float64
+	for i := 0; i < len(mo.modes); {
+		k := &mo.modes[i]
+		if k.row == nil {
+			coef[k.index], coef[k.index+1] = parts[i].c, parts[i].s
+			i++
+			continue
+		}
+		cosine, sine := cosines[:len(k.row)], sines[:len(k.row)]
+		clear(cosine)
+		clear(sine)
+		order := k.m
+		for ; i < len(mo.modes) && mo.modes[i].m == order; i++ {
+			addTo(cosine, sine, mo.modes[i].row, parts[i])
+		}
+		dst := coef[mo.basis.Index(order, 1, disc.Cos):]
+		for n, c := range cosine {
+			dst[2*n], dst[2*n+1] = c, sine[n]
+		}
 	}
 }
 
-// place adds a mode of cosine amplitude q and sine amplitude p to the
-// coefficients.
-func (mo *motion) place(coef []float64, k *modal, q, p float64) {
-	if k.row == nil {
-		coef[k.index] += q
-		coef[k.index+1] += p
+// addTo adds the multiples of a row of the same length.
+func addTo(cosine, sine, row []float64, by part) {
+	sine, row = sine[:len(cosine)], row[:len(cosine)]
+	c, s := by.c, by.s
+	if s == 0 {
+		for n := range cosine {
+			cosine[n] += c * row[n]
+		}
 		return
 	}
-	first := mo.basis.Index(k.m, 1, disc.Cos)
-	step := mo.basis.Index(k.m, 2, disc.Cos) - first
-	for n, s := range k.row {
-		coef[first+n*step] += q * s
-		coef[first+n*step+1] += p * s
+	for n := range cosine {
+		v := row[n]
+		cosine[n] += c * v
+		sine[n] += s * v
 	}
 }
 
@@ -219,15 +260,6 @@ func (mo *motion) energy(t float64) (potential, kinetic float64) {
 		kinetic += k.norm * (dq*dq + dp*dp)
 	}
 	return potential, kinetic
-}
-
-// speeds writes the coefficients of the velocity at the start, m per a/c.
-func (mo *motion) speeds(coef []float64) {
-	clear(coef)
-	for i := range mo.modes {
-		k := &mo.modes[i]
-		mo.place(coef, k, k.va, k.vb)
-	}
 }
 
 // strain bounds the strain energy of the sheet alone at any time, in units of

@@ -115,10 +115,12 @@ func besselAround(m int, x float64) (j [5]float64) {
 		}
 		return j
 	}
-	j[2], j[3] = bessel.JInt(m, x), bessel.JInt(m+1, x)
-	// Downwards the recurrence is stable; the one step upwards loses what
-	// J_{m+2} is smaller than J_m, which does not matter beside J_m.
+	// One evaluation gives J_m and J_m' = (m/x) J_m - J_{m+1}. Downwards the
+	// recurrence is stable; the steps upwards lose what J_{m+1} and J_{m+2} are
+	// smaller than J_m, which does not matter beside J_m.
 	over := 2 / x
+	value, slope := bessel.JAndPrime(float64(m), x)
+	j[2], j[3] = value, float64(m)/x*value-slope
 	j[1] = float64(m)*over*j[2] - j[3]
 	j[0] = float64(m-1)*over*j[1] - j[2]
 	j[4] = float64(m+1)*over*j[3] - j[2]

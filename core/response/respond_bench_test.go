@@ -3,6 +3,9 @@ package response
 import (
 	"context"
 	"testing"
+
+	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/modes"
 )
 
 func benchCase() *Case {
@@ -33,10 +36,28 @@ func BenchmarkRespondFrame(b *testing.B) {
 	for i := range radii {
 		radii[i] = float64(i) / float64(c.Radii-1)
 	}
-	f := newFrame(begin.moves, takeTable(begin.moves.basis, radii, c.Angles))
-	t := 0.0
+	table := takeTable(begin.moves.basis, radii, c.Angles)
+	walk, values := newWalk(begin.moves, 0.01), make([]float64, table.Len())
 	for b.Loop() {
-		f.at(t)
-		t += 0.01
+		walk.next()
+		table.Synthesise(values, walk.coef)
+	}
+}
+
+// BenchmarkRespondWet is the same sheet in air that is 70 times its mass.
+func BenchmarkRespondWet(b *testing.B) {
+	c := benchCase()
+	real := modes.Real{Radius: 1.5, Tension: 200, ArealDensity: 0.032, Remainder: 0.01,
+		Upper: face(diaphragm.FaceBaffled, 0.75), Lower: face(diaphragm.FaceBaffled, 0.75)}
+	still, err := modes.Solve(real, modes.Request{MaxM: c.Orders, MaxN: c.Circles, Effects: stillFluid})
+	if err != nil {
+		b.Fatal(err)
+	}
+	c.Wet = NewWet(still, nil, false, c.Orders, c.Circles)
+	c.Duration = 6 * c.period()
+	for b.Loop() {
+		if _, problems, err := Respond(context.Background(), c, func(float64) {}); err != nil || len(problems) > 0 {
+			b.Fatal(problems, err)
+		}
 	}
 }

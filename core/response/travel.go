@@ -20,6 +20,9 @@ const (
 	// omittedShare of the summed sizes of the modes, the fastest ones, is left
 	// out of the search for places that are then refined with all of them.
 	omittedShare = 0.08
+	// wetNeighbours is how many Bessel functions beyond its own a wet mode keeps
+	// in the search: later ones are below 2 % of it.
+	wetNeighbours = 4
 	// searchSteps per period of the fastest mode of the search, and points per
 	// wavelength of it: at the worst phase an extreme of it alone is seen at
 	// cos(pi/4) of its height.
@@ -67,9 +70,9 @@ func newSearch(mo *motion, end float64) *search {
 	return s
 }
 
-// slower returns the motion without its fastest modes, as far as these are
-// small together.
-func (mo *motion) slower() *motion {
+// slowerThan returns the angular frequency at and above which the modes together
+// have at most the given share of all sizes.
+func (mo *motion) slowerThan(share float64) float64 {
 	order := slices.Clone(mo.modes)
 	sorting.By(order, func(p, q modal) int {
 		switch {
@@ -87,11 +90,18 @@ func (mo *motion) slower() *motion {
 	cut := math.Inf(1)
 	for i := range order {
 		left += order[i].size
-		if left > omittedShare*total {
+		if left > share*total {
 			break
 		}
 		cut = order[i].omega
 	}
+	return cut
+}
+
+// slower returns the motion without its fastest modes, as far as these are
+// small together.
+func (mo *motion) slower() *motion {
+	cut := mo.slowerThan(omittedShare)
 	kept := &motion{}
 	highest, circles := 0, 1
 	for _, mode := range mo.modes {
@@ -99,7 +109,8 @@ func (mo *motion) slower() *motion {
 			kept.modes = append(kept.modes, mode)
 			highest, circles = max(highest, mode.m), max(circles, mode.n)
 			if mode.row != nil {
-				circles = mo.basis.N // a wet mode has them all
+				// Of a wet mode, the Bessel functions about its own.
+				circles = min(mo.basis.N, max(circles, mode.n+wetNeighbours))
 			}
 		}
 	}
@@ -107,6 +118,9 @@ func (mo *motion) slower() *motion {
 	for i := range kept.modes {
 		mode := &kept.modes[i]
 		mode.index = kept.basis.Index(mode.m, min(mode.n, circles), disc.Cos)
+		if mode.row != nil {
+			mode.row = mode.row[:circles]
+		}
 	}
 	return kept
 }
@@ -156,6 +170,7 @@ type walk struct {
 	moves    *motion
 	steppers []stepper
 	c, s     []float64
+	parts    []part
 	coef     []float64
 }
 
@@ -165,6 +180,7 @@ func newWalk(mo *motion, step float64) *walk {
 		steppers: make([]stepper, len(mo.modes)),
 		c:        make([]float64, len(mo.modes)),
 		s:        make([]float64, len(mo.modes)),
+		parts:    make([]part, len(mo.modes)),
 		coef:     make([]float64, mo.basis.Len()),
 	}
 	for i := range mo.modes {
@@ -183,12 +199,12 @@ func (w *walk) next() {
 }
 
 func (w *walk) fill() {
-	clear(w.coef)
-	for i := range w.moves.modes {
+	for i := range w.parts {
 		k := &w.moves.modes[i]
 		c, s := w.c[i], w.s[i]/k.omega
-		w.moves.place(w.coef, k, c*k.a+s*k.va, c*k.b+s*k.vb)
+		w.parts[i] = part{c*k.a + s*k.va, c*k.b + s*k.vb}
 	}
+	w.moves.fill(w.coef, w.parts)
 }
 
 // largestTravel finds the largest displacement anywhere on the sheet and

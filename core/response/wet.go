@@ -64,7 +64,7 @@ func (c *Case) wetProblem() string {
 			return "An order of the diaphragm has no modes."
 		}
 		for _, mode := range list {
-			if len(mode.Shape) != len(c.Wet.Orders[0][0].Shape) || len(mode.Shape) < c.Circles || !(mode.Strain > 0 && mode.Omega > 0 && mode.FilmShare > 0) {
+			if len(mode.Shape) != len(c.Wet.Orders[0][0].Shape) || len(mode.Shape) < c.Circles || len(mode.Shape) > MostCircles || !(mode.Strain > 0 && mode.Omega > 0 && mode.FilmShare > 0) {
 				return "The modes of the diaphragm are not complete."
 			}
 		}
