@@ -191,6 +191,9 @@ for (const [what, script] of [
     // f(0,1) = j01 / (2 pi a) sqrt(T / sigma), as in specify.test.mjs.
     const f = (2.404825557695773 / (2 * Math.PI * 0.3)) * Math.sqrt(310 / 0.0695);
     await text(page.locator('[data-derived="f01"] .number'), new RegExp(f.toPrecision(4).replace('.', '\\.')));
+    // The tab carries the work from page to page, though no further.
+    await visit.open('modes.html', page);
+    await value(box(page, 'ring.radius'), /^0\.3$/);
     await visit.open('records.html', page);
     await text(panel(page).locator('[role=alert]'), /\.$/);
     await page.locator('hoop-bar [data-keeping=unsaveable]').waitFor();

@@ -122,6 +122,53 @@ test('what was typed survives a crash right after the pause', async () => {
   }
 });
 
+test('typing and going on in the same moment loses nothing', async () => {
+  // The page is left before the pause has passed, again and again: by a link, by a reload, by another address.
+  const ways = [
+    () => page.locator('nav.chapters').getByRole('link', { name: 'Cautions', exact: true }).click(),
+    () => page.reload(),
+    () => visit.open('method.html', page),
+  ];
+  for (let i = 0; i < 6; i++) {
+    await box(page, 'place').fill(`hall ${i}`);
+    await box(page, 'ring.radius').fill(`${40 + i} parsec`);
+    await ways[i % ways.length]();
+    await saved(page);
+    await visit.open('specify.html', page);
+    await saved(page);
+    assert.equal(await box(page, 'place').inputValue(), `hall ${i}`);
+    assert.equal(await box(page, 'ring.radius').inputValue(), `${40 + i} parsec`);
+  }
+  await page.locator('hoop-bar [data-keeping=conflict]').waitFor({ state: 'detached' });
+});
+
+test('what is typed while a revision is being kept is in the working copy', async () => {
+  const bar = page.locator('hoop-bar');
+  await bar.getByRole('button', { name: 'Keep this revision' }).click();
+  await page.evaluate(() => {
+    // In one breath: the button, and a keystroke in a field.
+    const find = (root, selector) => {
+      for (const element of root.querySelectorAll('*')) {
+        const found = element.matches(selector) ? element : element.shadowRoot && find(element.shadowRoot, selector);
+        if (found) {
+          return found;
+        }
+      }
+      return null;
+    };
+    find(document, 'hoop-bar').shadowRoot.querySelector('form').requestSubmit();
+    const input = find(document, '[data-field="place"]').shadowRoot.querySelector('#box');
+    input.value = 'typed meanwhile';
+    input.dispatchEvent(new InputEvent('input', { bubbles: true }));
+  });
+  await text(bar.locator('.line'), /revision 1, changed since/);
+  await saved(page);
+  await page.reload();
+  await saved(page);
+  assert.equal(await box(page, 'place').inputValue(), 'typed meanwhile');
+  await text(bar.locator('.line'), /revision 1, changed since/);
+});
+
 test('closing the page right after typing loses nothing', async () => {
   await box(page, 'notes').fill('written in the last moment');
   await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving], hoop-bar [data-keeping=saved]').waitFor();

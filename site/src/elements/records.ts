@@ -39,12 +39,14 @@ export class HoopRecords extends LitElement {
   override connectedCallback(): void {
     super.connectedCallback();
     session.addEventListener('opened', this.changed);
+    session.addEventListener('kept', this.changed);
     void session.start().then(this.changed);
   }
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     session.removeEventListener('opened', this.changed);
+    session.removeEventListener('kept', this.changed);
   }
 
   private async list(): Promise<void> {

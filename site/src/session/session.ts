@@ -13,6 +13,7 @@ import { SaveRequest } from '../shell/save-request.js';
 import { addressDiaphragm, addressedDiaphragm, lastDiaphragm, rememberDiaphragm } from './remembered.js';
 import { noTeam, readTeam, type TeamChoices } from './team.js';
 import { Tabs, type TabNews } from './tabs.js';
+import { dropUnsaved, putUnsaved, stampAfter, takeUnkept, takeUnsaved, type Unsaved } from './unsaved.js';
 
 /** Pause after the last change before the working copy is written, ms. */
 const pause = 400;
@@ -60,6 +61,8 @@ export class Session extends EventTarget {
   private stamp = 0;
   private kept = false;
   private waiting: Edit[] = [];
+  /** Sent to the engine and not yet answered. */
+  private asked: readonly Edit[] = [];
   private editing: Promise<void> | null = null;
   private saving: Promise<void> | null = null;
   private timer: ReturnType<typeof setTimeout> | undefined;
@@ -75,7 +78,8 @@ export class Session extends EventTarget {
         void this.flush();
       }
     });
-    addEventListener('pagehide', () => void this.flush());
+    addEventListener('pagehide', () => this.leave());
+    addEventListener('pageshow', (event) => event.persisted && dropUnsaved());
     addEventListener(SaveRequest.type, (event) => (event as SaveRequest).waitUntil(this.flush()));
   }
 
@@ -133,9 +137,11 @@ export class Session extends EventTarget {
     if (demo.kind === 'result') {
       this.document = demo.result.document;
       this.kept = false;
+      this.carryOn(takeUnkept());
       this.keeping = 'unsaveable';
       this.message = sentences(why);
       await this.refresh();
+      this.dispatchEvent(new Event('opened'));
       return;
     }
     this.keeping = 'failed';
@@ -202,8 +208,33 @@ export class Session extends EventTarget {
     if (this.options.ownsAddress) {
       addressDiaphragm(opened.document.id);
     }
+    const unsaved = takeUnsaved(opened);
+    this.carryOn(unsaved && { ...unsaved, document: { ...unsaved.document, revision: opened.document.revision }, stamp: stampAfter(unsaved, opened) });
     await this.refresh();
     this.dispatchEvent(new Event('opened'));
+  }
+
+  /** Goes on where the page before this one was left. */
+  private carryOn(unsaved: Unsaved | null): void {
+    if (!unsaved) {
+      return;
+    }
+    const { document, drafts, units, desk, stamp, edits } = unsaved;
+    Object.assign(this, { document, drafts, units, desk, stamp });
+    if (edits.length > 0) {
+      void this.edit(...edits);
+    }
+    this.touch();
+  }
+
+  /** The page is being left: what the store does not have yet waits in the tab for the next page. */
+  private leave(): void {
+    const { document, drafts, units, desk, kept, stamp } = this;
+    const edits = [...this.asked, ...this.waiting];
+    if (document && (this.dirty || this.saving || edits.length > 0)) {
+      putUnsaved({ document, drafts, units, desk, kept, stamp, shared: this.shared || this.keeping === 'conflict', edits });
+    }
+    void this.flush();
   }
 
   /** Rows of the form for the document as it is. */
@@ -225,7 +256,9 @@ export class Session extends EventTarget {
     while (this.waiting.length > 0 && this.document) {
       const edits = this.waiting;
       this.waiting = [];
+      this.asked = edits;
       const answer = await this.ask(edits);
+      this.asked = [];
       if (answer.kind === 'superseded') {
         // The engine was restarted under the call: nothing typed is lost.
         this.waiting = [...edits, ...this.waiting];
@@ -349,10 +382,26 @@ export class Session extends EventTarget {
     if (!this.document || this.keeping !== 'saved') {
       return;
     }
-    const answer = await engine.store('records.keep', { id: this.document.id, stamp: this.stamp, note });
+    this.saving = this.sendKeep(this.document.id, note);
+    await this.saving;
+    if (this.due) {
+      void this.flush();
+    }
+  }
+
+  private async sendKeep(id: string, note: string): Promise<void> {
+    const answer = await engine.store('records.keep', { id, stamp: this.stamp, note });
+    while (this.editing) {
+      await this.editing;
+    }
+    this.saving = null;
     if (answer.kind === 'result') {
-      await this.adopt(answer.result);
+      // What was typed meanwhile stays, and is saved after the revision.
+      const { document, stamp, unkept, revisions } = answer.result;
+      Object.assign(this, { document: { ...this.document, revision: document.revision }, stamp, revisions, unkept: unkept || this.dirty });
       this.tabs.saved();
+      this.tell();
+      this.dispatchEvent(new Event('kept'));
     } else {
       this.message = sentences(answer);
       this.keeping = hasCode(answer, 'conflict') ? 'conflict' : 'failed';
