@@ -53,7 +53,7 @@ test-js: site/node_modules/.stamp
 
 T = site/tests/*.test.mjs
 browser: site/node_modules/.stamp chromium
-	node --test --test-concurrency=1 --test-timeout=600000 $(T)
+	node --test --test-concurrency=2 --test-timeout=600000 $(T)
 
 size:
 	node site/tools/size.mjs

@@ -66,10 +66,14 @@ test('the table shows what the files hold', async () => {
   const tsv = copied.trimEnd().split(/\r?\n/);
   assert.equal(lines.length, 1 + await rows().count());
   assert.equal(tsv.length, lines.length);
-  const [m, n, frequency] = tsv[1].split('\t');
+  const heads = tsv[0].split('\t');
+  const cells = tsv[1].split('\t');
+  const cell = (head) => cells[heads.indexOf(head)];
   const first = await rows().first().innerText();
-  assert.match(first, new RegExp(`\\(${m}, ${n}\\)`));
-  assert.ok(first.includes(`${Number(frequency).toPrecision(4)} Hz`), `${first} against ${frequency}`);
+  assert.match(first, new RegExp(`\\(${cell('m')}, ${cell('n')}\\)`));
+  for (const head of ['frequency, Hz', 'ideal, Hz']) {
+    assert.ok(first.includes(`${Number(cell(head)).toPrecision(4)} Hz`), `${first} against ${head} ${cell(head)}`);
+  }
 });
 
 test('distance to each line is in words, and follows what is typed', async () => {

@@ -9,7 +9,7 @@ import { chromium } from 'playwright-core';
 
 import { executablePath, flags } from './chromium.mjs';
 import { serveSite, siteDir } from './engine-page.mjs';
-import { root } from './server.mjs';
+import { root, serve } from './server.mjs';
 
 export { siteDir };
 
@@ -21,10 +21,10 @@ export const patience = Number(process.env.PATIENCE ?? 40_000);
 
 /**
  * One server and one browser for a test file. Each `visit` is a fresh profile; `close` ends everything. `args` are
- * further flags of the browser.
+ * further flags of the browser; `dir` is another copy of the site.
  */
-export async function openSite({ prefix = '/', args = [] } = {}) {
-  const server = await serveSite({ prefix });
+export async function openSite({ prefix = '/', args = [], dir } = {}) {
+  const server = dir ? await serve(dir, { prefix }) : await serveSite({ prefix });
   const browser = await chromium.launch({ executablePath, args: [...flags, ...args] });
   return {
     server,
