@@ -107,7 +107,7 @@ func TestIdealRefusesNonsense(t *testing.T) {
 
 func TestNodalCircles(t *testing.T) {
 	// Quotients of the zeros in Abramowitz & Stegun, Table 9.5: 2.4048255577,
-	// 5.5200781103, 8.6537279129; 3.8317059702, 7.0155866698. A lecture text
+	// 5.5200781103, 8.6537279129; 3.8317059702, 7.0155866698. A printed text
 	// prints 42.6 % for (0,2).
 	want := map[[2]int][]float64{
 		{0, 1}: {},
