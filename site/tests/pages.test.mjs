@@ -22,7 +22,7 @@ after(async () => {
 /** What tells that a page has its answers; pages of prose have them at once. */
 const ready = {
   'index.html': 'hoop-start canvas', 'specify.html': '[data-field="ring.radius"]', 'modes.html': '#mode-table', 'respond.html': '#history canvas',
-  'tap.html': '#peak-table', 'records.html': '#record-table', 'hand-over.html': '#figures', 'numbers.html': 'hoop-numbers table',
+  'tap.html': '#peak-table', 'records.html': '#record-table', 'hand-over.html': '#figures', 'numbers.html': 'hoop-numbers #summary',
 };
 
 const names = (await readdir(siteDir)).filter((file) => file.endsWith('.html') && file !== 'hoopsheet-single.html');
