@@ -8,12 +8,16 @@ type CostsRequest struct {
 	Document diaphragm.Diaphragm `json:"document"`
 	M        int                 `json:"m"`
 	N        int                 `json:"n"`
+	// Upper asks for the higher of a split pair.
+	Upper bool `json:"upper,omitempty"`
 }
 
 // CostsResult lists the effects one after another, and the sensitivities.
 type CostsResult struct {
 	Steps         []CostStep    `json:"steps"`
 	Sensitivities []Sensitivity `json:"sensitivities"`
+	// Note says what could not be listed; empty otherwise.
+	Note string `json:"note,omitempty"`
 }
 
 // CostStep is one more effect taken into account.

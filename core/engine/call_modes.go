@@ -12,6 +12,9 @@ type ModesRequest struct {
 	Count int `json:"count"`
 	// Without names effects to leave out.
 	Without []Effect `json:"without,omitempty"`
+	// Quick leaves out uneven tension, out-of-round and attached masses, for a
+	// list at once; the result then says that it is rough.
+	Quick bool `json:"quick,omitempty"`
 }
 
 // ModesResult is the mode table.
@@ -23,10 +26,26 @@ type ModesResult struct {
 	AirDensity float64 `json:"airDensity"`
 	MassRatio  float64 `json:"massRatio"`
 	Modes      []Mode  `json:"modes"`
+	// Rough is true where a quick list leaves something out.
+	Rough bool `json:"rough,omitempty"`
+	// Smallest and Largest principal tension over the sheet, where it is uneven.
+	Smallest *Tautness `json:"smallest,omitempty"`
+	Largest  *Tautness `json:"largest,omitempty"`
 	// Applies lists the effects that this diaphragm has, in or left out.
 	Applies     []Effect `json:"applies"`
 	Assumptions []string `json:"assumptions"`
 	Cautions    []string `json:"cautions"`
+}
+
+// Tautness is a principal tension and where it is.
+type Tautness struct {
+	// Tension, N/m, and its Share of the mean.
+	Tension float64 `json:"tension"`
+	Share   float64 `json:"share"`
+	// Radius, r/a, Angle and Direction of the pull, rad.
+	Radius    float64 `json:"radius"`
+	Angle     float64 `json:"angle"`
+	Direction float64 `json:"direction"`
 }
 
 // Mode is one line of the table.
@@ -36,11 +55,14 @@ type Mode struct {
 	N int `json:"n"`
 	// Upper marks the higher of a pair that unevenness or masses split; then
 	// Even is the frequency without them, Hz, Split the difference of the pair
-	// over its mean, NodalAngle where the first nodal diameter lies, rad, and
-	// Share the share of the even pair in the mode. All are 0 otherwise.
+	// over its mean, SplitHertz that difference, Partner the frequency of the
+	// other, Hz, NodalAngle where the first nodal diameter lies, rad, and Share
+	// the share of the even pair in the mode. All are 0 otherwise.
 	Upper      bool    `json:"upper"`
 	Even       float64 `json:"even"`
 	Split      float64 `json:"split"`
+	SplitHertz float64 `json:"splitHertz"`
+	Partner    float64 `json:"partner"`
 	NodalAngle float64 `json:"nodalAngle"`
 	Share      float64 `json:"share"`
 	// Frequency, Hz, with the error of the computation, Hz.
@@ -120,6 +142,19 @@ type ShapeResult struct {
 	Raster Numbers `json:"raster"`
 	// Section displacement from the far rim (-1) through the centre to +1.
 	Section Numbers `json:"section"`
+	// Bent is true for a mode whose nodal lines are neither circles nor
+	// diameters: they are where the raster changes sign.
+	Bent bool `json:"bent,omitempty"`
+	// Oval is the half difference of the semi-axes of the ring over its radius,
+	// and OvalAngle the direction of the longer, rad. The raster is drawn as if
+	// the ring were round.
+	Oval      float64 `json:"oval,omitempty"`
+	OvalAngle float64 `json:"ovalAngle,omitempty"`
+	// Hub is the radius of a hub over that of the ring.
+	Hub float64 `json:"hub,omitempty"`
+	// Patches and Strips on the sheet, in units of the ring radius.
+	Patches []PatchOutline `json:"patches,omitempty"`
+	Strips  []StripOutline `json:"strips,omitempty"`
 	// CircleRadii of the nodal circles inside the rim, r/a.
 	CircleRadii []float64 `json:"circleRadii"`
 	// DiameterAngles of the nodal diameters, rad, 0 <= angle < pi.
@@ -134,4 +169,20 @@ type Lobe struct {
 	Angle  float64 `json:"angle"`
 	// Value, -1 to 1.
 	Value float64 `json:"value"`
+}
+
+// PatchOutline is a patch on a drawing, in units of the ring radius and rad.
+type PatchOutline struct {
+	Radius float64 `json:"radius"`
+	Angle  float64 `json:"angle"`
+	Size   float64 `json:"size"`
+	Rigid  bool    `json:"rigid"`
+}
+
+// StripOutline is a strip on a drawing, in units of the ring radius; Angle,
+// rad, is square to it.
+type StripOutline struct {
+	Offset float64 `json:"offset"`
+	Angle  float64 `json:"angle"`
+	Width  float64 `json:"width"`
 }

@@ -27,7 +27,11 @@ func computeFigures(ctx context.Context, document diaphragm.Diaphragm, peaks []d
 		diaphragm.Figure{ID: "mass-ratio", Value: table.MassRatio},
 	)
 	for _, mode := range table.Modes {
-		figures = append(figures, diaphragm.Figure{ID: "f." + strconv.Itoa(mode.M) + "." + strconv.Itoa(mode.N), Value: mode.Frequency})
+		id := "f." + strconv.Itoa(mode.M) + "." + strconv.Itoa(mode.N)
+		if mode.Upper {
+			id += ".upper"
+		}
+		figures = append(figures, diaphragm.Figure{ID: id, Value: mode.Frequency})
 	}
 	if len(peaks) == 0 {
 		return figures, nil, "", nil
@@ -75,8 +79,13 @@ func figureKind(id string) figure {
 	if kind, ok := namedFigures[id]; ok {
 		return kind
 	}
-	if parts := strings.Split(id, "."); len(parts) == 3 && parts[0] == "f" {
-		return figure{"frequency of mode (" + parts[1] + ", " + parts[2] + ")", "Hz"}
+	base, upper := strings.CutSuffix(id, ".upper")
+	if parts := strings.Split(base, "."); len(parts) == 3 && parts[0] == "f" {
+		name := "frequency of mode (" + parts[1] + ", " + parts[2] + ")"
+		if upper {
+			name += ", upper of its pair"
+		}
+		return figure{name, "Hz"}
 	}
 	return figure{"figure " + id, ""}
 }

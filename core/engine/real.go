@@ -4,6 +4,7 @@ import (
 	"hoopsheet/core/air"
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
+	"hoopsheet/core/quantity"
 	"hoopsheet/core/sheet"
 )
 
@@ -96,6 +97,30 @@ func effectAssumptions(doc *diaphragm.Diaphragm, effects modes.Effects, notes []
 		}
 	}
 	return list
+}
+
+// limitCautions warns where the sound of listed modes comes near what is
+// computed.
+func limitCautions(list []modes.RealMode) []string {
+	for i := range list {
+		if mode := &list[i]; !mode.BeyondSound && mode.SoundNumber > 0.8*modes.MaxSoundNumber {
+			return []string{"From " + quantity.FormatNumber(mode.Frequency, 3) + " Hz on the sound waves are nearly as short as the ring is wide: radiation is computed up to " +
+				quantity.FormatNumber(mode.Frequency*modes.MaxSoundNumber/mode.SoundNumber, 3) + " Hz."}
+		}
+	}
+	return nil
+}
+
+// roomWords says how far walls must be from a diaphragm that sounds into the
+// open, by its lowest frequency, Hz; empty without such a face.
+func roomWords(real *modes.Real, lowest float64) []string {
+	for _, face := range []modes.Face{real.Upper, real.Lower} {
+		if (face.Kind == diaphragm.FaceBaffled && face.WallDistance == 0 || face.Kind == diaphragm.FaceOpen) && face.SoundSpeed > 0 && lowest > 0 {
+			return []string{"At the lowest mode a wave of sound is " + quantity.FormatNumber(face.SoundSpeed/lowest, 2) +
+				" m long: walls or a baffle's edge nearer than a quarter of that change its radiation, and those nearer than a diameter its frequency."}
+		}
+	}
+	return nil
 }
 
 // assumptionsOf are those of a diaphragm with all its effects.

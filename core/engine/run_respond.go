@@ -94,7 +94,7 @@ func respondCase(request *RespondRequest) *response.Case {
 
 // respondCautions warns of what the motion leaves out.
 func respondCautions(doc *diaphragm.Diaphragm, without []Effect) []string {
-	list := append(effectCautions(doc, without), hubCautions(doc)...)
+	list := append(effectCautions(doc, without), hubIgnored(doc)...)
 	if _, uneven := unevenOf(doc, nil); uneven {
 		list = append(list, "Uneven tension, the ring's being out of round and attached masses are left out of the motion: it is that of the even diaphragm.")
 	}

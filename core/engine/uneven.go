@@ -4,6 +4,8 @@ import (
 	"encoding/json"
 	"math"
 	"slices"
+	"strconv"
+	"strings"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
@@ -93,91 +95,152 @@ func solveCoupled(real modes.Real, effects modes.Effects, uneven modes.Uneven) (
 // masses where the person can mend it.
 func unevenRefusal(err error) error {
 	text := err.Error()
-	return Fail("tension.harmonics", CodeRange, string(text[0]-'a'+'A')+text[1:]+".")
+	field := "tension.harmonics"
+	for word, path := range map[string]string{"patch ": "attached.patches.", "strip ": "attached.strips."} {
+		if rest, ok := strings.CutPrefix(text, word); ok {
+			if i, err := strconv.Atoi(rest[:max(0, strings.Index(rest, ":"))]); err == nil {
+				field = path + strconv.Itoa(i-1)
+			}
+		}
+	}
+	if strings.HasPrefix(text, "patches") {
+		field = "attached.patches"
+	}
+	if strings.Contains(text, "semi-axes") {
+		field = "ring.outOfRound"
+	}
+	return Fail(field, CodeRange, string(text[0]-'a'+'A')+text[1:]+".")
 }
 
-// coupledLine is the table's line of a mode of an uneven diaphragm.
+// pairSplits is the relative difference from which two modes of a pair are
+// listed apart; below it the computation does not tell them apart.
+const pairSplits = 1e-6
+
+// coupledLines are the table's lines of an uneven diaphragm up to a frequency,
+// Hz.
+func coupledLines(doc *diaphragm.Diaphragm, coupled *modes.Coupled, complete float64, most int) []Mode {
+	var list []Mode
+	for i := range coupled.Modes {
+		mode := &coupled.Modes[i]
+		if mode.Frequency > complete || len(list) == most {
+			break
+		}
+		if mode.Upper && mode.Split < pairSplits {
+			continue
+		}
+		line := coupledLine(doc, mode)
+		if mode.Split >= pairSplits {
+			for k := range coupled.Modes {
+				if other := &coupled.Modes[k]; other.M == mode.M && other.N == mode.N && other.Upper != mode.Upper {
+					line.Partner = other.Frequency
+					line.SplitHertz = math.Abs(other.Frequency - mode.Frequency)
+				}
+			}
+			line.Split, line.NodalAngle = mode.Split, mode.NodalAngle
+		}
+		list = append(list, line)
+	}
+	return list
+}
+
+// coupledLine is the line of one mode by itself.
 func coupledLine(doc *diaphragm.Diaphragm, mode *modes.CoupledMode) Mode {
-	d := mode.Damping
-	line := Mode{
-		M: mode.M, N: mode.N, Upper: mode.Upper,
-		Frequency:   mode.Frequency,
-		Error:       mode.Error,
-		Ideal:       idealFrequency(doc, mode.M, mode.N),
-		Even:        mode.Even,
-		Split:       mode.Split,
-		NodalAngle:  mode.NodalAngle,
-		Share:       mode.Share,
-		Damping:     ModeDamping{Radiation: d.Radiation, Viscous: d.Viscous, Sheet: d.Sheet, Remainder: d.Remainder, Total: d.Total, RadiationKnown: true},
-		NodalLines:  modes.Mode{M: mode.M, N: mode.N}.NodalLines(),
-		Distances:   distances(mode.Frequency, doc.Avoid.Lines),
-		BelowLowest: mode.Frequency < doc.Avoid.Lowest,
-	}
-	if d.Total > 0 {
-		line.RingDown, line.Q = d.RingDown, d.Q
-	}
+	line := lineOf(doc, mode.M, mode.N, mode.Frequency, &mode.Damping)
+	line.Upper, line.Error = mode.Upper, mode.Error
+	line.Ideal = idealFrequency(doc, mode.M, mode.N)
+	line.Even, line.Share = mode.Even, mode.Share
+	line.Damping.RadiationKnown = true
+	line.NodalLines = coupledWords(mode)
 	return line
 }
+
+// coupledWords says in words what a coupled mode is like. Its nodal lines are
+// neither circles nor diameters, but close to those of the mode it goes on from.
+func coupledWords(mode *modes.CoupledMode) string {
+	text := modes.Mode{M: mode.M, N: mode.N}.NodalLines()
+	if mode.M > 0 || mode.N > 1 {
+		text = "close to " + text
+	}
+	if mode.M > 0 && mode.Split >= pairSplits {
+		// An antinode lies a quarter of the pattern from a nodal line.
+		like := "sine"
+		if math.Abs(math.Sin(float64(mode.M)*mode.NodalAngle)) >= math.Sqrt2/2 {
+			like = "cosine"
+		}
+		text += ", one at " + quantity.FormatNumber(mode.NodalAngle*180/math.Pi, 3) + "° (" + like + "-like)"
+	}
+	if mode.Share < mixedShare {
+		text += "; mixed, " + quantity.FormatNumber(100*mode.Share, 2) + " % of its energy is that of the even mode"
+	}
+	return text
+}
+
+// mixedShare is the share of the even mode below which a mode is called mixed.
+const mixedShare = 0.8
 
 func idealFrequency(doc *diaphragm.Diaphragm, m, n int) float64 {
 	wave := math.Sqrt(doc.Tension.Nominal / doc.Sheet.ArealDensity())
 	return modes.NewShape(m, n, 0).Zero * wave / (2 * math.Pi * doc.Ring.Radius)
 }
 
-// coupledShapeOf finds the mode that a drawing is asked of.
-func coupledShapeOf(coupled *modes.Coupled, m, n int, upper bool) (*modes.CoupledMode, error) {
+// coupledModeNamed finds a mode by its name.
+func coupledModeNamed(coupled *modes.Coupled, m, n int, upper bool) (*modes.CoupledMode, error) {
 	for i := range coupled.Modes {
 		if mode := &coupled.Modes[i]; mode.M == m && mode.N == n && (mode.Upper == upper || m == 0) {
 			return mode, nil
 		}
 	}
-	return nil, Fail("n", CodeRange, "This diaphragm has no such mode among those computed.")
+	return nil, errNoMode()
 }
 
-// drawCoupled draws a mode of an uneven diaphragm, whose nodal lines are
-// neither circles nor diameters: the picture shows them as the change of sign.
-func drawCoupled(request *ShapeRequest, mode *modes.CoupledMode) *ShapeResult {
-	result := &ShapeResult{Raster: make(Numbers, request.Size*request.Size), Section: make(Numbers, request.SectionPoints)}
-	size := float64(request.Size)
-	for i := range result.Raster {
-		x := (2*float64(i%request.Size) - size + 1) / size
-		y := (size - 1 - 2*float64(i/request.Size)) / size
-		r := math.Hypot(x, y)
-		if r > 1 {
-			result.Raster[i] = float32(math.NaN())
-			continue
-		}
-		result.Raster[i] = float32(mode.At(r, math.Atan2(y, x)))
-	}
-	last := float64(request.SectionPoints - 1)
-	for i := range result.Section {
-		place := (2*float64(i) - last) / last
-		angle := request.SectionAngle
-		if place < 0 {
-			angle += math.Pi
-		}
-		result.Section[i] = float32(mode.At(math.Abs(place), angle))
-	}
-	return result
+func errNoMode() error {
+	return Fail("n", CodeRange, "This diaphragm has no such mode among those computed.")
 }
 
-// unevenWords says what is assumed of unevenness and masses, and the smallest
-// tension.
-func unevenWords(doc *diaphragm.Diaphragm, uneven modes.Uneven, coupled *modes.Coupled) []string {
-	var list []string
+// unevenWords says what is assumed of unevenness and masses.
+func unevenWords(doc *diaphragm.Diaphragm, uneven modes.Uneven) []string {
+	list := []string{"The ring is rigid, and the sheet moves little, so that its tension stays the same."}
 	if len(uneven.Field) > 0 {
 		rim := "slides along the rim while it is tensioned"
 		if doc.Tension.Bonded {
 			rim = "is bonded to the rim"
 		}
-		list = append(list, "The uneven tension is the elastic field of a sheet that "+rim+"; the smallest principal tension is "+
-			quantity.FormatNumber(100*coupled.Smallest.Value, 3)+" % of the mean.")
+		list = append(list, "The uneven tension is the elastic field of a sheet that "+rim+"; the mean is the nominal tension.")
 	}
 	if uneven.Oval.Half != 0 {
 		list = append(list, "The ring's being out of round changes sheet and fluid; a wall or a cavity is taken as round.")
 	}
 	if len(uneven.Patches)+len(uneven.Strips) > 0 {
-		list = append(list, "Attached masses add to the sheet under them and do not stiffen it.")
+		list = append(list, "Attached masses add to the sheet under them and do not stiffen it; a rigid patch keeps flat.")
+	}
+	return append(list, "What couples the orders is put in with the fluid of each even mode: exact where the fluid is still, to first order with sound or a cavity.")
+}
+
+// unevenCautions warns where a limit of what is computed is near.
+func unevenCautions(uneven modes.Uneven, coupled *modes.Coupled) []string {
+	var list []string
+	if low := coupled.Smallest.Value; low < nearWrinkling {
+		list = append(list, "The sheet is close to wrinkling: its smallest tension is "+quantity.FormatNumber(100*low, 2)+" % of the mean.")
+	}
+	mixed := 0
+	for i := range coupled.Modes {
+		if coupled.Modes[i].Share < 0.5 {
+			mixed++
+		}
+	}
+	if mixed > 0 && mixed < len(coupled.Modes)/2 {
+		list = append(list, strconv.Itoa(mixed)+" of the modes are mixed so much that (m, n) is a label only.")
+	} else if mixed > 0 {
+		list = append(list, "Most modes are mixed so much that (m, n) is a label only.")
 	}
 	return list
+}
+
+// nearWrinkling is the smallest tension over the mean below which wrinkling is
+// near (common practice).
+const nearWrinkling = 0.2
+
+// tautness is where the tension is smallest or largest, in N/m.
+func tautness(doc *diaphragm.Diaphragm, t modes.Tautness) Tautness {
+	return Tautness{Tension: t.Value * doc.Tension.Nominal, Share: t.Value, Radius: t.Radius, Angle: t.Angle, Direction: t.Direction}
 }

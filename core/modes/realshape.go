@@ -22,10 +22,24 @@ const realShapeSteps = 800
 
 // NewRealShape prepares the drawing of a mode.
 func NewRealShape(mode *RealMode, orientation float64) *RealShape {
-	s := &RealShape{M: mode.M, Orientation: orientation, radial: make([]float64, realShapeSteps+1)}
+	return newRealShape(mode.M, orientation, mode.Radial)
+}
+
+// Drawing prepares the drawing of the mode between hub and ring.
+func (s *HubShape) Drawing() *RealShape {
+	return newRealShape(s.M, s.Orientation, func(r float64) float64 {
+		if r <= s.Hub || r >= 1 {
+			return 0
+		}
+		return s.radial(r)
+	})
+}
+
+func newRealShape(m int, orientation float64, radial func(r float64) float64) *RealShape {
+	s := &RealShape{M: m, Orientation: orientation, radial: make([]float64, realShapeSteps+1)}
 	largest := 0.0
 	for i := range s.radial {
-		s.radial[i] = mode.Radial(float64(i) / realShapeSteps)
+		s.radial[i] = radial(float64(i) / realShapeSteps)
 		if math.Abs(s.radial[i]) > math.Abs(largest) {
 			largest = s.radial[i]
 		}
@@ -114,7 +128,7 @@ func (s *RealShape) Lobes() []Lobe {
 			})
 		}
 	}
-	if s.M == 0 {
+	if s.M == 0 && s.radial[0] != 0 { // a hub holds the centre
 		add(0)
 	}
 	for i := 1; i < realShapeSteps; i++ {

@@ -314,24 +314,12 @@ func (s *coupledShape) normalise() {
 	}
 	// The plan on a polar grid: radial values by order, then each angle.
 	const rings, spokes = 40, 72
-	var sin, cos [spokes]float64
-	for i := range spokes {
-		sin[i], cos[i] = math.Sincos(2 * math.Pi * float64(i) / spokes)
-	}
+	plan := CoupledShape{s.table(rings)}
 	largest := 0.0
-	for i := range rings {
-		x := float64(i) / rings
-		var line [spokes]float64
-		for m := range s.cos {
-			u := make([]float64, len(s.cos[m]))
-			disc.HeldEdge.Shapes(u, m, x)
-			a, b := dot(u, s.cos[m]), dot(u, s.sin[m])
-			for k := range spokes {
-				line[k] += a*cos[k*m%spokes] + b*sin[k*m%spokes]
-			}
-		}
-		for _, v := range line {
-			if math.Abs(v) > math.Abs(largest) {
+	for k := range spokes {
+		sin, cos := math.Sincos(2 * math.Pi * float64(k) / spokes)
+		for i := range rings {
+			if v := plan.grid(i, complex(cos, sin)); math.Abs(v) > math.Abs(largest) {
 				largest = v
 			}
 		}

@@ -229,6 +229,10 @@ export interface CostsRequest {
   document: Diaphragm;
   m: number;
   n: number;
+  /**
+   * Upper asks for the higher of a split pair.
+   */
+  upper?: boolean;
 }
 /**
  * CostsResult lists the effects one after another, and the sensitivities.
@@ -236,6 +240,10 @@ export interface CostsRequest {
 export interface CostsResult {
   steps: CostStep[];
   sensitivities: Sensitivity[];
+  /**
+   * Note says what could not be listed; empty otherwise.
+   */
+  note?: string;
 }
 /**
  * CreateRequest makes a new diaphragm: the demonstration, an empty one, or a copy of a given document (a hand-over that is kept).
@@ -699,11 +707,13 @@ export interface Mode {
   m: number;
   n: number;
   /**
-   * Upper marks the higher of a pair that unevenness or masses split; then Even is the frequency without them, Hz, Split the difference of the pair over its mean, NodalAngle where the first nodal diameter lies, rad, and Share the share of the even pair in the mode. All are 0 otherwise.
+   * Upper marks the higher of a pair that unevenness or masses split; then Even is the frequency without them, Hz, Split the difference of the pair over its mean, SplitHertz that difference, Partner the frequency of the other, Hz, NodalAngle where the first nodal diameter lies, rad, and Share the share of the even pair in the mode. All are 0 otherwise.
    */
   upper: boolean;
   even: number;
   split: number;
+  splitHertz: number;
+  partner: number;
   nodalAngle: number;
   share: number;
   /**
@@ -794,6 +804,10 @@ export interface ModesRequest {
    * Without names effects to leave out.
    */
   without?: Effect[];
+  /**
+   * Quick leaves out uneven tension, out-of-round and attached masses, for a list at once; the result then says that it is rough.
+   */
+  quick?: boolean;
 }
 /**
  * ModesResult is the mode table.
@@ -810,6 +824,15 @@ export interface ModesResult {
   airDensity: number;
   massRatio: number;
   modes: Mode[];
+  /**
+   * Rough is true where a quick list leaves something out.
+   */
+  rough?: boolean;
+  /**
+   * Smallest and Largest principal tension over the sheet, where it is uneven.
+   */
+  smallest?: Tautness;
+  largest?: Tautness;
   /**
    * Applies lists the effects that this diaphragm has, in or left out.
    */
@@ -869,6 +892,15 @@ export interface Patch {
   /**
    * Rigid is true for a stiff patch, false for one that bends with the sheet.
    */
+  rigid: boolean;
+}
+/**
+ * PatchOutline is a patch on a drawing, in units of the ring radius and rad.
+ */
+export interface PatchOutline {
+  radius: number;
+  angle: number;
+  size: number;
   rigid: boolean;
 }
 /**
@@ -1468,6 +1500,24 @@ export interface ShapeResult {
    */
   section: Numbers;
   /**
+   * Bent is true for a mode whose nodal lines are neither circles nor diameters: they are where the raster changes sign.
+   */
+  bent?: boolean;
+  /**
+   * Oval is the half difference of the semi-axes of the ring over its radius, and OvalAngle the direction of the longer, rad. The raster is drawn as if the ring were round.
+   */
+  oval?: number;
+  ovalAngle?: number;
+  /**
+   * Hub is the radius of a hub over that of the ring.
+   */
+  hub?: number;
+  /**
+   * Patches and Strips on the sheet, in units of the ring radius.
+   */
+  patches?: PatchOutline[];
+  strips?: StripOutline[];
+  /**
    * CircleRadii of the nodal circles inside the rim, r/a.
    */
   circleRadii: number[];
@@ -1568,6 +1618,14 @@ export interface Strip {
    * Mass that the whole strip adds within the ring, kg.
    */
   mass: number;
+}
+/**
+ * StripOutline is a strip on a drawing, in units of the ring radius; Angle, rad, is square to it.
+ */
+export interface StripOutline {
+  offset: number;
+  angle: number;
+  width: number;
 }
 /**
  * Surroundings is the state of the air and the range of service.
@@ -1724,6 +1782,22 @@ export interface TapSession {
    */
   recordingName: string;
   microphone: string;
+}
+/**
+ * Tautness is a principal tension and where it is.
+ */
+export interface Tautness {
+  /**
+   * Tension, N/m, and its Share of the mean.
+   */
+  tension: number;
+  share: number;
+  /**
+   * Radius, r/a, Angle and Direction of the pull, rad.
+   */
+  radius: number;
+  angle: number;
+  direction: number;
 }
 /**
  * Team is what a team that hosts the pages puts beside them: its materials, the limits that new diaphragms start with, its units and the address of its links. Everything may be left out.

@@ -1,4 +1,0 @@
-package engine
-
-// coupledHere: see coupled.go.
-const coupledHere = false
