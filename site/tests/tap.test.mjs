@@ -136,6 +136,31 @@ test('peaks from another instrument are typed', async () => {
   assert.ok(Math.abs(found / demo.tension - 1) < 5e-3, `${found} N/m`);
 });
 
+test('the tension is shown with what its uncertainty comes from, what the ideal sheet would say, and in the air of the tap', async () => {
+  await openTap();
+  for (const hertz of ['15.9 Hz', '29.4 Hz', '43.0 Hz']) {
+    const count = await peakRows().count();
+    await page.locator('#frequency').fill(hertz);
+    await page.getByRole('button', { name: 'Add the peak' }).click();
+    await peakRows().nth(count).waitFor();
+  }
+  await tension();
+  await page.locator('#budget summary').click();
+  await text(page.locator('#budget table'), /air temperature/);
+  await text(page.locator('#budget table'), /radius/);
+  // The air outweighs the demo's sheet: the ideal sheet makes a fraction of the tension of the same peaks.
+  const words = await text(page.locator('#ideal'), /times/);
+  assert.ok(Number(/has ([\d.]+) times/.exec(words)[1]) > 1.5, words);
+  const before = await text(page.locator('#tension'), /N\/m/);
+  await page.locator('[aria-labelledby=kept]').getByLabel('air temperature at the tap').fill('-20 °C');
+  // Cold air is denser: the same peaks ask for more tension.
+  const after = await until(async () => {
+    const now = (await page.locator('#tension').innerText()).replace(/\s+/g, ' ').trim();
+    return now !== before && now;
+  }, 'another tension');
+  assert.ok(parseFloat(after) > parseFloat(before), `${before}, in cold air ${after}`);
+});
+
 test('a tap is kept, deleted, and brought back with its recording', async () => {
   await openTap();
   await page.setInputFiles('#file', testdata('signals', 'tap-demo.wav'));

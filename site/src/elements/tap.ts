@@ -2,18 +2,18 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { customElement, state } from 'lit/decorators.js';
 
-import type { Match, PeaksResult, Reading, TapResult, TapSession } from '../contract.js';
+import type { Match, PeaksResult, TapResult, TapSession } from '../contract.js';
 import { engine, sentences } from '../engine/client.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
 import { asPeak, type Bench, type BenchPeak, emptyBench, keptPeaks, offered } from '../tap/bench.js';
 import './listen.js';
 import type { Recorded } from './listen.js';
-import { assumptions, caution, cautions } from './notes.js';
 import { figure, percent } from './number-text.js';
 import './spectrum.js';
 import { sharedStyle } from './style.js';
 import './table-actions.js';
+import { tapResult } from './tap-result.js';
 import type { ShownTable } from './table-copy.js';
 import './typed.js';
 import { TypedTexts } from './typed-texts.js';
@@ -140,7 +140,9 @@ export class HoopTap extends LitElement {
       this.asked = '';
       return;
     }
-    const request = { document, peaks };
+    // The air that moved with the sheet is that of the tap, where it is told.
+    const air = this.texts.value('airTemperature');
+    const request = { document: air > 0 ? { ...document, surroundings: { ...document.surroundings, temperature: air } } : document, peaks };
     const asked = JSON.stringify(request);
     if (asked === this.asked) {
       return;
@@ -276,7 +278,7 @@ export class HoopTap extends LitElement {
         ${this.typedWrong ? html`<p class="error" role="alert">${this.typedWrong}</p>` : nothing}
       </section>
       <section class="panel" aria-labelledby="act"><h2 id="act"><span class="step" aria-hidden="true">3</span>Act</h2>
-        ${this.result ? this.verdict(this.result) : html`<p>Record a tap, open a recording or type a peak: the tension appears here.</p>`}
+        ${this.result ? tapResult(this.result) : html`<p>Record a tap, open a recording or type a peak: the tension appears here.</p>`}
       </section>
       ${this.keeping()}`;
   }
@@ -345,27 +347,6 @@ export class HoopTap extends LitElement {
   private pin(index: number, text: string): void {
     const [m, n] = text === '' ? [0, 0] : text.split(',').map(Number);
     this.changePeak(index, { m: m ?? 0, n: n ?? 0 });
-  }
-
-  private verdict(result: TapResult): TemplateResult {
-    const best = result.readings[0];
-    return html`
-      ${result.airNote ? caution(result.airNote, 'Read this first: the moving air is not accounted for') : nothing}
-      ${best ? html`<p class="answer" id="tension">${figure(best.tension, 4)} N/m <span class="chip ${result.verdict}">${result.verdict}</span></p>
-        <p>${best.high > best.low ? `95 % interval ${figure(best.low, 4)} to ${figure(best.high, 4)} N/m; ` : ''}${best.matches.length > 1 ? `spread of the peaks ${percent(best.spread, 2)}; ` : ''}specified
-          ${figure(result.lower, 4)} to ${figure(result.upper, 4)} N/m.</p>` : nothing}
-      <p id="reason">${result.reason}</p>
-      ${!result.chosen && result.readings.length > 1 ? this.rivals(result.readings) : nothing}
-      ${cautions(result.cautions)}
-      ${assumptions(result.assumptions)}`;
-  }
-
-  private rivals(readings: readonly Reading[]): TemplateResult {
-    return html`<h3>Rival readings</h3><div class="table-scroll"><table>
-      <thead><tr><th scope="col" class="number">tension</th><th scope="col" class="number">odds</th><th scope="col">peaks read as</th></tr></thead>
-      <tbody>${readings.map((r) => html`<tr><td class="number">${figure(r.tension, 4)} N/m</td><td class="number">${percent(r.odds, 2)}</td>
-        <td>${r.matches.map((m) => `${m.peak + 1} = (${m.m}, ${m.n})`).join('; ')}</td></tr>`)}</tbody></table></div>
-      <p>The page does not choose between them. Set foreign peaks aside, or say which mode a peak is.</p>`;
   }
 
   private keeping(): TemplateResult {
