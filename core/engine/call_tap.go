@@ -68,6 +68,9 @@ type FoundPeak struct {
 	// Mains is 50 or 60 for a steady tone on a multiple of that mains
 	// frequency; 0 otherwise.
 	Mains int `json:"mains"`
+	// Glide is how much higher the line is at first, Hz: a hard tap rings sharp.
+	// The frequency is then that at no amplitude. 0 where none is seen.
+	Glide float64 `json:"glide"`
 }
 
 // TapRequest asks for the tension that explains the peaks.

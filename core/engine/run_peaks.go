@@ -55,6 +55,7 @@ func runPeaks(_ context.Context, request *PeaksRequest) (*PeaksResult, error) {
 			Prominence:  p.SNR,
 			Kind:        p.Kind,
 			Mains:       p.Mains,
+			Glide:       p.Glide,
 		}
 		if p.DecayKnown && p.Decay > 0 {
 			// exp(-decay t) = 10^-3 is a fall by 60 dB.

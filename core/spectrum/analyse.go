@@ -92,6 +92,7 @@ func (a *Analyzer) Analyse(r *Recording, o Options) (Result, error) {
 	a.measureDecays(a.stretch, rate, &o)
 	a.choose(rate, &o)
 	a.dropSkirts(rate, &o)
+	a.refine(a.stretch, rate)
 	a.present(&res, rate, &o)
 	return res, nil
 }
@@ -229,6 +230,9 @@ func (a *Analyzer) present(res *Result, rate float64, o *Options) {
 		k := min(max(int(math.Round(p.Frequency/g.step(rate))), lo), hi)
 		p.Height = relative(slices.Max(g.power[max(lo, k-1):min(hi, k+1)+1]), largest)
 	}
+	if g := steepest(res.Peaks); g.Glide != 0 {
+		res.note(NoteGlide, "The line at %.4g Hz starts %.2g Hz higher and glides down as it fades, as a hard tap makes it do; it is read at no amplitude. Tap more softly.", g.Frequency, g.Glide)
+	}
 	if left > 0 {
 		res.note(NoteMorePeaks, "%d weaker peaks are left out.", left)
 	}
@@ -267,4 +271,15 @@ func (a *Analyzer) sortByLoudness() {
 
 func (res *Result) note(code Code, format string, args ...any) {
 	res.Notes = append(res.Notes, Note{code, fmt.Sprintf(format, args...)})
+}
+
+// steepest returns the peak that glides down by most of its frequency, or a zero peak.
+func steepest(peaks []Peak) Peak {
+	var most Peak
+	for _, p := range peaks {
+		if p.Glide > 3*p.GlideU && p.Glide*most.Frequency >= most.Glide*p.Frequency {
+			most = p
+		}
+	}
+	return most
 }

@@ -20,6 +20,7 @@ type Analyzer struct {
 	filter    []float64 // low-pass for taking every filterFor-th sample
 	filterFor int
 	shifted   []complex128
+	narrow    []complex128
 	noise     []float64
 	rungs     []rung
 	masked    []bool

@@ -16,6 +16,8 @@ type found struct {
 	loudness float64 // mean amplitude over that rung
 	envelope envelope
 	ring     ringDown
+	// Hz at the start above the frequency at no amplitude, and its standard uncertainty; 0 without a glide.
+	glide, glideU float64
 }
 
 // start is the amplitude at the start of the stretch: by the ring-down, which has seen it, and not
@@ -102,6 +104,11 @@ func (a *Analyzer) choose(rate float64, o *Options) {
 // decaying tone reach further than a steady one's side lobes, and are known only with its decay rate.
 func (a *Analyzer) dropSkirts(rate float64, o *Options) {
 	a.listTones()
+	// Of two close lines each can seem to stand on the other's skirt: the louder one stays.
+	loudness := make([]float64, len(a.found))
+	for i, c := range a.found {
+		loudness[i] = c.loudness
+	}
 	kept := a.found[:0]
 	for i, c := range a.found {
 		n := c.seconds * rate
@@ -109,7 +116,7 @@ func (a *Analyzer) dropSkirts(rate float64, o *Options) {
 		skirts := 0.0
 		for j, other := range a.tones {
 			fall := other.decay * c.seconds
-			if j != i && other.amplitude*cmplx.Abs(o.Window.transform(fall, 0)) > own {
+			if j != i && loudness[j] >= c.loudness && other.amplitude*cmplx.Abs(o.Window.transform(fall, 0)) > own {
 				skirts += other.amplitude * cmplx.Abs(o.Window.transform(fall, (other.f-c.f)*c.seconds))
 			}
 		}

@@ -17,6 +17,8 @@
 //	uncertainty.go   what noise, interpolation and neighbours do to a frequency
 //	ladder.go        spectra over a ladder of lengths, and the candidates they show
 //	candidates.go    their decay rates, and the rung on which each is read best
+//	joint.go         close lines read together as damped exponentials, pairs that no spectrum resolves split
+//	glide.go         a line that rings sharp at first and glides down
 //	peaks.go         candidates to peaks: ringing, steady or unclear, mains or not
 //	display.go       a spectrum with few points in which no peak vanishes
 //	analyse.go       the whole, with options and result

@@ -49,6 +49,7 @@ const (
 	NoteNextStrike  Code = "next-strike"   // the stretch ends where the next strike begins
 	NoteClipped     Code = "clipped"
 	NoteQuiet       Code = "too-quiet"
+	NoteGlide       Code = "glide"         // a line rings sharp at first
 	NoteShort       Code = "short-stretch" // little sound after the strike
 	NoteMorePeaks   Code = "more-peaks"    // weaker peaks left out
 	NoteNoPeaks     Code = "no-peaks"

@@ -44,6 +44,9 @@ type Peak struct {
 	Mains      int     // 50 or 60 if a steady line sits on a multiple of that mains frequency, else 0
 	Order      int     // which multiple
 	Seconds    float64 // length of the stretch it was read over
+	// Glide is how much higher the line is at the start of the stretch, Hz: a hard tap rings sharp. Frequency is then that
+	// at no amplitude. 0 where none is seen; GlideU is its standard uncertainty.
+	Glide, GlideU float64
 }
 
 // peaks turns candidates into peaks: the o.MaxPeaks loudest at most, by rising
@@ -72,6 +75,7 @@ func (a *Analyzer) peaks(n int, rate float64, o *Options) (out []Peak, left int)
 			Bound: CramerRao(c.amplitude, c.decay, c.noiseSD, n, rate),
 			Level: relative(start*start, largest*largest),
 			SNR:   relative(c.snr, 1), Residual: c.ring.residual, Seconds: c.seconds,
+			Glide: c.glide, GlideU: c.glideU,
 		}
 		p.judge(c.ring, float64(n)/rate)
 		out = append(out, p)

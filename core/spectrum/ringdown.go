@@ -38,6 +38,15 @@ func (a *Analyzer) follow(old envelope, x []float64, rate, f float64, n, hop int
 	if len(x) < n+(fewestFrames-1)*hop {
 		return e
 	}
+	a.narrow = a.frames(a.narrow[:0], x, rate, f, n, hop)
+	for _, z := range a.narrow {
+		e.y = append(e.y, math.Log(max(real(z)*real(z)+imag(z)*imag(z), leastPower))/2)
+	}
+	return e
+}
+
+// frames appends to dst the samples shifted by -f and summed under Hann windows of n samples, hop apart.
+func (a *Analyzer) frames(dst []complex128, x []float64, rate, f float64, n, hop int) []complex128 {
 	a.heterodyne(x, 2*math.Pi*f/rate)
 	win := a.window(Hann, n)
 	for from := 0; from+n <= len(x); from += hop {
@@ -46,9 +55,9 @@ func (a *Analyzer) follow(old envelope, x []float64, rate, f float64, n, hop int
 			re += win[i] * real(v)
 			im += win[i] * imag(v)
 		}
-		e.y = append(e.y, math.Log(max(re*re+im*im, leastPower))/2)
+		dst = append(dst, complex(re, im))
 	}
-	return e
+	return dst
 }
 
 // ringDown fits the decay rate to the envelope of the tone at f: a straight line through

@@ -488,6 +488,10 @@ export interface FoundPeak {
    * Mains is 50 or 60 for a steady tone on a multiple of that mains frequency; 0 otherwise.
    */
   mains: number;
+  /**
+   * Glide is how much higher the line is at first, Hz: a hard tap rings sharp. The frequency is then that at no amplitude. 0 where none is seen.
+   */
+  glide: number;
 }
 /**
  * HandOverPage is all that the hand-over page shows.
