@@ -160,9 +160,7 @@ func (b *unevenBlock) addShapes(p, q *node, x []float64) {
 	for i := range p.order.omega {
 		clear(half)
 		for k, c := range p.order.row(i) {
-			for j, v := range x[k*q.order.n : (k+1)*q.order.n] {
-				half[j] += c * v
-			}
+			addTo(half, c, part(x, k, q.order.n))
 		}
 		for j := range q.order.omega {
 			v := dot(half, q.order.row(j))
@@ -230,10 +228,7 @@ func (f *ovalFluid) addOpen(b *unevenBlock) {
 					continue
 				}
 				for k, x := range columns[i] {
-					row := b.mass[(p.at+k)*b.size+q.at:]
-					for l, y := range columns[j] {
-						row[l] += v * x * y
-					}
+					addTo(part(b.mass, p.at+k, b.size)[q.at:], v*x, columns[j])
 				}
 			}
 		}

@@ -5,11 +5,8 @@ import "math"
 // addLower adds factor v v' to the lower triangle of a matrix.
 func addLower(c []float64, n int, v []float64, factor float64) {
 	for i, x := range v {
-		if x *= factor; x != 0 {
-			row := c[i*n : i*n+i+1]
-			for j, y := range v[:len(row)] {
-				row[j] += x * y
-			}
+		if x != 0 {
+			addTo(c[i*n:], factor*x, v[:i+1])
 		}
 	}
 }
@@ -22,10 +19,7 @@ func constrain(c []float64, n int, rows [][]float64) {
 		before := math.Sqrt(dot(row, row))
 		for range 2 { // once more for rounding
 			for _, b := range basis {
-				p := dot(row, b)
-				for i, v := range b {
-					row[i] -= p * v
-				}
+				addTo(row, -dot(row, b), b)
 			}
 		}
 		if after := math.Sqrt(dot(row, row)); after > 1e-9*before && after > 0 {
@@ -36,17 +30,12 @@ func constrain(c []float64, n int, rows [][]float64) {
 		// (1 - b b')C(1 - b b') = C - b w' - w b' + (b'w) b b', w = C b.
 		w := make([]float64, n)
 		for i := range w {
-			w[i] = dot(c[i*n:(i+1)*n], b)
+			w[i] = dot(part(c, i, n), b)
 		}
-		q := dot(b, w) / 2
-		for i := range w {
-			w[i] -= q * b[i]
-		}
+		addTo(w, -dot(b, w)/2, b)
 		for i := range n {
-			row := c[i*n : (i+1)*n]
-			for j := range row {
-				row[j] -= b[i]*w[j] + w[i]*b[j]
-			}
+			addTo(part(c, i, n), -b[i], w)
+			addTo(part(c, i, n), -w[i], b)
 		}
 	}
 }

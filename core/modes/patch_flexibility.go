@@ -57,7 +57,7 @@ func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
 			continue
 		}
 		for i := range f.count {
-			v := dot(f.values[i*s.unknowns:(i+1)*s.unknowns], f.shapes[j*s.unknowns:(j+1)*s.unknowns])
+			v := dot(part(f.values, i, s.unknowns), part(f.shapes, j, s.unknowns))
 			f.matrix[i*f.count+j] += v
 			if !f.load[i] {
 				f.matrix[j*f.count+i] = f.matrix[i*f.count+j]
@@ -126,7 +126,7 @@ func (s *unevenSystem) evaluate(f *flexibility, a *attachment, at int) {
 			kept, lefts := len(order.omega), len(order.left)
 			left := make([]float64, len(a.list)*lefts)
 			for i := range a.list {
-				row := rows[i*n : (i+1)*n]
+				row := part(rows, i, n)
 				out := f.values[(at+i)*s.unknowns+node.global:]
 				for k := range kept {
 					out[k] = dot(row, order.row(k))
@@ -152,7 +152,7 @@ func rowsOf(order *coupledOrder, r, t []float64, weights [][]float64) (both [2][
 	u := make([]float64, len(r)*n)
 	cos, sin := make([]float64, len(r)), make([]float64, len(r))
 	for p := range r {
-		disc.HeldEdge.Shapes(u[p*n:(p+1)*n], order.m, math.Min(1, r[p]))
+		disc.HeldEdge.Shapes(part(u, p, n), order.m, math.Min(1, r[p]))
 		sin[p], cos[p] = math.Sincos(float64(order.m) * t[p])
 	}
 	for side, trig := range [2][]float64{cos, sin} {
@@ -161,13 +161,10 @@ func rowsOf(order *coupledOrder, r, t []float64, weights [][]float64) (both [2][
 			continue
 		}
 		for i, list := range weights {
-			row := both[side][i*n : (i+1)*n]
+			row := part(both[side], i, n)
 			lo, hi := span(list)
 			for p := lo; p < hi; p++ {
-				w := list[p] * trig[p]
-				for j, v := range u[p*n : (p+1)*n] {
-					row[j] += w * v
-				}
+				addTo(row, list[p]*trig[p], part(u, p, n))
 			}
 		}
 	}
@@ -180,11 +177,9 @@ func combine(mixes [][]float64, x []float64) []float64 {
 	size := len(x) / len(mixes[0])
 	out := make([]float64, len(mixes)*size)
 	for d, mix := range mixes {
-		sum := out[d*size : (d+1)*size]
+		sum := part(out, d, size)
 		for i, w := range mix {
-			for j, v := range x[i*size : (i+1)*size] {
-				sum[j] += w * v
-			}
+			addTo(sum, w, part(x, i, size))
 		}
 	}
 	return out
@@ -207,8 +202,8 @@ func (s *unevenSystem) takeOff(f *flexibility, list []*attachment, T float64) {
 		for y, b := range list[:x+1] {
 			whole := a.strip != nil && x == y ||
 				a.patch != nil && b.patch != nil && (x == y || a.patch.gap(*b.patch) > 0)
-			for part := range a.parts {
-				p, q := a.parts[part], b.parts[part]
+			for k := range a.parts {
+				p, q := a.parts[k], b.parts[k]
 				o := p.order
 				scale := make([]float64, o.n)
 				for j := range scale {
@@ -228,7 +223,7 @@ func (s *unevenSystem) takeOff(f *flexibility, list []*attachment, T float64) {
 						}
 						v := 0.0
 						if whole {
-							v = dot(weighed, q.shapes[j*o.n:(j+1)*o.n])
+							v = dot(weighed, part(q.shapes, j, o.n))
 						}
 						for k, omega := range o.left {
 							v += p.left[i*lefts+k] * q.left[j*lefts+k] / (omega * omega)
@@ -257,14 +252,12 @@ func (s *unevenSystem) deflections(f *flexibility) []float64 {
 			l = slices.Clone(b.matrix)
 			cholesky(l, n)
 		}
-		x := make([]float64, n)
 		for i := range f.count {
 			if !f.load[i] {
 				continue
 			}
-			for _, node := range b.nodes {
-				copy(x[node.at:], f.values[i*s.unknowns+node.global:][:len(node.order.omega)])
-			}
+			x := b.of(part(shapes, i, s.unknowns))
+			copy(x, b.of(part(f.values, i, s.unknowns)))
 			if diagonal {
 				for k := range x {
 					x[k] /= b.matrix[k*n+k]
@@ -272,9 +265,6 @@ func (s *unevenSystem) deflections(f *flexibility) []float64 {
 			} else {
 				forward(l, n, x)
 				backward(l, n, x)
-			}
-			for _, node := range b.nodes {
-				copy(shapes[i*s.unknowns+node.global:][:len(node.order.omega)], x[node.at:])
 			}
 		}
 	}
@@ -288,7 +278,7 @@ func (f *flexibility) onlyStrips(list []*attachment) []float64 {
 	for _, a := range list {
 		if a.strip != nil {
 			for i := at; i < at+len(a.list); i++ {
-				copy(x[i*f.count:(i+1)*f.count], f.tail[i*f.count:(i+1)*f.count])
+				copy(part(x, i, f.count), part(f.tail, i, f.count))
 			}
 		}
 		at += len(a.list)

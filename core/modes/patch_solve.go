@@ -1,12 +1,10 @@
 package modes
 
 import (
-	"cmp"
 	"math"
 	"slices"
 
 	"hoopsheet/core/bessel"
-	"hoopsheet/core/internal/sorting"
 )
 
 // attach adds masses to a solved system. It is a Ritz solution in the solved
@@ -70,14 +68,8 @@ func (s *unevenSystem) inertia(x []float64) []float64 {
 		if b.mass == nil {
 			continue
 		}
-		in := make([]float64, b.size)
-		for _, n := range b.nodes {
-			copy(in[n.at:], x[n.global:][:len(n.order.omega)])
-		}
-		for _, n := range b.nodes {
-			for k := range n.order.omega {
-				y[n.global+k] = dot(b.mass[(n.at+k)*b.size:(n.at+k+1)*b.size], in)
-			}
+		for k := range b.size {
+			y[b.first+k] = dot(part(b.mass, k, b.size), b.of(x))
 		}
 	}
 	return y
@@ -104,7 +96,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 			if !f.load[i] && !f.load[j] {
 				continue
 			}
-			residual[i*r+j] -= dot(onModes[i*modes:(i+1)*modes], onModes[j*modes:(j+1)*modes])
+			residual[i*r+j] -= dot(part(onModes, i, modes), part(onModes, j, modes))
 		}
 	}
 	pivots, factor := pivotedCholesky(residual, r, f.matrix, f.load)
@@ -112,20 +104,14 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	// The residual deflections in the unknowns, made orthonormal.
 	extras := make([]float64, extra*u)
 	for e, p := range pivots {
-		x := extras[e*u : (e+1)*u]
-		copy(x, f.shapes[p*u:(p+1)*u])
+		x := part(extras, e, u)
+		copy(x, part(f.shapes, p, u))
 		for k, m := range raw {
-			c := onModes[p*modes+k] / math.Sqrt(m.value)
-			lo := spans[k][0]
-			for i, v := range m.vector[lo:spans[k][1]] {
-				x[lo+i] -= c * v
-			}
+			lo, hi := spans[k][0], spans[k][1]
+			addTo(x[lo:], -onModes[p*modes+k]/math.Sqrt(m.value), m.vector[lo:hi])
 		}
 		for d := range e {
-			c := factor[p*extra+d]
-			for i, v := range extras[d*u : (d+1)*u] {
-				x[i] -= c * v
-			}
+			addTo(x, -factor[p*extra+d], part(extras, d, u))
 		}
 		for i := range x {
 			x[i] /= factor[p*extra+e]
@@ -139,24 +125,24 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	tail := f.between(f.inertia, pivots, factor)
 	strips := f.between(f.onlyStrips(list), pivots, factor)
 	for e := range extra {
-		y := s.inertia(extras[e*u : (e+1)*u])
+		y := s.inertia(part(extras, e, u))
 		for d := range e + 1 {
-			v := dot(y, extras[d*u:(d+1)*u]) + tail[e*extra+d]
+			v := dot(y, part(extras, d, u)) + tail[e*extra+d]
 			c[(modes+e)*size+modes+d], c[(modes+d)*size+modes+e] = v, v
 		}
 	}
 	// Masses and constraints.
 	rows := make([]float64, r*size)
 	for i := range r {
-		copy(rows[i*size:], onModes[i*modes:(i+1)*modes])
-		copy(rows[i*size+modes:(i+1)*size], factor[i*extra:(i+1)*extra])
+		copy(rows[i*size:], part(onModes, i, modes))
+		copy(rows[i*size+modes:(i+1)*size], part(factor, i, extra))
 	}
 	var constraints [][]float64
 	at := 0
 	for _, a := range list {
 		for i, g := range a.list {
 			if g.mass > 0 {
-				addLower(c, size, rows[(at+i)*size:(at+i+1)*size], g.mass)
+				addLower(c, size, part(rows, at+i, size), g.mass)
 			}
 		}
 		if a.rigid() {
@@ -164,9 +150,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 				row := make([]float64, size)
 				for i, w := range weights {
 					if w != 0 {
-						for k, v := range rows[(at+i)*size : (at+i+1)*size] {
-							row[k] += w * v
-						}
+						addTo(row, w, part(rows, at+i, size))
 					}
 				}
 				constraints = append(constraints, row)
@@ -174,35 +158,24 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		}
 		at += len(a.list)
 	}
-	for i := range size { // the upper triangle
-		for j := range i {
-			c[j*size+i] = c[i*size+j]
-		}
-	}
+	mirrored(c, size)
 	constrain(c, size, constraints)
 	wanted := min(modes, size-len(constraints))
 	vectors := make([]float64, wanted*size)
 	values := newSymmetric(size).largest(c, wanted, vectors)
 	out := make([]rawMode, wanted)
 	for k, v := range values {
-		y := vectors[k*size : (k+1)*size]
+		y := part(vectors, k, size)
 		m := rawMode{value: 1 / v, vector: make([]float64, u)}
 		// y'Cy = v is the modal mass.
 		scale := 1 / math.Sqrt(v)
 		for i, w := range raw {
-			p := scale * y[i]
 			m.change += y[i] * y[i] * w.change / w.value
-			p /= math.Sqrt(w.value)
-			lo := spans[i][0]
-			for j, x := range w.vector[lo:spans[i][1]] {
-				m.vector[lo+j] += p * x
-			}
+			lo, hi := spans[i][0], spans[i][1]
+			addTo(m.vector[lo:], scale*y[i]/math.Sqrt(w.value), w.vector[lo:hi])
 		}
 		for e := range extra {
-			p := scale * y[modes+e]
-			for j, x := range extras[e*u : (e+1)*u] {
-				m.vector[j] += p * x
-			}
+			addTo(m.vector, scale*y[modes+e], part(extras, e, u))
 		}
 		// The inertia of what the unknowns do not express is an estimate, so it is
 		// counted twice; of the deflection under strips, a quarter of what the
@@ -211,8 +184,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		m.change = m.value * (m.change + inertia + s.unresolved(list, rows, size, y, v))
 		out[k] = m
 	}
-	sorting.By(out, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
-	return out
+	return byValue(out)
 }
 
 // span returns the range outside which a vector is zero.
@@ -239,7 +211,7 @@ func (s *unevenSystem) unresolved(list []*attachment, rows []float64, size int, 
 		}
 		for i, g := range a.list {
 			if a.patch != nil && g.degree >= top-1 {
-				sum += g.mass * square(dot(rows[(at+i)*size:(at+i+1)*size], y)) / v
+				sum += g.mass * square(dot(part(rows, at+i, size), y)) / v
 			}
 		}
 		at += len(a.list)

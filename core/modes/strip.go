@@ -137,22 +137,21 @@ func orthonormal(count int, x, w []float64) [][]float64 {
 		}
 		for range 2 {
 			for _, b := range list[:d] {
-				p := 0.0
-				for i, v := range b {
-					p += w[i] * v * row[i]
-				}
-				for i, v := range b {
-					row[i] -= p * v
-				}
+				addTo(row, -dot3(w, b, row), b)
 			}
 		}
-		norm := 0.0
-		for i, v := range row {
-			norm += w[i] * v * v
-		}
-		list[d] = scaled(row, 1/math.Sqrt(norm))
+		list[d] = scaled(row, 1/math.Sqrt(dot3(w, row, row)))
 	}
 	return list
+}
+
+// dot3 is the sum of products of three.
+func dot3(a, b, c []float64) float64 {
+	s := 0.0
+	for i, v := range a {
+		s += v * b[i] * c[i]
+	}
+	return s
 }
 
 // stripLine is a strip with square ends, for the part of its static deflection

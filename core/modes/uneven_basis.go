@@ -34,7 +34,7 @@ func circle(m int) float64 {
 	return math.Pi
 }
 
-func (o *coupledOrder) row(i int) []float64 { return o.coef[i*o.n : (i+1)*o.n] }
+func (o *coupledOrder) row(i int) []float64 { return part(o.coef, i, o.n) }
 
 // coupledOrders takes the orders of a solution apart; modes up to a frequency, if
 // positive, are listed.
@@ -105,7 +105,7 @@ func (o *coupledOrder) fill(n int) {
 	}
 	static := make([]float64, size*size)
 	for i := range size {
-		copy(static[i*size:(i+1)*size], source.static[i*whole:])
+		copy(part(static, i, size), source.static[i*whole:])
 	}
 	vectors := make([]float64, size*size)
 	values := newSymmetric(size).largest(static, size, vectors)
@@ -114,7 +114,7 @@ func (o *coupledOrder) fill(n int) {
 		if source.cavity == nil && k < len(o.known) {
 			continue
 		}
-		copy(y, vectors[k*size:(k+1)*size])
+		copy(y, part(vectors, k, size))
 		source.strain.shapes(q, y)
 		omega := 1 / math.Sqrt(values[k])
 		// With a cavity the modes known are not the first of these: what they say
@@ -142,20 +142,14 @@ func (o *coupledOrder) beside(q []float64) bool {
 		b := append([]float64(nil), o.row(k)...)
 		before := inner(b, b)
 		for _, c := range basis {
-			p := inner(b, c)
-			for j, v := range c {
-				b[j] -= p * v
-			}
+			addTo(b, -inner(b, c), c)
 		}
 		if after := inner(b, b); after > 1e-9*before {
 			basis = append(basis, scaled(b, 1/math.Sqrt(after)))
 		}
 	}
 	for _, c := range basis {
-		p := inner(q, c)
-		for j, v := range c {
-			q[j] -= p * v
-		}
+		addTo(q, -inner(q, c), c)
 	}
 	left := inner(q, q)
 	if left < whole/2 {

@@ -1,11 +1,8 @@
 package modes
 
 import (
-	"cmp"
 	"math"
 	"slices"
-
-	"hoopsheet/core/internal/sorting"
 )
 
 // unevenSystem is the eigenproblem of a diaphragm whose orders are coupled by a
@@ -27,6 +24,7 @@ type unevenSystem struct {
 
 type unevenBlock struct {
 	nodes  []*node
+	first  int // of its unknowns among all
 	size   int
 	matrix []float64 // size by size
 	mass   []float64 // nil for the unit matrix
@@ -94,12 +92,9 @@ func newUnevenSystem(orders []*coupledOrder, uneven Field, oval Oval, even *Solu
 			tables[o] = o.gradients(radii)
 		}
 	}
-	for _, n := range nodes {
-		n.global = s.unknowns
-		s.unknowns += len(n.order.omega)
-	}
 	for _, group := range together {
-		b := newUnevenBlock(group, parts, tables)
+		b := newUnevenBlock(group, s.unknowns, parts, tables)
+		s.unknowns += b.size
 		if fluid != nil {
 			b.mass = make([]float64, b.size*b.size)
 			for i := range b.size {
@@ -167,10 +162,10 @@ func trim(orders []*coupledOrder, together [][]*node) {
 	}
 }
 
-func newUnevenBlock(group []*node, parts []*harmonicPart, tables map[*coupledOrder]*gradientTable) *unevenBlock {
-	b := &unevenBlock{nodes: group}
+func newUnevenBlock(group []*node, first int, parts []*harmonicPart, tables map[*coupledOrder]*gradientTable) *unevenBlock {
+	b := &unevenBlock{nodes: group, first: first}
 	for _, n := range group {
-		n.at = b.size
+		n.at, n.global = b.size, first+b.size
 		b.size += len(n.order.omega)
 		b.wanted += n.order.listed
 	}
@@ -187,11 +182,7 @@ func newUnevenBlock(group []*node, parts []*harmonicPart, tables map[*coupledOrd
 			}
 		}
 	}
-	for i := range b.size { // the upper triangle
-		for j := range i {
-			b.matrix[j*b.size+i] = b.matrix[i*b.size+j]
-		}
-	}
+	mirrored(b.matrix, b.size)
 	return b
 }
 
@@ -229,11 +220,7 @@ func (b *unevenBlock) solve() {
 	b.vectors = make([]float64, b.wanted*n)
 	if b.mass == nil && b.diagonal() {
 		b.values = make([]float64, b.wanted)
-		place := make([]int, n)
-		for i := range place {
-			place[i] = i
-		}
-		sorting.By(place, func(i, j int) int { return cmp.Compare(b.matrix[i*n+i], b.matrix[j*n+j]) })
+		place := inOrder(n, func(i, j int) bool { return b.matrix[i*n+i] < b.matrix[j*n+j] })
 		for k := range b.values {
 			b.values[k] = b.matrix[place[k]*n+place[k]]
 			b.vectors[k*n+place[k]] = 1
@@ -254,7 +241,7 @@ func (b *unevenBlock) solve() {
 	top := 0.0 // Gershgorin's bound
 	for i := range n {
 		sum := 0.0
-		for _, v := range c[i*n : (i+1)*n] {
+		for _, v := range part(c, i, n) {
 			sum += math.Abs(v)
 		}
 		top = math.Max(top, sum)
@@ -267,7 +254,7 @@ func (b *unevenBlock) solve() {
 	}
 	b.values = newSymmetric(n).largest(c, b.wanted, b.vectors)
 	for k := range b.values {
-		v := b.vectors[k*n : (k+1)*n]
+		v := part(b.vectors, k, n)
 		if l != nil {
 			backward(l, n, v)
 		}
@@ -284,11 +271,12 @@ func (b *unevenBlock) solve() {
 
 func (b *unevenBlock) diagonal() bool {
 	for i := range b.size {
-		for j := range i {
-			if b.matrix[i*b.size+j] != 0 {
-				return false
-			}
+		if _, hi := span(part(b.matrix, i, b.size)[:i]); hi > 0 {
+			return false
 		}
 	}
 	return true
 }
+
+// of returns the block's part of a vector over all unknowns.
+func (b *unevenBlock) of(x []float64) []float64 { return x[b.first : b.first+b.size] }

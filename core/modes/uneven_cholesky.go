@@ -42,7 +42,7 @@ func congruent(a, l []float64, n int) {
 	// Rows of A hold its columns too: solve for each row, turn over, once more.
 	for range 2 {
 		for i := range n {
-			forward(l, n, a[i*n:(i+1)*n])
+			forward(l, n, part(a, i, n))
 		}
 		for i := range n {
 			for j := range i {

@@ -1,12 +1,10 @@
 package modes
 
 import (
-	"cmp"
 	"math"
 	"slices"
 
 	"hoopsheet/core/disc"
-	"hoopsheet/core/internal/sorting"
 )
 
 // CoupledMode is one mode of a diaphragm whose orders are coupled.
@@ -56,15 +54,20 @@ func (s *unevenSystem) modes() []rawMode {
 	for _, b := range s.blocks {
 		for k, v := range b.values {
 			vector := make([]float64, s.unknowns)
-			local := b.vectors[k*b.size : (k+1)*b.size]
-			for _, n := range b.nodes {
-				copy(vector[n.global:n.global+len(n.order.omega)], local[n.at:])
-			}
+			copy(b.of(vector), part(b.vectors, k, b.size))
 			list = append(list, rawMode{value: v, vector: vector, change: s.truncation(vector, v, len(b.nodes))})
 		}
 	}
-	sorting.By(list, func(a, b rawMode) int { return cmp.Compare(a.value, b.value) })
-	return list
+	return byValue(list)
+}
+
+// byValue sorts solutions, lowest first.
+func byValue(list []rawMode) []rawMode {
+	sorted := make([]rawMode, len(list))
+	for k, i := range inOrder(len(list), func(i, j int) bool { return list[i].value < list[j].value }) {
+		sorted[k] = list[i]
+	}
+	return sorted
 }
 
 // truncation estimates how much a value would fall with more functions: by the
@@ -110,84 +113,79 @@ func (s *unevenSystem) truncation(x []float64, value float64, nodes int) float64
 
 // label names the modes and finishes them.
 func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
-	type claim struct {
-		mode, order, n int
-		share          float64
+	// A slot is a function of an order, which one mode (m = 0) or two may go on
+	// from.
+	type slot struct {
+		order, n, room int
+		modes          []int
 	}
+	type claim struct {
+		mode  int
+		slot  *slot
+		share float64
+	}
+	var slots []*slot
 	var claims []claim
-	for k, r := range raw {
-		for o := range s.orders {
-			for n := range s.orders[o].omega {
-				if v := s.share(r.vector, o, n); v > 1e-3 {
-					claims = append(claims, claim{k, o, n, v})
+	for i, o := range s.orders {
+		for n := range o.omega {
+			p := &slot{order: i, n: n, room: min(2, 1+o.m)}
+			slots = append(slots, p)
+			for k, r := range raw {
+				// Of functions that are not listed only what clearly goes on from one.
+				if v := s.share(r.vector, i, n); v > 1e-3 && (n < o.listed || v >= 0.5) {
+					claims = append(claims, claim{k, p, v})
 				}
 			}
 		}
 	}
-	sorting.By(claims, func(a, b claim) int { return cmp.Compare(b.share, a.share) })
-	taken := map[[2]int][]int{} // modes by order and function
-	labelled := make([]bool, len(raw))
-	shares := make([]float64, len(raw))
-	room := func(order int) int {
-		if s.orders[order].m == 0 {
-			return 1
-		}
-		return 2
+	shares := make([]float64, len(raw)) // above 0 for what has a label
+	give := func(k int, p *slot, share float64) {
+		p.modes, shares[k] = append(p.modes, k), math.Min(1, math.Max(share, 1e-9))
 	}
-	for _, c := range claims {
-		key := [2]int{c.order, c.n}
-		if c.n >= s.orders[c.order].listed && c.share < 0.5 {
-			continue // only modes that clearly go on from one that is not listed
-		}
-		if !labelled[c.mode] && len(taken[key]) < room(c.order) {
-			labelled[c.mode] = true
-			shares[c.mode] = c.share
-			taken[key] = append(taken[key], c.mode)
+	for _, i := range inOrder(len(claims), func(i, j int) bool { return claims[i].share > claims[j].share }) {
+		if c := &claims[i]; shares[c.mode] == 0 && len(c.slot.modes) < c.slot.room {
+			give(c.mode, c.slot, c.share)
 		}
 	}
 	// What is mixed too much for a label of its own takes those left over, by
 	// frequency, so that no mode is lost.
-	type slot struct{ order, n int }
-	var free []slot
-	for i, o := range s.orders {
-		for n := range o.listed {
-			for range room(i) - len(taken[[2]int{i, n}]) {
-				free = append(free, slot{i, n})
+	rank := inOrder(len(slots), func(i, j int) bool {
+		p, q := slots[i], slots[j]
+		return s.orders[p.order].omega[p.n] < s.orders[q.order].omega[q.n]
+	})
+	next := 0
+	for k := range raw {
+		for shares[k] == 0 && next < len(rank) {
+			p := slots[rank[next]]
+			if p.n < s.orders[p.order].listed && len(p.modes) < p.room {
+				give(k, p, s.share(raw[k].vector, p.order, p.n))
+			} else {
+				next++
 			}
 		}
 	}
-	sorting.By(free, func(a, b slot) int {
-		return cmp.Compare(s.orders[a.order].omega[a.n], s.orders[b.order].omega[b.n])
-	})
-	for k := range raw {
-		if !labelled[k] && len(free) > 0 {
-			key := [2]int{free[0].order, free[0].n}
-			shares[k] = s.share(raw[k].vector, key[0], key[1])
-			taken[key] = append(taken[key], k)
-			free = free[1:]
+	labels := make([]*slot, len(raw))
+	for _, p := range slots {
+		if p.n < s.orders[p.order].listed {
+			slices.Sort(p.modes) // raw is in order of frequency
+			for _, k := range p.modes {
+				labels[k] = p
+			}
 		}
 	}
 	list := []CoupledMode{}
-	for key, modes := range taken {
-		o := s.orders[key[0]]
-		if key[1] >= o.listed {
+	for k, p := range labels {
+		if p == nil {
 			continue
 		}
-		slices.Sort(modes) // raw is in order of frequency
-		split := 0.0
-		if len(modes) == 2 {
-			a, b := math.Sqrt(raw[modes[0]].value), math.Sqrt(raw[modes[1]].value)
-			split = 2 * (b - a) / (a + b)
+		mode := s.finish(raw[k], p.order, p.n, even)
+		mode.Upper, mode.Share = k != p.modes[0], shares[k]
+		if len(p.modes) == 2 {
+			a, b := math.Sqrt(raw[p.modes[0]].value), math.Sqrt(raw[p.modes[1]].value)
+			mode.Split = 2 * (b - a) / (a + b)
 		}
-		for i, k := range modes {
-			mode := s.finish(raw[k], key[0], key[1], even)
-			mode.Upper, mode.Split, mode.Share = i == 1, split, math.Min(1, shares[k])
-			list = append(list, mode)
-		}
+		list = append(list, mode)
 	}
-	sorting.By(list, func(a, b CoupledMode) int {
-		return cmp.Or(cmp.Compare(a.Frequency, b.Frequency), cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N))
-	})
 	return list
 }
 
@@ -242,10 +240,8 @@ func (s *unevenSystem) shapeOf(r rawMode, even *Solution) *coupledShape {
 		a, b := make([]float64, o.n), make([]float64, o.n)
 		for k := range o.omega {
 			cos, sin := s.component(r.vector, i, k)
-			for j, v := range o.row(k) {
-				a[j] += cos * v
-				b[j] += sin * v
-			}
+			addTo(a, cos, o.row(k))
+			addTo(b, sin, o.row(k))
 		}
 		turnS, turnC := math.Sincos(float64(o.m) * s.axis)
 		for j := range a {

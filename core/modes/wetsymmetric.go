@@ -69,6 +69,8 @@ func normalise(v []float64) {
 	}
 }
 
+//
+//go:noinline
 func dot(a, b []float64) float64 {
 	s := 0.0
 	b = b[:len(a)]
