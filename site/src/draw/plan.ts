@@ -1,10 +1,11 @@
 /**
  * The plan view of the round sheet on a canvas: signed colour map, contours (solid where up, dotted where down),
- * nodal lines as heavier dashes, + and - at the lobes, the ring with its clamps.
+ * nodal lines as heavier dashes (bent ones solid, because their pieces are too short to dash), + and - at the lobes, the ring with its clamps.
  *
  * All input is a square raster around the unit disc (row 0 at the top, values at the centres of the pixels) or angles and radii in units of the ring's.
  */
 import { contour } from './contour.js';
+import { drawOutlines, stretch, type Outlines } from './outlines.js';
 import type { DrawingColours } from './palette.js';
 import { paint, signedMap, type SignedMap } from './signed-map.js';
 
@@ -32,6 +33,8 @@ export interface Plan {
   readonly section: number | null;
   /** Number of contour lines to each side; 0 for none. */
   readonly contours: number;
+  /** What is on the sheet; a bent mode has its nodal lines where the raster changes sign. */
+  readonly outlines?: Outlines;
 }
 
 /** Share of the canvas that the ring takes; the rest is for the clamps. */
@@ -56,6 +59,7 @@ export class PlanDrawing {
   private readonly fill = document.createElement('canvas');
   private image: ImageData | null = null;
   private map: { colours: DrawingColours; levels: SignedMap } | null = null;
+  private bent: { raster: Float32Array; path: Path2D } | null = null;
   private lines: { raster: Float32Array; largest: number; contours: number; path: Map<number, Path2D> } | null = null;
 
   constructor(private readonly canvas: HTMLCanvasElement) {}
@@ -67,15 +71,51 @@ export class PlanDrawing {
       return;
     }
     const a = width * ringShare;
+    const { outlines } = plan;
+    context.save();
+    if (outlines) {
+      stretch(context, outlines, width);
+    }
     if (filled) {
       this.drawFill(context, plan, colours, width, a);
     }
     if (plan.contours > 0) {
       this.drawContours(context, plan, colours, width, a);
     }
+    if (outlines?.bent) {
+      this.drawBent(context, plan, colours, width, a);
+    }
     drawNodalLines(context, plan, colours, width, a);
+    if (outlines) {
+      drawOutlines(context, outlines, colours, width, a);
+    }
     drawRing(context, plan, colours, width, a);
     drawMarks(context, plan, colours, width, filled);
+    context.restore();
+  }
+
+  /** Nodal lines that are neither circles nor diameters. */
+  private drawBent(context: CanvasRenderingContext2D, plan: Plan, colours: DrawingColours, width: number, a: number): void {
+    if (this.bent?.raster !== plan.raster) {
+      this.bent = { raster: plan.raster, path: pathOf(contour(plan.raster, plan.size, 0)) };
+    }
+    this.onRaster(context, plan, width, a, (unit) => {
+      context.strokeStyle = colours.ink;
+      context.lineWidth = 2.6 / unit;
+      if (this.bent) {
+        context.stroke(this.bent.path);
+      }
+    });
+  }
+
+  /** Draws in the units of the raster: contours run between the centres of its pixels. */
+  private onRaster(context: CanvasRenderingContext2D, plan: Plan, width: number, a: number, draw: (unit: number) => void): void {
+    const unit = (2 * a) / plan.size;
+    context.save();
+    context.translate(width / 2 - a + unit / 2, width / 2 - a + unit / 2);
+    context.scale(unit, unit);
+    draw(unit);
+    context.restore();
   }
 
   private begin(width: number): CanvasRenderingContext2D | null {
@@ -121,20 +161,17 @@ export class PlanDrawing {
       }
       this.lines = { raster: plan.raster, largest: plan.largest, contours: plan.contours, path };
     }
-    // Contours run between the centres of the pixels.
-    const unit = (2 * a) / plan.size;
-    context.save();
-    context.translate(width / 2 - a + unit / 2, width / 2 - a + unit / 2);
-    context.scale(unit, unit);
-    context.strokeStyle = colours.ink;
-    context.globalAlpha = 0.55;
-    context.lineWidth = 0.9 / unit;
-    for (const [index, path] of this.lines.path) {
-      const up = index * plan.factor > 0;
-      context.setLineDash(up ? [] : [1.2 / unit, 3 / unit]);
-      context.stroke(path);
-    }
-    context.restore();
+    const { path } = this.lines;
+    this.onRaster(context, plan, width, a, (unit) => {
+      context.strokeStyle = colours.ink;
+      context.globalAlpha = 0.55;
+      context.lineWidth = 0.9 / unit;
+      for (const [index, line] of path) {
+        const up = index * plan.factor > 0;
+        context.setLineDash(up ? [] : [1.2 / unit, 3 / unit]);
+        context.stroke(line);
+      }
+    });
   }
 }
 

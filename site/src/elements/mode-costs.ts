@@ -23,15 +23,17 @@ export class HoopModeCosts extends LitElement {
   @property({ attribute: false }) document: Diaphragm | null = null;
   @property({ type: Number }) m = 0;
   @property({ type: Number }) n = 1;
+  /** The higher of a split pair. */
+  @property({ type: Boolean }) upper = false;
   @state() private result: CostsResult | null = null;
   private asked = '';
 
   protected override willUpdate(): void {
-    const { document, m, n } = this;
-    const asked = JSON.stringify([document, m, n]);
+    const { document, m, n, upper } = this;
+    const asked = JSON.stringify([document, m, n, upper]);
     if (document && asked !== this.asked) {
       this.asked = asked;
-      void engine.call('costs', { document, m, n }, { key: 'mode-costs' }).then((answer) => {
+      void engine.call('costs', { document, m, n, upper }, { key: 'mode-costs' }).then((answer) => {
         if (answer.kind === 'result') {
           this.result = answer.result;
         }
@@ -50,6 +52,7 @@ export class HoopModeCosts extends LitElement {
         <th scope="row">${step.name}</th>
         <td class="bars"><svg viewBox="0 0 100 12" preserveAspectRatio="none" aria-hidden="true">${svg`<rect class="bar" x="0" y="2" height="8" width=${(100 * step.frequency) / most}></rect>`}</svg></td>
         <td class="number">${figure(step.frequency)} Hz</td><td class="number">${i === 0 ? '' : percent(step.change, 2, true)}</td></tr>`)}</tbody></table>
+      ${result.note ? html`<p class="soft">${result.note}</p>` : nothing}
       <details><summary>What its frequency depends on most</summary>
         <table id="sensitivities"><thead><tr><th scope="col">input</th><th scope="col" class="number">change of frequency for 1 % of it</th></tr></thead>
         <tbody>${result.sensitivities.map((s) => html`<tr><th scope="row">${s.name}</th><td class="number">${percent(s.perPercent / 100, 2, true)}</td></tr>`)}</tbody></table></details>`;

@@ -3,6 +3,7 @@ import { css, html, LitElement, svg, type PropertyValues, type TemplateResult } 
 import { customElement, property, query, state } from 'lit/decorators.js';
 
 import type { Diaphragm, Effect, ShapeResult } from '../contract.js';
+import { ovalFactor } from '../draw/outlines.js';
 import { Motion } from '../draw/motion.js';
 import { coloursAt, printColours } from '../draw/palette.js';
 import { type Plan, PlanDrawing } from '../draw/plan.js';
@@ -119,6 +120,7 @@ export class HoopModeDrawing extends LitElement {
       clamps: this.clamps,
       section: this.sectionAngle,
       contours: 5,
+      outlines: shape,
     };
     this.drawing.draw(plan, this.printing ? printColours : coloursAt(this), canvas.clientWidth, !this.printing);
     this.nowPath?.setAttribute('d', this.path(factor));
@@ -128,6 +130,25 @@ export class HoopModeDrawing extends LitElement {
     return this.shape ? sectionPath(this.shape.section, factor, 1, sectionWidth, sectionHeight, 4) : '';
   }
 
+  private spoken(): string {
+    const { m, n } = this;
+    const lines = `${m === 0 ? 'no' : m} nodal ${m === 1 ? 'diameter' : 'diameters'} and ${n === 1 ? 'no nodal circle' : `${n - 1} nodal ${n === 2 ? 'circle' : 'circles'}`} inside the rim`;
+    return `Plan of mode (${m}, ${n}): ${this.shape?.bent ? 'nodal lines close to ' : ''}${lines}`;
+  }
+
+  /** What the drawing shows beside the mode. */
+  private drawn(): string[] {
+    const { shape } = this;
+    const list: string[] = [];
+    const oval = shape?.oval ?? 0;
+    if (oval > 0) {
+      const times = ovalFactor(oval);
+      list.push(times > 1 ? `the ring is drawn ${Math.round(times)} times as oval as it is` : 'the ring is drawn as oval as it is');
+    }
+    const things = [(shape?.strips?.length ?? 0) > 0 ? 'strips as bands' : '', (shape?.patches?.length ?? 0) > 0 ? 'patches as circles, rigid ones with a cross' : ''].filter((t) => t !== '');
+    return things.length > 0 ? [...list, things.join(', ')] : list;
+  }
+
   private turnSection(): void {
     this.sectionAngle = (this.sectionAngle + Math.PI / 12) % Math.PI;
     void this.load();
@@ -135,16 +156,14 @@ export class HoopModeDrawing extends LitElement {
 
   protected override render(): TemplateResult {
     const degrees = Math.round((this.sectionAngle * 180) / Math.PI);
-    const { m, n } = this;
     return html`<figure>
-      <canvas role="img" aria-label="Plan of mode (${m}, ${n}): ${m === 0 ? 'no' : m} nodal ${m === 1 ? 'diameter' : 'diameters'} and
-        ${n === 1 ? 'no nodal circle' : `${n - 1} nodal ${n === 2 ? 'circle' : 'circles'}`} inside the rim"></canvas>
+      <canvas role="img" aria-label=${this.spoken()}></canvas>
       <svg viewBox="0 0 ${sectionWidth} ${sectionHeight}" role="img" aria-label="Section through the sheet at ${degrees} degrees">
         <line class="rest" x1="4" x2=${sectionWidth - 4} y1=${sectionHeight / 2} y2=${sectionHeight / 2}></line>
         ${[1, 0.5, -0.5, -1].map((f) => svg`<path class="extreme" d=${this.path(f)}></path>`)}
         <path class="now" d=${this.path(1)}></path>
       </svg>
-      <figcaption>${this.caption}</figcaption>
+      <figcaption>${this.caption}${this.drawn().map((line) => html`<br />${line}`)}</figcaption>
     </figure>
     <div class="actions">
       <button type="button" class="main" @click=${() => this.motion.toggle()}>

@@ -2,7 +2,7 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { customElement, state } from 'lit/decorators.js';
 
-import type { Distance, Effect, Mode, ModesResult } from '../contract.js';
+import type { Distance, Effect, Mode, ModesResult, Tautness } from '../contract.js';
 import { engine, sentences } from '../engine/client.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
@@ -72,12 +72,21 @@ export class HoopModes extends LitElement {
       return;
     }
     this.asked = key;
-    const answer = await engine.call('modes', { document, count: this.count, without: [...this.without] }, { key: 'modes' });
-    if (answer.kind === 'result') {
-      this.result = answer.result;
-      this.refusal = '';
-    } else if (answer.kind === 'refused') {
-      this.refusal = sentences(answer);
+    // The even diaphragm at once; what couples its modes takes longer and follows.
+    for (const quick of [true, false]) {
+      const answer = await engine.call('modes', { document, count: this.count, without: [...this.without], quick }, { key: 'modes' });
+      if (answer.kind === 'result') {
+        this.result = answer.result;
+        this.refusal = '';
+        if (!answer.result.rough) {
+          return;
+        }
+      } else {
+        if (answer.kind === 'refused') {
+          this.refusal = sentences(answer);
+        }
+        return;
+      }
     }
   }
 
@@ -111,10 +120,10 @@ export class HoopModes extends LitElement {
           ${derivedTable(session.derived.filter((d) => shownDerived.includes(d.id)))}
           ${this.refusal ? html`<p class="error" role="alert">${this.refusal}</p>` : nothing}
           ${(this.result?.cautions ?? []).map((c) => caution(c, 'Read this first'))}
-          <hoop-mode-costs .document=${document} .m=${this.chosen.m} .n=${this.chosen.n}></hoop-mode-costs>
+          <hoop-mode-costs .document=${document} .m=${this.chosen.m} .n=${this.chosen.n} .upper=${this.chosen.upper}></hoop-mode-costs>
         </div>
         <div class="drawing">
-          <h2>Mode (${this.chosen.m}, ${this.chosen.n})</h2>
+          <h2>Mode (${this.chosen.m}, ${this.chosen.n})${mode && mode.split > 0 ? (mode.upper ? ', upper' : ', lower') : ''}</h2>
           <hoop-mode-drawing .document=${document} .without=${this.without} .m=${this.chosen.m} .n=${this.chosen.n} .upper=${this.chosen.upper} .clamps=${document.ring.clamps}
             .caption=${mode ? `${figure(mode.frequency)} Hz; ${mode.nodalLines}` : ''}></hoop-mode-drawing>
           ${mode ? this.modeFigures(mode) : nothing}
@@ -126,9 +135,14 @@ export class HoopModes extends LitElement {
   private modeFigures(mode: Mode): TemplateResult {
     const d = mode.damping;
     return html`<dl id="mode-figures">
+      ${mode.split > 0 ? html`<dt>the other of its pair</dt><dd>${figure(mode.partner)} Hz</dd>
+        <dt>split of the pair</dt><dd>${figure(mode.splitHertz, 3)} Hz, ${percent(mode.split, 3)}</dd>
+        <dt>a nodal line lies at</dt><dd>${degrees(mode.nodalAngle)}</dd>` : nothing}
+      ${mode.even > 0 ? html`<dt>even, without masses</dt><dd>${figure(mode.even)} Hz</dd>
+        <dt>energy that is that mode's</dt><dd>${percent(mode.share, 3)}</dd>` : nothing}
       <dt>ideal sheet in vacuum</dt><dd>${figure(mode.ideal)} Hz</dd>
       <dt>error of the computation</dt><dd>${mode.error > 0 ? `below ${figure(mode.error, 1)} Hz` : 'none to speak of'}</dd>
-      <dt>fluid in the moving mass</dt><dd>${percent(mode.fluidShare, 3)}</dd>
+      ${mode.fluidShare > 0 ? html`<dt>fluid in the moving mass</dt><dd>${percent(mode.fluidShare, 3)}</dd>` : nothing}
       <dt>damping ratio</dt><dd>${percent(d.total, 3)}</dd>
       <dt>of it radiation, computed</dt><dd>${d.radiationKnown ? percent(d.radiation, 2) : 'not stated'}</dd>
       <dt>friction of the fluid, computed</dt><dd>${percent(d.viscous, 2)}</dd>
@@ -166,6 +180,8 @@ export class HoopModes extends LitElement {
       </div>
       <fieldset class="count"><legend class="unseen">Effects taken into account</legend>
         ${result.applies.map((e) => html`<label><input type="checkbox" .checked=${!this.without.includes(e)} @change=${() => this.toggle(e)} /> ${effectNames[e]}</label>`)}</fieldset>
+      ${result.rough ? html`<p role="status" id="rough">The even diaphragm is listed; uneven tension and attached masses are being put in…</p>` : nothing}
+      ${result.smallest && result.largest ? html`<p id="tautness">Smallest tension ${taut(result.smallest)}; largest ${taut(result.largest)}.</p>` : nothing}
       <div class="table-scroll"><table id="mode-table">
         <thead><tr>
           <th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">frequency</th><th scope="col" class="number">ideal</th>
@@ -187,13 +203,22 @@ export class HoopModes extends LitElement {
     return html`<tr class=${chosen ? 'chosen' : ''} @click=${() => this.pick(mode)}>
       <th scope="row"><button type="button" class="choose" aria-pressed=${chosen ? 'true' : 'false'}
         aria-label="Draw mode (${mode.m}, ${mode.n})${mode.split > 0 ? (mode.upper ? ', upper of the pair' : ', lower of the pair') : ''}">(${mode.m}, ${mode.n})</button></th>
-      <td class="number">${figure(mode.frequency)} Hz</td>
+      <td class="number" title=${mode.error > 0 ? `error of the computation below ${figure(mode.error, 1)} Hz` : ''}>${figure(mode.frequency)} Hz</td>
       <td class="number">${figure(mode.ideal)} Hz</td>
       <td class="number">${mode.ringDown > 0 ? `${figure(mode.ringDown, 2)} s` : '–'}</td>
-      <td>${mode.nodalLines}${mode.split > 0 ? html`<br /><span class="soft">${mode.upper ? 'upper' : 'lower'} of a pair split by ${percent(mode.split, 2)}, nodal line at ${Math.round((mode.nodalAngle * 180) / Math.PI)}°</span>` : nothing}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
+      <td>${mode.nodalLines}${mode.split > 0 ? html`<br /><span class="soft">${mode.upper ? 'upper' : 'lower'} of a pair, the other at ${figure(mode.partner)} Hz:
+        split ${figure(mode.splitHertz, 2)} Hz, ${percent(mode.split, 2)}</span>` : nothing}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
       <td>${nearest(mode)}</td>
     </tr>`;
   }
+}
+
+function degrees(angle: number): string {
+  return `${Math.round((angle * 180) / Math.PI)}°`;
+}
+
+function taut(t: Tautness): string {
+  return `${figure(t.tension, 3)} N/m (${percent(t.share, 3)} of the mean) at ${figure(t.radius, 2)} of the radius, ${degrees(t.angle)}, pulling along ${degrees(t.direction)}`;
 }
 
 function nearest(mode: Mode): TemplateResult {
@@ -209,10 +234,10 @@ function words(distance: Distance): string {
 function shownTable(modes: readonly Mode[]): ShownTable {
   return {
     name: 'modes',
-    heads: ['m', 'n', 'of a split pair', 'frequency, Hz', 'ideal, Hz', 'rings for 60 dB, s', 'damping ratio', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
+    heads: ['m', 'n', 'of a split pair', 'frequency, Hz', 'error below, Hz', 'other of the pair, Hz', 'split, %', 'nodal line at, °', 'ideal, Hz', 'rings for 60 dB, s', 'damping ratio', 'nodal lines', 'nearest line', 'line, Hz', 'distance, %', 'clearance'],
     rows: modes.map((mode) => {
       const d = mode.distances[0];
-      return [mode.m, mode.n, mode.split > 0 ? (mode.upper ? 'upper' : 'lower') : '', mode.frequency, mode.ideal, mode.ringDown, mode.damping.total, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
+      return [mode.m, mode.n, mode.split > 0 ? (mode.upper ? 'upper' : 'lower') : '', mode.frequency, mode.error, ...(mode.split > 0 ? [mode.partner, mode.split * 100, (mode.nodalAngle * 180) / Math.PI] : ['', '', '']), mode.ideal, mode.ringDown, mode.damping.total, mode.nodalLines, d?.line ?? '', d?.lineFrequency ?? '', d ? d.relative * 100 : '', d?.clearance ?? ''];
     }),
   };
 }
