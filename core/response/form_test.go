@@ -197,7 +197,7 @@ func TestSeriesReturnsShape(t *testing.T) {
 		mo := series(t, orders, 20, 0, s, Shape{Kind: ShapeRest})
 		wide := series(t, min(3*orders, 60), 60, 0, s, Shape{Kind: ShapeRest})
 		bound := 0.0
-		for _, mode := range wide.modes {
+		for _, mode := range wide.stages[0].modes {
 			if mode.m > orders || mode.n > 20 {
 				bound += 2 * mode.size
 			}

@@ -4,6 +4,7 @@ import (
 	"math"
 
 	"hoopsheet/core/bessel"
+	"hoopsheet/core/disc"
 )
 
 // probe is the displacement at one place and instant, with its first and
@@ -30,50 +31,47 @@ func (mo *motion) probe(x, y, t float64) probe {
 	if r > 0 {
 		turn = complex(x/r, y/r)
 	}
-	order, phase := 0, complex(1, 0) // exp(i m theta)
-	for i := 0; i < len(mo.modes); {
-		k := &mo.modes[i]
-		for order < k.m {
-			phase *= turn
-			order++
-		}
-		if k.row == nil {
-			p.add(k.m, k.omega, r, phase, turn, k.amplitudes(t))
-			i++
-			continue
-		}
-		// Wet modes of one order share their Bessel functions.
-		mixed := make([]amplitude, mo.basis.N)
-		for ; i < len(mo.modes) && mo.modes[i].m == k.m; i++ {
-			own := mo.modes[i].amplitudes(t)
-			for n, s := range mo.modes[i].row {
-				mixed[n].q += scaled(own.q, s)
-				mixed[n].dq += scaled(own.dq, s)
-				mixed[n].ddq += scaled(own.ddq, s)
+	s := mo.stage(t)
+	mixed := make([]amplitude, mo.basis.Len()/2)
+	for i := range s.modes {
+		var own amplitude
+		q, dq, ddq := s.at(i, t)
+		for _, b := range s.modes[i].shape {
+			// The cosine and the sine part are the real part of q exp(i m theta).
+			if b.part == disc.Cos {
+				own = amplitude{complex(q, 0), complex(dq, 0), complex(ddq, 0)}
+			} else {
+				own = amplitude{complex(0, -q), complex(0, -dq), complex(0, -ddq)}
+			}
+			if b.row == nil {
+				mixed[mo.basis.Index(b.m, b.n, disc.Cos)/2].add(own, 1)
+				continue
+			}
+			to := mixed[mo.basis.Index(b.m, 1, disc.Cos)/2:]
+			for n, v := range b.row {
+				to[n].add(own, v)
 			}
 		}
-		for n, own := range mixed {
-			p.add(k.m, mo.basis.Zero(k.m, n+1), r, phase, turn, own)
+	}
+	phase := complex(1, 0) // exp(i m theta)
+	for m := 0; m <= mo.basis.M; m++ {
+		for n := 1; n <= mo.basis.N; n++ {
+			if own := mixed[mo.basis.Index(m, n, disc.Cos)/2]; own.q != 0 || own.dq != 0 || own.ddq != 0 {
+				p.add(m, mo.basis.Zero(m, n), r, phase, turn, own)
+			}
 		}
+		phase *= turn
 	}
 	return p
 }
 
-// amplitude of a mode with its first and second derivative in time: the
-// cosine and the sine part are the real part of q exp(i m theta).
+// amplitude of a Bessel function with its first and second derivative in time.
 type amplitude struct{ q, dq, ddq complex128 }
 
-func (k *modal) amplitudes(t float64) amplitude {
-	c, s := fundamental(k.omega, k.zeta, t)
-	dc, ds := -k.omega*s, k.omega*(c-2*k.zeta*s)
-	ddc := -k.omega * (k.omega*c + 2*k.zeta*dc)
-	dds := -k.omega * (k.omega*s + 2*k.zeta*ds)
-	iw := 1 / k.omega
-	return amplitude{
-		q:   complex(c*k.a+s*k.va*iw, -(c*k.b + s*k.vb*iw)),
-		dq:  complex(dc*k.a+ds*k.va*iw, -(dc*k.b + ds*k.vb*iw)),
-		ddq: complex(ddc*k.a+dds*k.va*iw, -(ddc*k.b + dds*k.vb*iw)),
-	}
+func (a *amplitude) add(b amplitude, by float64) {
+	a.q += scaled(b.q, by)
+	a.dq += scaled(b.dq, by)
+	a.ddq += scaled(b.ddq, by)
 }
 
 // add adds J_m(wave r) exp(i m theta) with its amplitude.

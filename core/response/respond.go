@@ -212,11 +212,16 @@ func missed(kept, whole float64) float64 {
 // strongest returns the modes that carry the largest shares of the energy.
 func (mo *motion) strongest(whole float64, c *Case) []Share {
 	const most = 10
-	shares := make([]Share, 0, len(mo.modes))
+	s := mo.stages[0]
+	shares := make([]Share, 0, len(s.modes))
 	hertz := c.Sheet.WaveSpeed() / c.Sheet.Radius / (2 * math.Pi)
-	for i := range mo.modes {
-		k := &mo.modes[i]
-		energy := k.norm * (k.omega*k.omega*(k.a*k.a+k.b*k.b) + k.va*k.va + k.vb*k.vb)
+	for i := 0; i < len(s.modes); i++ {
+		k := &s.modes[i]
+		energy := k.energy(0)
+		if i+1 < len(s.modes) && k.same(&s.modes[i+1]) {
+			i++
+			energy += s.modes[i].energy(0)
+		}
 		if energy > 0 {
 			shares = append(shares, Share{M: k.m, N: k.n, Share: energy / whole, Frequency: k.omega * hertz})
 		}

@@ -73,7 +73,10 @@ func newSearch(mo *motion, end float64) *search {
 // slowerThan returns the angular frequency at and above which the modes together
 // have at most the given share of all sizes.
 func (mo *motion) slowerThan(share float64) float64 {
-	order := slices.Clone(mo.modes)
+	var order []modal
+	for _, s := range mo.stages {
+		order = append(order, s.modes...)
+	}
 	sorting.By(order, func(p, q modal) int {
 		switch {
 		case p.omega > q.omega:
@@ -104,22 +107,34 @@ func (mo *motion) slower() *motion {
 	cut := mo.slowerThan(omittedShare)
 	kept := &motion{}
 	highest, circles := 0, 1
-	for _, mode := range mo.modes {
-		if mode.omega < cut {
-			kept.modes = append(kept.modes, mode)
-			highest, circles = max(highest, mode.m), max(circles, mode.n)
-			if mode.row != nil {
-				// Of a wet mode, the Bessel functions about its own.
-				circles = min(mo.basis.N, max(circles, mode.n+wetNeighbours))
+	for _, s := range mo.stages {
+		own := &stage{from: s.from, legs: s.legs}
+		for _, mode := range s.modes {
+			if mode.omega >= cut {
+				continue
+			}
+			own.modes = append(own.modes, mode)
+			for _, b := range mode.shape {
+				highest, circles = max(highest, b.m), max(circles, b.n)
+				if b.row != nil {
+					// Of a wet mode, the Bessel functions about its own.
+					circles = min(mo.basis.N, max(circles, b.n+wetNeighbours))
+				}
 			}
 		}
+		kept.stages = append(kept.stages, own)
 	}
 	kept.basis = basisOf(highest, circles)
-	for i := range kept.modes {
-		mode := &kept.modes[i]
-		mode.index = kept.basis.Index(mode.m, min(mode.n, circles), disc.Cos)
-		if mode.row != nil {
-			mode.row = mode.row[:circles]
+	for _, s := range kept.stages {
+		s.basis = kept.basis
+		for i := range s.modes {
+			shape := slices.Clone(s.modes[i].shape)
+			for k := range shape {
+				if row := shape[k].row; row != nil {
+					shape[k].row = row[:min(len(row), circles)]
+				}
+			}
+			s.modes[i].shape = shape
 		}
 	}
 	return kept
@@ -165,54 +180,12 @@ func (s *search) run(ctx context.Context, report func(share float64)) ([]candida
 	return peaks, nil
 }
 
-// walk steps the coefficients of a motion through time.
-type walk struct {
-	moves    *motion
-	steppers []stepper
-	c, s     []float64
-	parts    []part
-	coef     []float64
-}
-
-func newWalk(mo *motion, step float64) *walk {
-	w := &walk{
-		moves:    mo,
-		steppers: make([]stepper, len(mo.modes)),
-		c:        make([]float64, len(mo.modes)),
-		s:        make([]float64, len(mo.modes)),
-		parts:    make([]part, len(mo.modes)),
-		coef:     make([]float64, mo.basis.Len()),
-	}
-	for i := range mo.modes {
-		w.steppers[i] = newStepper(mo.modes[i].omega, mo.modes[i].zeta, step)
-		w.c[i] = 1
-	}
-	w.fill()
-	return w
-}
-
-func (w *walk) next() {
-	for i, a := range w.steppers {
-		w.c[i], w.s[i] = a.next(w.c[i], w.s[i])
-	}
-	w.fill()
-}
-
-func (w *walk) fill() {
-	for i := range w.parts {
-		k := &w.moves.modes[i]
-		c, s := w.c[i], w.s[i]/k.omega
-		w.parts[i] = part{c*k.a + s*k.va, c*k.b + s*k.vb}
-	}
-	w.moves.fill(w.coef, w.parts)
-}
-
 // largestTravel finds the largest displacement anywhere on the sheet and
 // between the times 0 and end, refined between the points of the search. The
 // candidate given is one more place to start from. capped reports that the
 // search was too coarse in time to be sure.
 func (mo *motion) largestTravel(ctx context.Context, end float64, start candidate, report func(share float64)) (found candidate, capped bool, err error) {
-	if len(mo.modes) == 0 {
+	if mo.moving() == 0 {
 		return candidate{}, false, nil
 	}
 	s := newSearch(mo, end)

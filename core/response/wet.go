@@ -91,38 +91,28 @@ func (c *Case) wetProblem() string {
 //   - An impulse p gives b_i = phi_i'p/m_i with the modal mass
 //     m_i = phi_i'K phi_i/omega_i^2 of sheet, fluid and cavity together.
 func wetMotion(b *disc.Basis, wet *Wet, displacement, velocity []float64, impulse bool, unit float64) *motion {
-	moves := &motion{basis: b}
-	var total float64
+	s := &stage{basis: b}
+	var begin []state
 	for m := 0; m <= b.M; m++ {
 		order := newWetOrder(b, m, wet, unit)
-		for _, part := range []disc.Part{disc.Cos, disc.Sin} {
-			if m == 0 && part == disc.Sin {
-				break
-			}
-			a := order.split(order.take(displacement, part))
-			v := order.take(velocity, part)
+		var a, v [2][]float64
+		for part := range parts(m) {
+			a[part] = order.split(order.take(displacement, disc.Part(part)))
+			v[part] = order.take(velocity, disc.Part(part))
 			if impulse {
-				v = order.struck(v)
+				v[part] = order.struck(v[part])
 			} else {
-				v = order.split(v)
-			}
-			for i := range order.modes {
-				if part == disc.Cos {
-					order.modes[i].a, order.modes[i].va = a[i], v[i]
-				} else {
-					order.modes[i].b, order.modes[i].vb = a[i], v[i]
-				}
+				v[part] = order.split(v[part])
 			}
 		}
 		for i := range order.modes {
-			mode := &order.modes[i]
-			mode.bound(order.largest[i])
-			total += mode.size
-			moves.modes = append(moves.modes, *mode)
+			for part := range parts(m) {
+				s.modes = append(s.modes, order.modes[i].of(disc.Part(part)))
+				begin = append(begin, state{a[part][i], v[part][i]})
+			}
 		}
 	}
-	moves.keep(total)
-	return moves
+	return letGo(s, begin)
 }
 
 // wetAccount adds up what wet modes hold of the initial values and what they
@@ -142,7 +132,7 @@ func (s *start) wetAccount(c *Case, b *disc.Basis, displacement, velocity []floa
 		}
 		s.potential += c.Wet.CavitySpring * volume * volume
 	default:
-		s.moves.amplitudes(held, 0)
+		s.moves.values(held, 0, 0)
 		s.keptPotential = whole - leftOut(b, whole, displacement, held, 1)
 	}
 
@@ -153,7 +143,7 @@ func (s *start) wetAccount(c *Case, b *disc.Basis, displacement, velocity []floa
 		// The part of a velocity left out waves faster than the modes held, so the
 		// fluid adds no more to its mass than to that of the modes at the edge of
 		// the band.
-		s.moves.speeds(held)
+		s.moves.values(held, 0, 1)
 		left = leftOut(b, s.kinetic, velocity, held, 0) * c.Wet.edgeMass(b, c.unit())
 	}
 	s.kinetic = s.keptKinetic + left
@@ -177,17 +167,18 @@ func (s *start) impulseLeft(b *disc.Basis, impulse []float64) float64 {
 		}
 		var blocks [2]float64
 		last := 0
-		for i := range s.moves.modes {
-			if k := &s.moves.modes[i]; k.m == m {
+		list := s.moves.stages[0].modes
+		for i := range list {
+			if k := &list[i]; k.m == m {
 				last = max(last, k.n)
 			}
 		}
-		for i := range s.moves.modes {
-			k := &s.moves.modes[i]
+		for i := range list {
+			k := &list[i]
 			if k.m != m {
 				continue
 			}
-			energy := k.norm * (k.va*k.va + k.vb*k.vb)
+			energy := k.norm * k.states[0].v * k.states[0].v
 			held += energy
 			if 2*k.n > last {
 				blocks[0] += energy

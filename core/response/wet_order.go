@@ -8,24 +8,22 @@ import (
 
 // wetOrder holds what the projections of one order need.
 type wetOrder struct {
-	b       *disc.Basis
-	m       int
-	list    []WetMode
-	modes   []modal
-	stiff   []float64 // G
-	norm    []float64 // of the Bessel functions
-	cavity  bool
-	spring  float64
-	volume  []float64   // integral of each Bessel function over the disc; m = 0 with a spring
-	gram    [][]float64 // Cholesky factor of phi_i'G phi_k, lower rows; without a cavity
-	largest []float64   // a bound of |phi_i|
+	b      *disc.Basis
+	m      int
+	list   []WetMode
+	modes  []modal
+	stiff  []float64 // G
+	norm   []float64 // of the Bessel functions
+	cavity bool
+	spring float64
+	volume []float64   // integral of each Bessel function over the disc; m = 0 with a spring
+	gram   [][]float64 // Cholesky factor of phi_i'G phi_k, lower rows; without a cavity
 }
 
 func newWetOrder(b *disc.Basis, m int, wet *Wet, unit float64) *wetOrder {
 	list := wet.Orders[m]
 	o := &wetOrder{b: b, m: m, list: list, cavity: wet.Cavity,
-		modes: make([]modal, len(list)), stiff: make([]float64, b.N), norm: make([]float64, b.N),
-		largest: make([]float64, len(list))}
+		modes: make([]modal, len(list)), stiff: make([]float64, b.N), norm: make([]float64, b.N)}
 	for n := 1; n <= b.N; n++ {
 		j := b.Zero(m, n)
 		o.norm[n-1] = b.Norm(m, n)
@@ -41,10 +39,10 @@ func newWetOrder(b *disc.Basis, m int, wet *Wet, unit float64) *wetOrder {
 	top := largestBessel(m)
 	for i, mode := range list {
 		omega := mode.Omega * unit
-		o.modes[i] = modal{index: b.Index(m, min(i+1, b.N), disc.Cos), m: m, n: mode.N,
-			omega: omega, zeta: mode.Zeta, norm: mode.Strain / (omega * omega), film: mode.FilmShare, row: mode.Shape}
+		o.modes[i] = modal{m: m, n: mode.N, omega: omega, zeta: mode.Zeta, norm: mode.Strain / (omega * omega), film: mode.FilmShare,
+			shape: []block{{m: m, n: mode.N, row: mode.Shape}}}
 		for _, p := range mode.Shape {
-			o.largest[i] += top * math.Abs(p)
+			o.modes[i].peak += top * math.Abs(p)
 		}
 	}
 	if !o.cavity {

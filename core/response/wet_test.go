@@ -208,7 +208,7 @@ func TestBlowMovesModalMass(t *testing.T) {
 			}
 			want := work(func(w float64) float64 { return w }) / mass // m/s
 			within := (1e-6 + 3*(1-inner)) * work(math.Abs) / mass
-			got := mo.modes[mode.N-1].va / c.unit()
+			got := mo.stages[0].modes[mode.N-1].states[0].v / c.unit()
 			if math.Abs(got-want) > within {
 				t.Errorf("%s (0,%d): %v m/s, want %v", name, mode.N, got, want)
 			}
@@ -224,9 +224,9 @@ func TestHeavyAirSlowsABlow(t *testing.T) {
 		solution := solved(t, window, stillFluid, 0, 12)
 		c := wetCase(window, NewWet(solution, nil, true, 0, 12), 0, 12, Shape{Kind: ShapeRest}, Shape{Kind: ShapeBulge, Peak: 1})
 		c.Impulse = true
-		blow := started(t, c).moves.modes[0].va
+		blow := started(t, c).moves.stages[0].modes[0].states[0].v
 		c.Impulse = false
-		speed := started(t, c).moves.modes[0].va
+		speed := started(t, c).moves.stages[0].modes[0].states[0].v
 		first := &solution.Modes[0]
 		want := first.SheetMass / (first.SheetMass + first.FluidMass)
 		if got := blow / speed; math.Abs(got/want-1) > 0.06 {
@@ -271,7 +271,7 @@ func TestWetReciprocity(t *testing.T) {
 			weight, coef := make([]float64, mo.basis.Len()), make([]float64, mo.basis.Len())
 			form, _ := receiver.form(mo.basis, "")
 			form.project(mo.basis, weight)
-			mo.amplitudes(coef, at)
+			mo.values(coef, at, 0)
 			sum := 0.0
 			for i, v := range coef {
 				m, n, _ := mo.basis.At(i)
