@@ -44,11 +44,11 @@ func runTap(_ context.Context, request *TapRequest) (*TapResult, error) {
 	} else {
 		result.Cautions = append([]string{err.Error() + " What leaving the air out does to the tension is therefore not stated."}, result.Cautions...)
 	}
-	ideal, err := setModes(&question, &doc, effects, inputs)
+	ideal, ratios, err := setModes(&question, &doc, request.Without, effects, inputs)
 	if err != nil {
 		return nil, err
 	}
-	result.Assumptions = inputs.assumptions(&doc, effects, ideal)
+	result.Assumptions = inputs.assumptions(&doc, request.Without, effects, ideal)
 	answer, err := tap.Read(question, tap.Options{ModelError: inputs.model(ideal)})
 	if err != nil {
 		return nil, asError(err, "peaks")
@@ -62,6 +62,7 @@ func runTap(_ context.Context, request *TapRequest) (*TapResult, error) {
 		return result, nil
 	}
 	best := answer.Readings[0]
+	result.Assumptions = append(result.Assumptions, ratios.words(best.Matches)...)
 	if !ideal {
 		result.Ideal = idealReading(&question, best)
 	}
@@ -73,20 +74,28 @@ func runTap(_ context.Context, request *TapRequest) (*TapResult, error) {
 
 // setModes gives the question its modes and the inputs that are not known
 // exactly. ideal is true where nothing is left but the ideal sheet.
-func setModes(question *tap.Question, doc *diaphragm.Diaphragm, effects modes.Effects, inputs TapInputs) (ideal bool, err error) {
-	if !effects.Stiffness && !effects.Fluid && !effects.Cavity {
+func setModes(question *tap.Question, doc *diaphragm.Diaphragm, without []Effect, effects modes.Effects, inputs TapInputs) (ideal bool, ratios *coupledRatios, err error) {
+	uneven, coupling := unevenOf(doc, without)
+	if !coupling && !effects.Stiffness && !effects.Fluid && !effects.Cavity {
 		question.Nuisances = inputs.idealNuisances()
-		return true, nil
+		return true, nil, nil
 	}
 	real, err := realOf(doc)
 	if err != nil {
-		return false, err
+		return false, nil, err
 	}
-	if question.Spectrum, err = tapSpectrum(real, effects, question.Peaks); err != nil {
-		return false, err
+	var couples *modes.Uneven
+	if coupling {
+		couples = &uneven
+	}
+	if question.Spectrum, ratios, err = tapSpectrum(real, effects, couples, question.Peaks); err != nil {
+		return false, nil, err
 	}
 	question.Nuisances, err = inputs.nuisances(doc, real, effects)
-	return false, err
+	for i := range question.Nuisances {
+		question.Nuisances[i].Solve = ratios.couple(question.Nuisances[i].Solve)
+	}
+	return false, ratios, err
 }
 
 // facesLeftOut are the faces whose fluid the modes do not know of; the others
@@ -123,13 +132,5 @@ func idealReading(question *tap.Question, best tap.Reading) *IdealReading {
 
 // tapCautions warns of what the document has and the reading does not know of.
 func tapCautions(doc *diaphragm.Diaphragm, without []Effect) []string {
-	list := effectCautions(doc, without)
-	if len(doc.Attached.Patches) > 0 || len(doc.Attached.Strips) > 0 {
-		list = append(list, "Patches and strips are left out of the reading of a tap. They lower the frequencies, so that the tension is higher than read: "+
-			"by up to about four times their share of the sheet's mass where they lie in the middle.")
-	}
-	if len(doc.Tension.Harmonics) > 0 || doc.Tension.WeftRatio != 0 && doc.Tension.WeftRatio != 1 || doc.Ring.OutOfRound > 0 {
-		list = append(list, "The reading of a tap takes the tension as even and the ring as round: the tension read is a mean, and the two peaks of a pair lie on either side of the one expected.")
-	}
-	return list
+	return effectCautions(doc, without)
 }

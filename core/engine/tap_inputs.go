@@ -127,8 +127,11 @@ func (in TapInputs) nuisances(doc *diaphragm.Diaphragm, real modes.Real, effects
 }
 
 // assumptions says in words what the tension of a tap rests on.
-func (in TapInputs) assumptions(doc *diaphragm.Diaphragm, effects modes.Effects, ideal bool) []string {
+func (in TapInputs) assumptions(doc *diaphragm.Diaphragm, without []Effect, effects modes.Effects, ideal bool) []string {
 	list := []string{"The sheet is evenly tensioned on a round, rigid ring, and moves little, so that its tension stays the same."}
+	if uneven, coupling := unevenOf(doc, without); coupling {
+		list = unevenWords(doc, uneven)
+	}
 	list = append(list, effectAssumptions(doc, effects, nil)...)
 	percent := func(x float64) string { return quantity.FormatNumber(100*x, 2) + " %" }
 	known := "Standard uncertainties taken: radius " + percent(in.Radius) + ", areal density " + percent(in.ArealDensity)

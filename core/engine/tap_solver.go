@@ -112,6 +112,7 @@ type tapKey struct {
 	solutionKey
 	highest float64
 	include string
+	ratios  *coupledRatios
 }
 
 // tapSpectra keeps the last few spectra: while peaks are typed, the diaphragm
@@ -128,8 +129,8 @@ const (
 )
 
 // tapSpectrum gives the modes of a diaphragm over tension, as far as peaks can
-// need them.
-func tapSpectrum(real modes.Real, effects modes.Effects, peaks []tap.Peak) (*tap.Spectrum, error) {
+// need them, and the ratios by which what is uneven changes them, if anything.
+func tapSpectrum(real modes.Real, effects modes.Effects, uneven *modes.Uneven, peaks []tap.Peak) (*tap.Spectrum, *coupledRatios, error) {
 	wanted := tap.Range{Nominal: real.Tension, Highest: highestTapped(peaks), MaxM: tapDiameters, MaxN: tapCircles}
 	var include strings.Builder
 	for _, p := range peaks {
@@ -143,14 +144,22 @@ func tapSpectrum(real modes.Real, effects modes.Effects, peaks []tap.Peak) (*tap
 		include.WriteString(strconv.Itoa(name.M) + " " + strconv.Itoa(name.N) + " ")
 	}
 	real.LossFactor, real.Remainder = 0, 0 // neither moves a frequency
-	key := tapKey{keyOf(real, effects, wanted.MaxM, wanted.MaxN), wanted.Highest, include.String()}
-	if spectrum, ok := tapSpectra.get(key); ok {
-		return spectrum, nil
+	var ratios *coupledRatios
+	if uneven != nil {
+		m, n := tapBounds(&real, effects, tap.Want{MaxM: wanted.MaxM, MaxN: wanted.MaxN, Highest: wanted.Highest, Include: wanted.Include})
+		var err error
+		if ratios, err = tapRatios(real, effects, *uneven, m, n); err != nil {
+			return nil, nil, err
+		}
 	}
-	spectrum, err := tap.NewSpectrum(tapSolver(real, effects), wanted)
+	key := tapKey{keyOf(real, effects, wanted.MaxM, wanted.MaxN), wanted.Highest, include.String(), ratios}
+	if spectrum, ok := tapSpectra.get(key); ok {
+		return spectrum, ratios, nil
+	}
+	spectrum, err := tap.NewSpectrum(ratios.couple(tapSolver(real, effects)), wanted)
 	if err != nil {
-		return nil, asError(err, "document")
+		return nil, nil, asError(err, "document")
 	}
 	tapSpectra.put(key, spectrum)
-	return spectrum, nil
+	return spectrum, ratios, nil
 }

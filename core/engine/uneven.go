@@ -73,22 +73,28 @@ func solveCoupled(real modes.Real, effects modes.Effects, uneven modes.Uneven) (
 		return nil, 0, nil, err
 	}
 	uneven.MaxFrequency = even.Complete
+	key := unevenKey(real, effects, uneven)
+	coupled, ok := coupledSolutions.get(key)
+	if !ok {
+		if coupled, err = modes.SolveCoupled(even, uneven); err != nil {
+			return nil, 0, nil, unevenRefusal(err)
+		}
+		coupledSolutions.put(key, coupled)
+	}
+	return coupled, even.Complete, even.Notes, nil
+}
+
+// unevenKey names a coupled diaphragm.
+func unevenKey(real modes.Real, effects modes.Effects, uneven modes.Uneven) string {
 	key, err := json.Marshal(struct {
 		Real   modes.Real
 		Effect modes.Effects
 		Uneven modes.Uneven
 	}{Real: real, Effect: effects, Uneven: uneven})
 	if err != nil {
-		return nil, 0, nil, asError(err, "document")
+		return "" // no number of a sound document is one that JSON cannot write
 	}
-	coupled, ok := coupledSolutions.get(string(key))
-	if !ok {
-		if coupled, err = modes.SolveCoupled(even, uneven); err != nil {
-			return nil, 0, nil, unevenRefusal(err)
-		}
-		coupledSolutions.put(string(key), coupled)
-	}
-	return coupled, even.Complete, even.Notes, nil
+	return string(key)
 }
 
 // unevenRefusal puts what package modes says of uneven tension and attached

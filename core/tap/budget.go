@@ -81,7 +81,7 @@ func (s *search) sensitivity(r reading, base *solved, x Nuisance) (float64, erro
 		name := s.spectrum.modes[p.mode]
 		from, known := base.log[p.mode]
 		for _, f := range list {
-			if known && f.M == name.M && f.N == name.N {
+			if known && f.M == name.M && f.N == name.N && f.Upper == s.spectrum.isUpper(p.mode) {
 				_, slope := s.curveAt(p.mode, r.c)
 				slope = max(slope, flattest)
 				w := 1 / s.spread(p)

@@ -106,7 +106,12 @@ func NewSpectrum(solve Solver, r Range) (*Spectrum, error) {
 // knot is the modes at one place of the c axis.
 type knot struct {
 	c, complete float64 // complete as ln f
-	modes       map[ModeName]knotMode
+	modes       map[knotName]knotMode
+}
+
+type knotName struct {
+	ModeName
+	upper bool
 }
 
 type knotMode struct{ log, err float64 }
@@ -116,10 +121,10 @@ func newKnot(solve Solver, c float64, want Want) (knot, error) {
 	if err != nil {
 		return knot{}, err
 	}
-	k := knot{c: c, complete: math.Log(complete), modes: make(map[ModeName]knotMode, len(list))}
+	k := knot{c: c, complete: math.Log(complete), modes: make(map[knotName]knotMode, len(list))}
 	for _, f := range list {
 		if f.M >= 0 && f.M <= want.MaxM && f.N >= 1 && f.N <= want.MaxN && f.Frequency > 0 {
-			k.modes[ModeName{f.M, f.N}] = knotMode{math.Log(f.Frequency), f.Error}
+			k.modes[knotName{ModeName{f.M, f.N}, f.Upper}] = knotMode{math.Log(f.Frequency), f.Error}
 		}
 	}
 	return k, nil
@@ -129,14 +134,14 @@ func newKnot(solve Solver, c float64, want Want) (knot, error) {
 // lie below the highest frequency wanted: a curve ends at the last knot that
 // has its mode.
 func (s *Spectrum) join(all []knot) {
-	s.knots, s.modes, s.curves = nil, nil, nil
+	s.knots, s.modes, s.upper, s.curves = nil, nil, nil, nil
 	var complete []float64
 	for _, k := range all {
 		s.knots, complete = append(s.knots, k.c), append(complete, k.complete)
 	}
 	s.complete = newCurve(s.knots, complete, make([]float64, len(all)))
 	type named struct {
-		ModeName
+		knotName
 		curve
 	}
 	var list []named
@@ -157,7 +162,7 @@ func (s *Spectrum) join(all []knot) {
 		return cmp.Or(cmp.Compare(a.y[0], b.y[0]), cmp.Compare(a.M, b.M), cmp.Compare(a.N, b.N))
 	})
 	for _, n := range list {
-		s.modes, s.curves = append(s.modes, n.ModeName), append(s.curves, n.curve)
+		s.modes, s.upper, s.curves = append(s.modes, n.ModeName), append(s.upper, n.upper), append(s.curves, n.curve)
 	}
 }
 

@@ -159,7 +159,7 @@ func check(q Question, o Options) error {
 		}
 	}
 	used := 0
-	pins := map[ModeName]int{}
+	pins := map[ModeName][]int{}
 	for i, p := range q.Peaks {
 		if !p.Use {
 			continue
@@ -178,11 +178,14 @@ func check(q Question, o Options) error {
 			add(field+".m", name+" cannot be mode ("+strconv.Itoa(p.M)+", "+strconv.Itoa(p.N)+"): m counts from 0 and n from 1, and "+q.Spectrum.bounds()+".")
 			continue
 		}
-		pin := ModeName{p.M, p.N}
-		if other, taken := pins[pin]; taken {
-			add(field+".m", name+" and peak "+strconv.Itoa(other+1)+" are both set to mode "+modeText(p.M, p.N)+"; free one of them.")
+		pin, room := ModeName{p.M, p.N}, 1
+		if q.Spectrum.findOf(p.M, p.N, true) >= 0 {
+			room = 2 // a split pair has two peaks
 		}
-		pins[pin] = i
+		if taken := pins[pin]; len(taken) == room {
+			add(field+".m", name+" and peak "+strconv.Itoa(taken[0]+1)+" are both set to mode "+modeText(p.M, p.N)+"; free one of them.")
+		}
+		pins[pin] = append(pins[pin], i)
 	}
 	if used == 0 {
 		add("peaks", "No peak is in use. Mark at least one as used.")

@@ -54,7 +54,7 @@ func (c realCase) solver() Solver {
 			}
 			if m == want.MaxM && n == want.MaxN || solution.Complete >= want.Highest {
 				for _, mode := range solution.Modes {
-					list = append(list, ModeFrequency{mode.M, mode.N, mode.Frequency, mode.Error / mode.Frequency})
+					list = append(list, ModeFrequency{M: mode.M, N: mode.N, Frequency: mode.Frequency, Error: mode.Error / mode.Frequency})
 				}
 				return list, solution.Complete, nil
 			}

@@ -21,7 +21,7 @@ func (s *search) report(r reading, nuisance float64) Reading {
 		fitted := math.Exp(y)
 		measured := s.q.Peaks[l.peak].Frequency
 		alone := s.spectrum.tension(s.spectrum.invert(p.mode, l.log-s.shift[p.mode]))
-		out.Matches = append(out.Matches, Match{Peak: l.peak, M: k.M, N: k.N, Measured: measured, Fitted: fitted, Residual: measured/fitted - 1, Tension: alone})
+		out.Matches = append(out.Matches, Match{Peak: l.peak, M: k.M, N: k.N, Upper: s.spectrum.isUpper(p.mode), Measured: measured, Fitted: fitted, Residual: measured/fitted - 1, Tension: alone})
 		matched[p.line], shown[p.mode] = true, true
 		highest = max(highest, s.view.rank[p.mode])
 	}

@@ -60,6 +60,7 @@ func newSearch(q Question, o Options) *search {
 		s.lines = append(s.lines, l)
 	}
 	sort.SliceStable(s.lines, func(a, b int) bool { return s.lines[a].log < s.lines[b].log })
+	s.pinPairs()
 	return s
 }
 

@@ -68,7 +68,7 @@ func (s *search) solveAt(r reading) (*solved, error) {
 		return nil, err
 	}
 	for _, f := range list {
-		if id := s.spectrum.find(f.M, f.N); id >= 0 && f.Frequency > 0 {
+		if id := s.spectrum.findOf(f.M, f.N, f.Upper); id >= 0 && f.Frequency > 0 {
 			out.log[id] = math.Log(f.Frequency)
 		}
 	}

@@ -2,7 +2,6 @@ package tap
 
 import (
 	"math"
-	"slices"
 	"strconv"
 	"sync"
 )
@@ -12,6 +11,8 @@ import (
 type ModeFrequency struct {
 	// M nodal diameters; N is the place within the order m, lowest first.
 	M, N int
+	// Upper is the higher of a split pair, whose lower is listed too.
+	Upper bool
 	// Frequency, Hz, and the relative standard error of its computation.
 	Frequency, Error float64
 }
@@ -40,6 +41,8 @@ type Spectrum struct {
 	// offset of the axis c = ln(T)/2 + offset on which readings are looked for.
 	offset float64
 	modes  []ModeName
+	// upper marks the higher of split pairs, by mode; nil without one.
+	upper []bool
 	// fixed holds ln f - c where it is the same at every tension, else nil.
 	fixed []float64
 	// knots on the c axis, curves of ln f by mode, and that of the frequency up
@@ -89,7 +92,7 @@ func (s *Spectrum) position(tension float64) float64 { return 0.5*math.Log(tensi
 
 func (s *Spectrum) tension(c float64) float64 { return math.Exp(2 * (c - s.offset)) }
 
-// Frequency of mode (m, n) at a tension, Hz, with the estimated relative error
+// Frequency of mode (m, n), of a split pair the lower, at a tension, Hz, with the estimated relative error
 // of the interpolation; ok is false for a mode that the spectrum does not hold.
 func (s *Spectrum) Frequency(m, n int, tension float64) (frequency, relative float64, ok bool) {
 	id := s.find(m, n)
@@ -133,10 +136,20 @@ func (s *Spectrum) limit(c float64) float64 {
 	return y
 }
 
-// find is the index of mode (m, n), or -1.
-func (s *Spectrum) find(m, n int) int {
-	return slices.Index(s.modes, ModeName{m, n})
+// find is the index of mode (m, n), of a split pair the lower, or -1.
+func (s *Spectrum) find(m, n int) int { return s.findOf(m, n, false) }
+
+// findOf is the index of either of a pair, or -1.
+func (s *Spectrum) findOf(m, n int, upper bool) int {
+	for id, name := range s.modes {
+		if name.M == m && name.N == n && s.isUpper(id) == upper {
+			return id
+		}
+	}
+	return -1
 }
+
+func (s *Spectrum) isUpper(id int) bool { return s.upper != nil && s.upper[id] }
 
 // bounds says in words which modes there are.
 func (s *Spectrum) bounds() string {

@@ -12,8 +12,8 @@ type Peak struct {
 	Level float64 `json:"level"`
 	// Use is false for a peak that the person has set aside.
 	Use bool `json:"use"`
-	// Pinned peaks belong to mode (M, N) by the person's decision; N is 0
-	// where the mode is free.
+	// Pinned peaks belong to mode (M, N) by the person's decision, of a split
+	// pair to either; N is 0 where the mode is free.
 	M int `json:"m"`
 	N int `json:"n"`
 }
@@ -37,6 +37,8 @@ type Match struct {
 	Peak int `json:"peak"`
 	M    int `json:"m"`
 	N    int `json:"n"`
+	// Upper is true for the higher of a pair that unevenness or masses split.
+	Upper bool `json:"upper,omitempty"`
 	// Measured and Fitted frequency, Hz; Fitted is that of the model at the
 	// fitted tension.
 	Measured float64 `json:"measured"`
@@ -64,7 +66,8 @@ type Reading struct {
 	Odds float64 `json:"odds"`
 	// Unmatched are the indices of used peaks that no mode explains.
 	Unmatched []int `json:"unmatched"`
-	// Missing are modes below the highest match that show no peak.
+	// Missing are modes below the highest match that show no peak, of a split
+	// pair each by itself.
 	Missing []ModeName `json:"missing"`
 
 	// freedom is the degrees of freedom of the interval, 0 for infinitely many.

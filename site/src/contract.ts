@@ -651,6 +651,10 @@ export interface Match {
   m: number;
   n: number;
   /**
+   * Upper is true for the higher of a pair that unevenness or masses split.
+   */
+  upper?: boolean;
+  /**
    * Measured and Fitted frequency, Hz; Fitted is that of the model at the fitted tension.
    */
   measured: number;
@@ -925,7 +929,7 @@ export interface Peak {
    */
   use: boolean;
   /**
-   * Pinned peaks belong to mode (M, N) by the person's decision; N is 0 where the mode is free.
+   * Pinned peaks belong to mode (M, N) by the person's decision, of a split pair to either; N is 0 where the mode is free.
    */
   m: number;
   n: number;
@@ -1104,7 +1108,7 @@ export interface Reading {
    */
   unmatched: number[];
   /**
-   * Missing are modes below the highest match that show no peak.
+   * Missing are modes below the highest match that show no peak, of a split pair each by itself.
    */
   missing: ModeName[];
 }
