@@ -30,7 +30,7 @@ function rivals(readings: readonly Reading[]): TemplateResult {
   return html`<h3>Rival readings</h3><div class="table-scroll"><table id="rivals">
     <thead><tr><th scope="col" class="number">tension</th><th scope="col" class="number">odds</th><th scope="col">peaks read as</th></tr></thead>
     <tbody>${readings.map((r) => html`<tr><td class="number">${figure(r.tension, 4)} N/m</td><td class="number">${percent(r.odds, 2)}</td>
-      <td>${r.matches.map((m) => `${m.peak + 1} = (${m.m}, ${m.n})`).join('; ')}</td></tr>`)}</tbody></table></div>
+      <td>${r.matches.map((m) => `${m.peak + 1} = (${m.m}, ${m.n})${m.upper ? ' upper' : ''}`).join('; ')}</td></tr>`)}</tbody></table></div>
     <p>The page does not choose between them. Set foreign peaks aside, or say which mode a peak is.</p>`;
 }
 

@@ -327,7 +327,7 @@ export class HoopTap extends LitElement {
       <td class="number less">${peak.ringDown > 0 ? `${figure(peak.ringDown, 2)} s` : '–'}</td>
       <td><label class="unseen" for="pin-${index}">mode of peak ${index + 1}</label>
         <select class="pin" id="pin-${index}" ?disabled=${!peak.use} @change=${(e: Event) => this.pin(index, (e.target as HTMLSelectElement).value)}>
-          <option value="" ?selected=${pinned === ''}>${match && pinned === '' ? `(${match.m}, ${match.n})` : 'by itself'}</option>
+          <option value="" ?selected=${pinned === ''}>${match && pinned === '' ? `(${match.m}, ${match.n})${match.upper ? ' upper' : ''}` : 'by itself'}</option>
           ${this.pinChoices().map((c) => html`<option value=${c} ?selected=${c === pinned}>is (${c})</option>`)}
         </select></td>
       <td class="number">${match ? percent(match.residual, 2, true) : '–'}</td>
