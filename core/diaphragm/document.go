@@ -105,6 +105,9 @@ type Tension struct {
 	WeftRatio float64 `json:"weftRatio,omitempty"`
 	// WarpAngle is the direction of the warp, rad.
 	WarpAngle float64 `json:"warpAngle,omitempty"`
+	// Upright is true where the plan stands vertical, its lower side down, so
+	// that the weight of the sheet hangs in the ring.
+	Upright bool `json:"upright,omitempty"`
 	// Harmonics of the tension around the rim, at most MostHarmonics.
 	Harmonics []Harmonic `json:"harmonics,omitempty"`
 }

@@ -50,6 +50,9 @@ func (f Field) read(doc *Diaphragm, text string, unit quantity.Unit) (quantity.R
 				text = c.Value
 			}
 		}
+		if text == "" && f.Default != "" {
+			return quantity.Reading{}, f.problem(CodeEmpty, f.capital()+" is empty; choose one of the list.")
+		}
 		if f.flag != nil {
 			if p := f.checkChoice(text); p != nil {
 				return quantity.Reading{}, p
@@ -57,10 +60,8 @@ func (f Field) read(doc *Diaphragm, text string, unit quantity.Unit) (quantity.R
 			*f.flag(doc) = text == f.Choices[1].Value
 			return quantity.Reading{}, nil
 		}
-		if text == f.Default && text != "" {
+		if text == f.Default {
 			text = "" // it need not be spelt out
-		} else if text == "" && f.Default != "" {
-			return quantity.Reading{}, f.problem(CodeEmpty, f.capital()+" is empty; choose one of the list.")
 		}
 	default:
 		text = strings.TrimSpace(text)

@@ -57,6 +57,15 @@ func evennessFields() []Field {
 			"Direction of the warp threads, anticlockwise from the right in the plan.",
 			func(d *Diaphragm) *float64 { return &d.Tension.WarpAngle }).
 			where(func(d *Diaphragm) bool { return d.Tension.WeftRatio != 0 }),
+		{
+			Path: "tension.upright", Group: GroupEvenness, Name: "weight of the sheet", Kind: KindChoice, Default: "across",
+			Help: "In an upright ring the sheet's weight adds to the tension above and takes from it below. It counts for heavy sheets.",
+			Choices: []Choice{
+				{Value: "across", Name: "across the sheet, or of no account"},
+				{Value: "along", Name: "along the sheet: the plan stands upright"},
+			},
+			flag: func(d *Diaphragm) *bool { return &d.Tension.Upright },
+		},
 	}
 }
 

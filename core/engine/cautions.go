@@ -1,6 +1,8 @@
 package engine
 
 import (
+	"math"
+
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/quantity"
 	"hoopsheet/core/sheet"
@@ -32,6 +34,12 @@ func cautions(doc diaphragm.Diaphragm) []string {
 		worst := max(change.TensionAt(doc.Surroundings.ServiceMin), change.TensionAt(doc.Surroundings.ServiceMax))
 		if sheet.Stress(worst, doc.Sheet.Thickness) > limit {
 			list = append(list, "Within the service temperature range the stress passes the allowable stress on a stiff ring.")
+		}
+	}
+	if field := fieldOf(&doc); len(field) > 0 && doc.Tension.Nominal > 0 {
+		if low, _ := field.Extremes(); low.Value <= 0 {
+			list = append(list, "The uneven tension falls below zero inside the sheet, at "+quantity.FormatNumber(low.Radius, 2)+" of the radius and "+
+				quantity.FormatNumber(low.Angle*180/math.Pi, 3)+"°: the sheet wrinkles there, and no modes are computed. Make harmonics or the difference of warp and weft smaller.")
 		}
 	}
 	if doc.Faces.Upper.Kind == diaphragm.FaceVacuum != (doc.Faces.Lower.Kind == diaphragm.FaceVacuum) {

@@ -58,8 +58,15 @@ func fieldOf(doc *diaphragm.Diaphragm) modes.Field {
 	if q := doc.Tension.WeftRatio; q != 0 && q != 1 {
 		field = append(field, modes.WarpWeft(modes.WarpWeftRatio(1/q), doc.Tension.WarpAngle)...)
 	}
+	if doc.Tension.Upright {
+		pull := doc.Sheet.ArealDensity() * gravity * doc.Ring.Radius / doc.Tension.Nominal
+		field = append(field, modes.OwnWeight(pull, -math.Pi/2, doc.Sheet.Nu)...)
+	}
 	return field
 }
+
+// gravity, m/s^2: the standard value.
+const gravity = 9.80665
 
 // coupledSolutions keeps the last few coupled diaphragms, for the table, the
 // drawing and the costs.
@@ -212,6 +219,9 @@ func unevenWords(doc *diaphragm.Diaphragm, uneven modes.Uneven) []string {
 			rim = "is bonded to the rim"
 		}
 		list = append(list, "The uneven tension is the elastic field of a sheet that "+rim+"; the mean is the nominal tension.")
+		if doc.Tension.Upright {
+			list = append(list, "The weight of the upright sheet is held all around the rim, down being the lower side of the plan.")
+		}
 	}
 	if uneven.Oval.Half != 0 {
 		list = append(list, "The ring's being out of round changes sheet and fluid; a wall or a cavity is taken as round.")

@@ -105,3 +105,100 @@ func TestWrinklingIsRefused(t *testing.T) {
 		t.Errorf("%v", p)
 	}
 }
+
+// The weight of an upright sheet is bounded by its own: rim to rim along the
+// vertical it adds sigma g times a diameter, so the largest and the smallest
+// tension differ by about that over T. By the closed field of OwnWeight the
+// radial tension at the rim is T -+ 2 sigma g a/(3 - nu).
+func TestUprightSheetHangs(t *testing.T) {
+	doc := demoDocument()
+	doc.Sheet.MeasuredArealDensity, doc.Tension.Nominal = 8, 200
+	doc.Tension.Upright = true
+	result, err := runModes(context.Background(), &ModesRequest{Document: doc, Count: 4})
+	if err != nil {
+		t.Fatal(err)
+	}
+	pull := 8 * 9.80665 * doc.Ring.Radius // standard gravity
+	want := 2 * pull / (3 - doc.Sheet.Nu)
+	if got := 200 - result.Smallest.Tension; math.Abs(got/want-1) > 1e-6 || math.Abs(math.Sin(result.Smallest.Angle)+1) > 1e-6 {
+		t.Errorf("the smallest tension is %v below the mean, want %v, at %v rad", got, want, result.Smallest.Angle)
+	}
+	if got := result.Largest.Tension - 200; math.Abs(got/want-1) > 1e-6 {
+		t.Errorf("the largest is %v above the mean, want %v", got, want)
+	}
+}
+
+// A sheet on a hub: (m, n) of the annulus, the ideal sheet.
+func TestHubIsListedAndDrawn(t *testing.T) {
+	doc := demoDocument()
+	doc.Ring.HubRadius = doc.Ring.Radius / 2
+	result, err := runModes(context.Background(), &ModesRequest{Document: doc, Count: 6})
+	if err != nil {
+		t.Fatal(err)
+	}
+	// Roots of J_0(x) Y_0(x/2) = J_0(x/2) Y_0(x): 6.2461 (Abramowitz & Stegun,
+	// Table 9.7: lambda = 2, first root 3.1230 in units of the smaller radius).
+	wave := math.Sqrt(doc.Tension.Nominal / doc.Sheet.ArealDensity())
+	want := 2 * 3.1230 * wave / (2 * math.Pi * doc.Ring.Radius)
+	if f := result.Modes[0].Frequency; math.Abs(f/want-1) > 0.00005/3.1230 {
+		t.Errorf("f(0,1) = %v, want %v", f, want)
+	}
+	if len(result.Applies) != 0 || len(result.Cautions) != 1 || !strings.Contains(result.Cautions[0], "bending stiffness, the fluid") {
+		t.Errorf("applies %v, cautions %q", result.Applies, result.Cautions)
+	}
+	shape, err := runShape(context.Background(), &ShapeRequest{Document: &doc, M: 0, N: 1, Size: 65, SectionPoints: 9})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if shape.Hub != 0.5 || shape.Raster[32*65+32] != 0 || len(shape.Lobes) != 1 {
+		t.Errorf("hub %v, centre %v, lobes %v", shape.Hub, shape.Raster[32*65+32], shape.Lobes)
+	}
+	costs, err := runCosts(context.Background(), &CostsRequest{Document: doc, M: 0, N: 1})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, s := range costs.Sensitivities {
+		if s.Field == "tension.nominal" && math.Abs(s.PerPercent-0.5) > 1e-6 {
+			t.Errorf("tension: %v", s.PerPercent)
+		}
+	}
+	if len(costs.Steps) != 1 || math.Abs(costs.Steps[0].Frequency/want-1) > 0.00005/3.1230 {
+		t.Errorf("steps %v", costs.Steps)
+	}
+}
+
+// Sensitivities of a coupled mode: d ln f/d ln of the mass is negative and, for a
+// light patch, minus half its share of the kinetic energy (Rayleigh); tension
+// has the share of a half that radius and densities leave.
+func TestCoupledSensitivities(t *testing.T) {
+	doc := unevenDocument()
+	doc.Faces = diaphragm.Faces{Upper: diaphragm.Face{Kind: diaphragm.FaceVacuum}, Lower: diaphragm.Face{Kind: diaphragm.FaceVacuum}}
+	doc.Sheet.E = 1e4 // no stiffness to speak of
+	doc.Tension.Harmonics = nil
+	doc.Attached.Patches[0].Radius, doc.Attached.Patches[0].Mass = 0, 1e-5
+	costs, err := runCosts(context.Background(), &CostsRequest{Document: doc, M: 0, N: 1})
+	if err != nil {
+		t.Fatal(err)
+	}
+	sheet := doc.Sheet.ArealDensity() * math.Pi * doc.Ring.Radius * doc.Ring.Radius
+	want := map[string]float64{
+		"tension.nominal": 0.5,
+		// The mean of the square of J_0(j_01 r) over the disc is J_1(j_01)^2,
+		// J_1(j_01) = 0.519147 (Abramowitz & Stegun, Table 9.5), and 1 in the middle.
+		"attached.patches.0.mass": -0.5 * doc.Attached.Patches[0].Mass / sheet / (0.519147 * 0.519147),
+	}
+	found := 0
+	for _, s := range costs.Sensitivities {
+		if w, ok := want[s.Field]; ok {
+			found++
+			// Of second order in the mass's share of 2e-4, and over the patch the
+			// shape falls by j^2 s^2/4 = 0.3 % at its radius over a of 0.044.
+			if math.Abs(s.PerPercent-w) > 0.01*math.Abs(w) {
+				t.Errorf("%s: %v, want %v", s.Field, s.PerPercent, w)
+			}
+		}
+	}
+	if found != 2 {
+		t.Errorf("%d of 2 are listed: %+v", found, costs.Sensitivities)
+	}
+}

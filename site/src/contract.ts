@@ -1870,6 +1870,10 @@ export interface Tension {
    */
   warpAngle?: number;
   /**
+   * Upright is true where the plan stands vertical, its lower side down, so that the weight of the sheet hangs in the ring.
+   */
+  upright?: boolean;
+  /**
    * Harmonics of the tension around the rim, at most MostHarmonics.
    */
   harmonics?: Harmonic[];
