@@ -5,27 +5,38 @@ import (
 	"hoopsheet/core/response"
 )
 
-// RespondRequest asks what the diaphragm does after its initial values.
+// RespondRequest asks what the diaphragm does under sources.
 type RespondRequest struct {
-	Document     diaphragm.Diaphragm `json:"document"`
-	Displacement response.Shape      `json:"displacement"`
-	Velocity     response.Shape      `json:"velocity"`
+	Document diaphragm.Diaphragm `json:"document"`
+	// Sources set the sheet moving, each at its time.
+	Sources []response.Source `json:"sources,omitempty"`
+	// Displacement and Velocity are a shape let go and a velocity given at the
+	// start, besides Sources.
+	Displacement response.Shape `json:"displacement,omitempty"`
+	Velocity     response.Shape `json:"velocity,omitempty"`
 	// Impulse reads Velocity as a blow: momentum per area, N s/m^2, instead of
 	// m/s. A blow sets the fluid moving too.
 	Impulse bool `json:"impulse,omitempty"`
 	// Without names effects to leave out; without all of them the ideal sheet
 	// moves, every mode with the damping ratio of the document.
 	Without []Effect `json:"without,omitempty"`
-	// Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
+	// Orders M and Circles N set the modes used: m = 0..M, n = 1..N. With
+	// Circles 0 both are chosen.
 	Orders  int `json:"orders"`
 	Circles int `json:"circles"`
+	// Tolerance is the share of the energy that the modes may leave out where
+	// they are chosen; 0 stands for 0.001.
+	Tolerance float64 `json:"tolerance,omitempty"`
+	// Smooth is the radius, in ring radii, over which sharp edges are smoothed; 0
+	// leaves them.
+	Smooth float64 `json:"smooth,omitempty"`
 	// Duration of the computed time, s, 0 for six periods of mode (0, 1);
 	// Frames evenly spaced over it.
 	Duration float64 `json:"duration"`
 	Frames   int     `json:"frames"`
 	// Radii and Angles set the display grid: radii j/(Radii-1), angles
-	// 2 pi i/Angles. Angles is even, above 2 Orders, and its half has no prime
-	// factor above 5.
+	// 2 pi i/Angles. Angles is even and its half has no prime factor above 5;
+	// it is raised if the orders used need more.
 	Radii  int              `json:"radii"`
 	Angles int              `json:"angles"`
 	Points []response.Point `json:"points"`
@@ -45,9 +56,20 @@ type RespondResult struct {
 	Travel Travel `json:"travel"`
 	// Envelope is the largest |w| on the display grid over all frames, m.
 	Envelope Numbers `json:"envelope"`
+	// Angles of the display grid, as used.
+	Angles int `json:"angles"`
+	// Orders and Circles of the modes used.
+	Orders  int `json:"orders"`
+	Circles int `json:"circles"`
+	// Sources tell what was found about each.
+	Sources []response.SourceNote `json:"sources"`
+	// MissedTravel estimates, from above, how far the modes left out could move
+	// the sheet anywhere, m; -1 where their sum has no end.
+	MissedTravel float64 `json:"missedTravel"`
 	// MissedDisplacement and MissedVelocity are the shares (0 to 1) of the
-	// initial potential and kinetic energy that the chosen modes leave out;
-	// MissedEnergy is the share of both together.
+	// potential and kinetic energy given that the chosen modes leave out;
+	// MissedEnergy is the share of both together. They are estimates from above
+	// where a fluid moves along.
 	MissedDisplacement float64 `json:"missedDisplacement"`
 	MissedVelocity     float64 `json:"missedVelocity"`
 	MissedEnergy       float64 `json:"missedEnergy"`

@@ -29,6 +29,8 @@ func Enums() map[reflect.Type][]string {
 		reflect.TypeFor[diaphragm.Rim]():       words(diaphragm.Rims()),
 		reflect.TypeFor[air.FluidName]():       words(air.FluidNames()),
 		reflect.TypeFor[response.ShapeKind]():  words(response.ShapeKinds()),
+		reflect.TypeFor[response.SourceKind](): words(response.SourceKinds()),
+		reflect.TypeFor[response.PulseKind]():  words(response.PulseKinds()),
 		reflect.TypeFor[tap.Verdict]():         words(tap.Verdicts()),
 	}
 }

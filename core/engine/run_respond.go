@@ -13,13 +13,29 @@ import (
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
 	c := respondCase(request)
 	doc := &request.Document
+	effects, err := effectsWithout(request.Without)
+	if err != nil {
+		return nil, err
+	}
+	chosen := request.Circles == 0
+	if chosen {
+		c.Orders, c.Circles = 0, leastChosen
+	}
+	c.Fit()
 	// How long a duration may be depends on the modes, which are still to come.
 	problems := slices.DeleteFunc(append(diaphragm.Validate(*doc), c.Check()...), func(p Problem) bool { return p.Field == "duration" })
+	if !(request.Tolerance >= 0 && request.Tolerance < 1) {
+		problems = append(problems, Problem{Field: "tolerance", Code: CodeRange, Offset: -1, Message: "The share of the energy that may be left out must be from 0 to below 1."})
+	}
 	if err := refuse(problems); err != nil {
 		return nil, err
 	}
-	var err error
-	if c.Wet, err = wetOf(doc, request.Without, request.Orders, request.Circles); err != nil {
+	if chosen {
+		if err := chooseModes(c, request, effects); err != nil {
+			return nil, err
+		}
+	}
+	if c.Wet, err = wetOf(doc, effects, c.Orders, c.Circles); err != nil {
 		return nil, err
 	}
 	if request.Duration == 0 && c.Wet != nil {
@@ -42,6 +58,11 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 			Time:         motion.Travel.Time,
 		},
 		Envelope:           motion.Envelope,
+		Angles:             c.Angles,
+		Orders:             c.Orders,
+		Circles:            c.Circles,
+		Sources:            motion.Sources,
+		MissedTravel:       motion.MissedTravel,
 		MissedDisplacement: motion.MissedDisplacement,
 		MissedVelocity:     motion.MissedVelocity,
 		MissedEnergy:       motion.MissedEnergy,
@@ -60,6 +81,31 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		result.Strongest = append(result.Strongest, ModeShare{M: share.M, N: share.N, Share: share.Share, Frequency: share.Frequency})
 	}
 	return result, nil
+}
+
+// The modes that are chosen where none are asked for.
+const (
+	leastChosen    = 8
+	mostChosen     = 40 // of the ideal sheet, both ways
+	defaultMissed  = 0.001
+	mostWetCircles = 20
+)
+
+// chooseModes sets orders and circles from the tolerance.
+func chooseModes(c *response.Case, request *RespondRequest, effects modes.Effects) error {
+	tolerance := request.Tolerance
+	if tolerance == 0 {
+		tolerance = defaultMissed
+	}
+	orders, circles := mostChosen, mostChosen
+	if effects != (modes.Effects{}) {
+		orders, circles = min(orders, modes.MaxDiameters), min(circles, mostWetCircles, modes.MaxCircles)
+	}
+	if err := refuse(c.Choose(tolerance, orders, circles)); err != nil {
+		return err
+	}
+	c.Fit()
+	return refuse(slices.DeleteFunc(c.Check(), func(p Problem) bool { return p.Field == "duration" }))
 }
 
 // shownPeriods of mode (0, 1) are computed where no duration is asked for.
@@ -82,6 +128,8 @@ func respondCase(request *RespondRequest) *response.Case {
 		Displacement: request.Displacement,
 		Velocity:     request.Velocity,
 		Impulse:      request.Impulse,
+		Sources:      request.Sources,
+		Smooth:       request.Smooth,
 		Orders:       request.Orders,
 		Circles:      request.Circles,
 		Duration:     duration,

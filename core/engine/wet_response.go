@@ -20,22 +20,39 @@ const (
 // changes the shapes.
 var wets = newCache[solutionKey, *response.Wet](3)
 
+// reallyThere are the effects of those given that the diaphragm has.
+func reallyThere(real *modes.Real, effects modes.Effects) modes.Effects {
+	var fluid, cavity bool
+	for _, face := range []modes.Face{real.Upper, real.Lower} {
+		fluid = fluid || face.Kind != diaphragm.FaceVacuum && face.Density > 0
+		cavity = cavity || face.Kind == diaphragm.FaceCavity
+	}
+	effects.Stiffness = effects.Stiffness && real.Stiffness > 0
+	effects.Fluid = effects.Fluid && fluid
+	effects.Sound = effects.Sound && fluid
+	effects.Cavity = effects.Cavity && cavity
+	return effects
+}
+
 // wetOf gives the modes that a response is summed of; nil where every effect is
-// left out, which is the ideal sheet.
-func wetOf(doc *diaphragm.Diaphragm, without []Effect, orders, circles int) (*response.Wet, error) {
-	effects, err := effectsWithout(without)
-	if err != nil || effects == (modes.Effects{}) {
+// left out, or absent and more modes are wanted than can be had with one, which
+// is the ideal sheet.
+func wetOf(doc *diaphragm.Diaphragm, effects modes.Effects, orders, circles int) (*response.Wet, error) {
+	if effects == (modes.Effects{}) {
+		return nil, nil
+	}
+	real, err := realOf(doc)
+	if err != nil {
 		return nil, err
+	}
+	if (orders > modes.MaxDiameters || circles > modes.MaxCircles) && reallyThere(&real, effects) == (modes.Effects{}) {
+		return nil, nil
 	}
 	if orders > modes.MaxDiameters {
 		return nil, Fail("orders", CodeRange, "With the fluid or the stiffness, up to "+strconv.Itoa(modes.MaxDiameters)+" nodal diameters can be taken.")
 	}
 	if circles > modes.MaxCircles {
 		return nil, Fail("circles", CodeRange, "With the fluid or the stiffness, up to "+strconv.Itoa(modes.MaxCircles)+" nodal circles can be taken.")
-	}
-	real, err := realOf(doc)
-	if err != nil {
-		return nil, err
 	}
 	key := keyOf(real, effects, orders, circles)
 	if wet, ok := wets.get(key); ok {

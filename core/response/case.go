@@ -30,6 +30,12 @@ type Case struct {
 	// blow sets the fluid moving too, a prescribed velocity does not ask what it
 	// takes.
 	Impulse bool
+	// Sources are what sets the sheet moving besides.
+	Sources []Source
+	// Smooth is the radius, in units of the ring radius, over which sharp edges
+	// of all shapes are smoothed: every coefficient is multiplied by
+	// exp(-(j_mn Smooth)^2/4). 0 leaves them as they are.
+	Smooth float64
 	// Wet gives the modes of the diaphragm as it stands; nil stands for the
 	// ideal sheet, whose modes all have the damping ratio Zeta.
 	Wet *Wet
@@ -62,9 +68,19 @@ const (
 // small first letter. It does not look at the values of a formula over the
 // sheet; Respond does.
 func (c *Case) Check() []diaphragm.Problem {
-	problems := append(c.Displacement.Check("displacement."), c.Velocity.Check("velocity.")...)
+	var problems []diaphragm.Problem
+	if c.Displacement.Kind != "" {
+		problems = append(problems, c.Displacement.Check("displacement.")...)
+	}
+	if c.Velocity.Kind != "" {
+		problems = append(problems, c.Velocity.Check("velocity.")...)
+	}
 	add := func(field string, code diaphragm.Code, message string) {
 		problems = append(problems, diaphragm.Problem{Field: field, Code: code, Message: message, Offset: -1})
+	}
+	problems = append(problems, c.checkSources()...)
+	if !(c.Smooth >= 0 && c.Smooth <= 0.5) {
+		add("smooth", diaphragm.CodeBounds, "The radius of smoothing is "+short(c.Smooth)+" ring radii; it must be from 0 to 0.5.")
 	}
 	sound := true
 	within := func(field, name string, value, least, most int) {
@@ -119,13 +135,16 @@ func (c *Case) Check() []diaphragm.Problem {
 	return problems
 }
 
+// Fit raises the number of angles of the display grid to what the orders need.
+func (c *Case) Fit() { c.Angles = disc.NextAngles(max(c.Angles, disc.MinAngles(c.Orders))) }
+
 // unit of time a/c, s.
 func (c *Case) unit() float64 { return c.Sheet.Radius / c.Sheet.WaveSpeed() }
 
 // period of mode (0,1) without damping, s.
 func (c *Case) period() float64 {
 	if c.Wet != nil {
-		return 2 * math.Pi / c.Wet.Orders[0][0].Omega
+		return 2 * math.Pi / c.Wet.lowest().Omega
 	}
 	return 2 * math.Pi / basisOf(0, 1).Zero(0, 1) * c.unit()
 }

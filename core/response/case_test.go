@@ -15,7 +15,7 @@ func TestCaseIsRefused(t *testing.T) {
 		message string
 	}{
 		{func(c *Case) { c.Displacement.Kind = "dent" }, "displacement.kind",
-			"There is no shape named \"dent\"; the shapes are rest, bulge, point, bump, patch, formula."},
+			"There is no shape named \"dent\"; the shapes are rest, bulge, point, bump, patch, even, half, formula, measured."},
 		{func(c *Case) { c.Velocity.Peak = math.NaN() }, "velocity.peak",
 			"The peak must lie between -1,000,000 and 1,000,000 m or m/s."},
 		{func(c *Case) { c.Displacement.Radius = 1 }, "displacement.radius",

@@ -6,7 +6,6 @@ import (
 	"slices"
 
 	"hoopsheet/core/diaphragm"
-	"hoopsheet/core/disc"
 	"hoopsheet/core/internal/sorting"
 )
 
@@ -21,9 +20,14 @@ type Motion struct {
 	// Envelope is the largest |w| of all frames on the display grid, m.
 	Envelope []float32
 	Travel   Travel
+	// Sources tell what was found about each source.
+	Sources []SourceNote
+	// MissedTravel estimates how far the modes left out could move the sheet
+	// anywhere, m; -1 where their sum has no end.
+	MissedTravel float64
 	// MissedDisplacement and MissedVelocity are the shares, 0 to 1, of the
-	// initial potential and kinetic energy outside the chosen modes;
-	// MissedEnergy that of both. With wet modes that of the kinetic energy is an
+	// potential and kinetic energy given outside the chosen modes; MissedEnergy
+	// that of both. With wet modes that of the kinetic energy is an
 	// estimate from above: the fluid's share in what is left out is not known.
 	MissedDisplacement, MissedVelocity, MissedEnergy float64
 	// Energy at the start, J; where the initial displacement has a jump, and so
@@ -43,16 +47,6 @@ type Share struct {
 	Share float64
 	// Frequency without damping, Hz.
 	Frequency float64
-}
-
-// start is the beginning of a motion.
-type start struct {
-	displacement, velocity       form
-	moves                        *motion
-	potential, kinetic           float64 // of all modes, in units of T/2; +Inf with a jump
-	keptPotential, keptKinetic   float64 // of the chosen modes
-	steepest                     float64 // largest initial slope per unit of a
-	displacementScale, velocityA float64 // m; velocity times a/c, m
 }
 
 // Respond computes the motion of a case: the ideal sheet, released from its
@@ -96,7 +90,7 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 		Period:       c.period(),
 		RingDown:     ringDown(2*math.Pi/c.period(), c.lowestZeta()),
 	}
-	begin.account(m, c)
+	begin.energies(m, c)
 	m.Assumptions = c.assumptions()
 	m.Warnings = c.warnings(begin, m, warned{
 		steepest:      math.Max(pictures.steepest, begin.steepest/c.Sheet.Radius),
@@ -107,67 +101,10 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 	return m, nil, nil
 }
 
-// start projects the initial values.
-func (c *Case) start() (*start, []diaphragm.Problem) {
-	basis := basisOf(c.Orders, c.terms())
-	s := &start{
-		displacementScale: c.Displacement.Peak,
-		velocityA:         c.Velocity.Peak * c.Sheet.Radius / c.Sheet.WaveSpeed(),
-	}
-	if c.Impulse {
-		// Momentum per area over sigma is the velocity that the sheet alone would take.
-		s.velocityA /= c.Sheet.ArealDensity
-	}
-	var problems, more []diaphragm.Problem
-	s.displacement, problems = c.Displacement.form(basis, "displacement.")
-	s.velocity, more = c.Velocity.form(basis, "velocity.")
-	if problems = append(problems, more...); len(problems) > 0 {
-		return nil, problems
-	}
-	project := func(f form, scale float64) []float64 {
-		coef := make([]float64, basis.Len())
-		f.project(basis, coef)
-		for i := range coef {
-			coef[i] *= scale
-		}
-		return coef
-	}
-	displacement, velocity := project(s.displacement, s.displacementScale), project(s.velocity, s.velocityA)
-	if c.Wet != nil {
-		s.moves = wetMotion(basis, c.Wet, displacement, velocity, c.Impulse, c.unit())
-	} else {
-		s.moves = newMotion(basis, c.Zeta, displacement, velocity)
-	}
-	n := s.displacement.norms()
-	s.potential = times(s.displacementScale*s.displacementScale, n.slope)
-	s.steepest = times(math.Abs(s.displacementScale), n.steepest)
-	s.kinetic = times(s.velocityA*s.velocityA, s.velocity.norms().square)
-	if c.Wet != nil {
-		s.wetAccount(c, basis, displacement, velocity)
-	} else {
-		s.keptPotential, s.keptKinetic = kept(basis, displacement, velocity)
-	}
-	return s, nil
-}
-
-// kept gives the strain energy of the displacement and the kinetic energy of
-// the velocity, of the sheet alone, that the coefficients hold, in units of T/2.
-func kept(b *disc.Basis, displacement, velocity []float64) (potential, kinetic float64) {
-	for m := 0; m <= b.M; m++ {
-		for n := 1; n <= b.N; n++ {
-			i, norm := b.Index(m, n, disc.Cos), b.Norm(m, n)
-			j := b.Zero(m, n)
-			potential += j * j * norm * (displacement[i]*displacement[i] + displacement[i+1]*displacement[i+1])
-			kinetic += norm * (velocity[i]*velocity[i] + velocity[i+1]*velocity[i+1])
-		}
-	}
-	return potential, kinetic
-}
-
 // lowestZeta is the damping ratio of mode (0,1).
 func (c *Case) lowestZeta() float64 {
 	if c.Wet != nil {
-		return c.Wet.Orders[0][0].Zeta
+		return c.Wet.lowest().Zeta
 	}
 	return c.Zeta
 }
@@ -180,8 +117,8 @@ func times(scale, value float64) float64 {
 	return scale * value
 }
 
-// account fills in energies and what they say of the modes.
-func (s *start) account(m *Motion, c *Case) {
+// energies fills in energies and what they say of the modes.
+func (s *start) energies(m *Motion, c *Case) {
 	m.MissedDisplacement = missed(s.keptPotential, s.potential)
 	m.MissedVelocity = missed(s.keptKinetic, s.kinetic)
 	m.MissedEnergy = missed(s.keptPotential+s.keptKinetic, s.potential+s.kinetic)
@@ -196,6 +133,15 @@ func (s *start) account(m *Motion, c *Case) {
 	}
 	m.Energy = c.Sheet.Tension / 2 * whole
 	m.Strongest = s.moves.strongest(whole, c)
+	m.MissedTravel = s.moves.missedTravel()
+	m.Sources = []SourceNote{}
+	for i, g := range s.list {
+		if i < len(s.list)-len(c.Sources) {
+			continue // a start that is no source
+		}
+		s.remark(c, g)
+		m.Sources = append(m.Sources, g.note)
+	}
 }
 
 // missed is the share of a whole that the kept part leaves out.

@@ -105,6 +105,10 @@ func (s Shape) form(b *disc.Basis, prefix string) (form, []diaphragm.Problem) {
 		return at(bump{width}), nil
 	case ShapePatch:
 		return at(patch{width}), nil
+	case ShapeEven:
+		return even{}, nil
+	case ShapeHalf:
+		return halfForm{s.Angle}, nil
 	case ShapeFormula:
 		formula, err := Compile(s.Formula)
 		if err != nil {

@@ -19,13 +19,19 @@ const (
 	ShapeBump ShapeKind = "bump"
 	// ShapePatch is one inside a round patch and zero outside.
 	ShapePatch ShapeKind = "patch"
-	// ShapeFormula is a formula in r, theta, x and y.
+	// ShapeEven is one everywhere.
+	ShapeEven ShapeKind = "even"
+	// ShapeHalf is one on the half of the disc about Angle, zero on the other.
+	ShapeHalf ShapeKind = "half"
+	// ShapeFormula is a formula in r, theta, x and y, and in metres rho, X and Y.
 	ShapeFormula ShapeKind = "formula"
+	// ShapeMeasured is fitted to measured values at points.
+	ShapeMeasured ShapeKind = "measured"
 )
 
 // ShapeKinds lists every kind of shape in the order in which it is offered.
 func ShapeKinds() []ShapeKind {
-	return []ShapeKind{ShapeRest, ShapeBulge, ShapePoint, ShapeBump, ShapePatch, ShapeFormula}
+	return []ShapeKind{ShapeRest, ShapeBulge, ShapePoint, ShapeBump, ShapePatch, ShapeEven, ShapeHalf, ShapeFormula, ShapeMeasured}
 }
 
 // Shape is an initial displacement (Peak in m) or velocity (Peak in m/s) over
@@ -45,6 +51,13 @@ type Shape struct {
 	// Formula in r (0 to 1), theta (rad, from 0 to below 2 pi), x and y
 	// (r cos theta, r sin theta).
 	Formula string `json:"formula"`
+	// Table of a measured shape: lines "x, y, value", or "r, theta, value" where
+	// the first line names these (theta in degrees).
+	Table string `json:"table,omitempty"`
+	// PlaceUnit and ValueUnit of the table; m, and the unit of the shape, if
+	// empty.
+	PlaceUnit string `json:"placeUnit,omitempty"`
+	ValueUnit string `json:"valueUnit,omitempty"`
 }
 
 // Point is a place on the sheet: Radius in units of the ring radius, Angle in

@@ -7,6 +7,22 @@ import (
 )
 
 // wetOrder holds what the projections of one order need.
+//
+// In units of T/2 and lengths of a, the strain of coefficients c is c'Gc with
+// G = diag(j^2 norm), apart from bending and cavity; K is the strain with these.
+// Wet modes are orthogonal in K, as they are in the mass of sheet and fluid, so
+// amplitudes follow from it alone and no fluid operator is needed:
+//
+//   - Without a cavity, displacements and velocities are split by least squares
+//     in G. For modes orthogonal in G that is phi_i'G w0 over phi_i'G phi_i.
+//   - With a cavity, G alone does not tell apart modes in which the sheet moves
+//     alike. A displacement let go is what a static load held, the pressure of
+//     the cavity even: a_i = phi_i'K w0 over phi_i'K phi_i, where phi_i'K w0 is
+//     phi_i'G w0 + CavitySpring (integral of phi_i) (integral of w0). With a
+//     velocity the fluid moves along as in slow motion, which is the same sum.
+//   - An impulse p gives b_i = phi_i'p/m_i with the modal mass
+//     m_i = phi_i'K phi_i/omega_i^2 of sheet, fluid and cavity together. A load
+//     acts on the coordinates in the same way.
 type wetOrder struct {
 	b      *disc.Basis
 	m      int
@@ -93,7 +109,7 @@ func (o *wetOrder) split(c []float64) []float64 {
 		}
 		return out
 	}
-	o.solve(out)
+	solveFactored(o.gram, out)
 	return out
 }
 
@@ -109,7 +125,7 @@ func (o *wetOrder) struck(p []float64) []float64 {
 	return out
 }
 
-// factorise is Cholesky's method on the matrix of phi_i'G phi_k.
+// factorise prepares the matrix of phi_i'G phi_k.
 func (o *wetOrder) factorise() {
 	o.gram = make([][]float64, len(o.list))
 	loaded := make([]float64, o.b.N)
@@ -121,42 +137,7 @@ func (o *wetOrder) factorise() {
 		for k := range row {
 			row[k] = dotted(o.list[k].Shape, loaded)
 		}
-		whole := row[i]
-		for k := range row {
-			row[k] -= dotted(row[:k], o.gramRow(k, row)[:k])
-			if k < i {
-				row[k] /= o.gram[k][k]
-			}
-		}
-		// A mode within the span of those before it has no part of its own: the
-		// factor without bound gives it the amplitude zero.
-		if row[i] > 1e-12*whole {
-			row[i] = math.Sqrt(row[i])
-		} else {
-			row[i] = math.Inf(1)
-		}
-		o.gram[i] = row
-	}
-}
-
-// gramRow is row k, which is own where it is being made.
-func (o *wetOrder) gramRow(k int, own []float64) []float64 {
-	if o.gram[k] == nil {
-		return own
-	}
-	return o.gram[k]
-}
-
-// solve replaces x by the solution of the factorised system.
-func (o *wetOrder) solve(x []float64) {
-	for i, row := range o.gram {
-		x[i] = (x[i] - dotted(row[:i], x)) / row[i]
-	}
-	for i := len(x) - 1; i >= 0; i-- {
-		x[i] /= o.gram[i][i]
-		for k, v := range o.gram[i][:i] {
-			x[k] -= v * x[i]
-		}
+		factorRow(o.gram, row)
 	}
 }
 

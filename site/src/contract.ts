@@ -78,13 +78,31 @@ export type Kind = 'ringing' | 'steady' | 'unclear';
  */
 export type Numbers = Float32Array;
 /**
+ * PulseKind names the course of a load in time.
+ */
+export type PulseKind = 'step' | 'ramp' | 'halfSine' | 'triangle' | 'rectangle' | 'decay' | 'table';
+/**
  * Rim says how the edge of the sheet is held against bending.
  */
 export type Rim = 'clamped' | 'supported';
 /**
  * ShapeKind names a form of initial displacement or velocity.
  */
-export type ShapeKind = 'rest' | 'bulge' | 'point' | 'bump' | 'patch' | 'formula';
+export type ShapeKind =
+  'rest' | 'bulge' | 'point' | 'bump' | 'patch' | 'even' | 'half' | 'formula' | 'measured';
+/**
+ * SourceKind names what sets a sheet moving.
+ */
+export type SourceKind =
+  | 'displacement'
+  | 'velocity'
+  | 'impulse'
+  | 'blow'
+  | 'body'
+  | 'pressure'
+  | 'front'
+  | 'release'
+  | 'shake';
 /**
  * System is a system of units in which quantities are first shown.
  */
@@ -1028,6 +1046,20 @@ export interface Problem {
   offset: number;
 }
 /**
+ * Pulse is the course of a load in time.
+ */
+export interface Pulse {
+  kind: PulseKind;
+  /**
+   * Duration, s.
+   */
+  duration?: number;
+  /**
+   * Table holds the lines "time in s, value" of a table.
+   */
+  table?: string;
+}
+/**
  * ReadItem is one typed text: "5 mm" for a length.
  */
 export interface ReadItem {
@@ -1171,12 +1203,19 @@ export interface RenameRequest {
   name: string;
 }
 /**
- * RespondRequest asks what the diaphragm does after its initial values.
+ * RespondRequest asks what the diaphragm does under sources.
  */
 export interface RespondRequest {
   document: Diaphragm;
-  displacement: Shape;
-  velocity: Shape;
+  /**
+   * Sources set the sheet moving, each at its time.
+   */
+  sources?: Source[];
+  /**
+   * Displacement and Velocity are a shape let go and a velocity given at the start, besides Sources.
+   */
+  displacement?: Shape;
+  velocity?: Shape;
   /**
    * Impulse reads Velocity as a blow: momentum per area, N s/m^2, instead of m/s. A blow sets the fluid moving too.
    */
@@ -1186,17 +1225,25 @@ export interface RespondRequest {
    */
   without?: Effect[];
   /**
-   * Orders M and Circles N set the modes used: m = 0..M, n = 1..N.
+   * Orders M and Circles N set the modes used: m = 0..M, n = 1..N. With Circles 0 both are chosen.
    */
   orders: number;
   circles: number;
+  /**
+   * Tolerance is the share of the energy that the modes may leave out where they are chosen; 0 stands for 0.001.
+   */
+  tolerance?: number;
+  /**
+   * Smooth is the radius, in ring radii, over which sharp edges are smoothed; 0 leaves them.
+   */
+  smooth?: number;
   /**
    * Duration of the computed time, s, 0 for six periods of mode (0, 1); Frames evenly spaced over it.
    */
   duration: number;
   frames: number;
   /**
-   * Radii and Angles set the display grid: radii j/(Radii-1), angles 2 pi i/Angles. Angles is even, above 2 Orders, and its half has no prime factor above 5.
+   * Radii and Angles set the display grid: radii j/(Radii-1), angles 2 pi i/Angles. Angles is even and its half has no prime factor above 5; it is raised if the orders used need more.
    */
   radii: number;
   angles: number;
@@ -1228,7 +1275,24 @@ export interface RespondResult {
    */
   envelope: Numbers;
   /**
-   * MissedDisplacement and MissedVelocity are the shares (0 to 1) of the initial potential and kinetic energy that the chosen modes leave out; MissedEnergy is the share of both together.
+   * Angles of the display grid, as used.
+   */
+  angles: number;
+  /**
+   * Orders and Circles of the modes used.
+   */
+  orders: number;
+  circles: number;
+  /**
+   * Sources tell what was found about each.
+   */
+  sources: SourceNote[];
+  /**
+   * MissedTravel estimates, from above, how far the modes left out could move the sheet anywhere, m; -1 where their sum has no end.
+   */
+  missedTravel: number;
+  /**
+   * MissedDisplacement and MissedVelocity are the shares (0 to 1) of the potential and kinetic energy given that the chosen modes leave out; MissedEnergy is the share of both together. They are estimates from above where a fluid moves along.
    */
   missedDisplacement: number;
   missedVelocity: number;
@@ -1465,6 +1529,15 @@ export interface Shape {
    * Formula in r (0 to 1), theta (rad, from 0 to below 2 pi), x and y (r cos theta, r sin theta).
    */
   formula: string;
+  /**
+   * Table of a measured shape: lines "x, y, value", or "r, theta, value" where the first line names these (theta in degrees).
+   */
+  table?: string;
+  /**
+   * PlaceUnit and ValueUnit of the table; m, and the unit of the shape, if empty.
+   */
+  placeUnit?: string;
+  valueUnit?: string;
 }
 /**
  * ShapeRequest asks for the drawing of one mode.
@@ -1597,6 +1670,71 @@ export interface Sheet {
    * LossFactor eta of the material, 0 to 1: the share of its elastic energy that is lost per radian. It acts on bending only, because tension stores energy without loss.
    */
   lossFactor?: number;
+}
+/**
+ * Source is one thing that sets the sheet moving. What its kind does not name is not read.
+ */
+export interface Source {
+  kind: SourceKind;
+  /**
+   * At is when it happens, or begins, s.
+   */
+  at: number;
+  /**
+   * Shape over the sheet: a displacement (Peak in m), velocity (m/s), impulse (N s/m^2) or pressure (Pa); the force of a pad (N) that is released. For a blow or a body the contact, a patch or bump of which Peak is not read.
+   */
+  shape: Shape;
+  /**
+   * Momentum of a blow, N s.
+   */
+  momentum?: number;
+  /**
+   * Mass, kg, and Speed, m/s, of a body.
+   */
+  mass?: number;
+  speed?: number;
+  /**
+   * Restitution, 0 to 1, of a body that does not stay.
+   */
+  restitution?: number;
+  stays?: boolean;
+  /**
+   * Pulse in time of a pressure, a front or a shake.
+   */
+  pulse?: Pulse;
+  /**
+   * FrontSpeed, m/s, and FrontDirection, rad, of a travelling front: where it goes. At is when it reaches the ring.
+   */
+  frontSpeed?: number;
+  frontDirection?: number;
+}
+/**
+ * SourceNote is what the computation found out about a source.
+ */
+export interface SourceNote {
+  kind: SourceKind;
+  /**
+   * Notes say what is assumed and what converges.
+   */
+  notes: string[];
+  /**
+   * EffectiveMass, kg, is that with which the sheet meets a body; Momentum, N s, is that given to the sheet.
+   */
+  effectiveMass?: number;
+  momentum?: number;
+  /**
+   * Missed is the share of its energy that the modes leave out.
+   */
+  missed: number;
+  /**
+   * Residual is the root mean square by which a fit misses the measured values, and RimMisfit the largest value fitted within a twentieth of the radius from the rim; in the unit of the shape, SI.
+   */
+  residual?: number;
+  rimMisfit?: number;
+  /**
+   * Outliers are the lines of the table that lie far off the fit.
+   */
+  outliers?: number[];
 }
 /**
  * SpecificationRow is one specified quantity, formatted for reading.
