@@ -54,7 +54,7 @@ func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 	add := func(text string) { list = append(list, text) }
 
 	energy := m.Energy
-	if c.Wet != nil {
+	if c.Wet != nil || c.later() {
 		// The fluid moves too, and a cavity keeps its share for itself.
 		energy = c.Sheet.Tension / 2 * s.moves.strain()
 	}

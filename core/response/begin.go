@@ -49,6 +49,7 @@ type acting struct {
 	force  []float64 // by modes; nil for a blow
 	at     float64
 	kick   []float64
+	shake  float64 // the load on a body of mass sigma a^2 on the sheet
 }
 
 // start is the beginning of a motion.
@@ -198,7 +199,11 @@ func (s *start) join(c *Case) *diaphragm.Problem {
 				acts = append(acts, c.frontOn(p, g))
 				continue
 			}
-			acts = append(acts, acting{force: g.q, pieces: g.pulse().pieces(g.At, c.unit())})
+			act := acting{force: g.q, pieces: g.pulse().pieces(g.At, c.unit())}
+			if g.Kind == SourceShake {
+				act.shake = -c.unit() * c.unit()
+			}
+			acts = append(acts, act)
 		}
 	}
 	first := &stage{basis: p.basis, modes: slices.Clone(p.modes)}

@@ -53,11 +53,14 @@ func (p *powers) driven(omega, zeta, t, c, s float64, degree int) {
 	// j + 2. Beyond, by the equation of motion,
 	//   omega^2 R_j = t^j - 2 zeta omega j R_{j-1} - j (j-1) R_{j-2}.
 	x := omega * t
-	if zeta > 1.05 {
+	large := x // of the roots, at most
+	if zeta > 1 {
+		large *= zeta + math.Sqrt((zeta-1)*(zeta+1))
+	}
+	if zeta > 1.05 && large > 2 {
 		p.overdamped(omega, zeta, t, degree)
 		return
 	}
-	large := x * (zeta + math.Sqrt(math.Abs((1-zeta)*(1+zeta)))) // of the roots, at most
 	for j := degree; j >= 0 && large <= float64(j+2); j-- {
 		p[j] = differences(-2*zeta*x, x*x, j) * math.Pow(t, float64(j+2))
 		degree = j - 1

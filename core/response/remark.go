@@ -20,6 +20,13 @@ func (s *start) remark(c *Case, g *given) {
 		}
 	case SourceImpulse, SourceBlow:
 		add("The blow is over before anything has moved; it sets sheet and fluid moving.")
+	case SourceBody:
+		text := "The body meets the mass of the sheet, and of the fluid with it, that the modes used let move under its contact at once"
+		if g.Stays {
+			add(text + ": it stays without bouncing, moves with the mean of the sheet under it and does not stiffen it; its weight is left out. From then on sheet and body have modes of their own, each with the damping of those it is made of.")
+		} else {
+			add(text + "; it leaves at the restitution times the speed at which it came, and does not come back.")
+		}
 	case SourceShake:
 		add("Displacements are seen from the ring. Wall and fluid are carried along with it, so that only the inertia of the sheet is left.")
 	}

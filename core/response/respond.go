@@ -126,7 +126,7 @@ func (s *start) energies(m *Motion, c *Case) {
 	if math.IsInf(whole, 1) {
 		whole = s.keptPotential + s.keptKinetic
 	}
-	if c.Wet != nil {
+	if c.Wet != nil || c.later() {
 		// The fluid moves too, and a cavity stores energy: what the modes hold.
 		potential, kinetic := s.moves.energy(0)
 		whole = potential + kinetic
@@ -161,12 +161,21 @@ func (mo *motion) strongest(whole float64, c *Case) []Share {
 	s := mo.stages[0]
 	shares := make([]Share, 0, len(s.modes))
 	hertz := c.Sheet.WaveSpeed() / c.Sheet.Radius / (2 * math.Pi)
+	energyOf := func(k *modal) float64 { return k.energy(0) }
+	if c.later() {
+		// What each may reach.
+		energyOf = func(k *modal) float64 { return k.norm * k.omega * k.omega * k.swing * k.swing }
+		whole = 0
+		for i := range s.modes {
+			whole += energyOf(&s.modes[i])
+		}
+	}
 	for i := 0; i < len(s.modes); i++ {
 		k := &s.modes[i]
-		energy := k.energy(0)
+		energy := energyOf(k)
 		if i+1 < len(s.modes) && k.same(&s.modes[i+1]) {
 			i++
-			energy += s.modes[i].energy(0)
+			energy += energyOf(&s.modes[i])
 		}
 		if energy > 0 {
 			shares = append(shares, Share{M: k.m, N: k.n, Share: energy / whole, Frequency: k.omega * hertz})
