@@ -172,7 +172,7 @@ func coupledLine(doc *diaphragm.Diaphragm, mode *modes.CoupledMode) Mode {
 func coupledWords(mode *modes.CoupledMode) string {
 	text := modes.Mode{M: mode.M, N: mode.N}.NodalLines()
 	if mode.M > 0 || mode.N > 1 {
-		text = "close to " + text
+		text = "near " + text
 	}
 	if mode.M > 0 && mode.Split >= pairSplits {
 		// An antinode lies a quarter of the pattern from a nodal line.
@@ -183,7 +183,7 @@ func coupledWords(mode *modes.CoupledMode) string {
 		text += ", one at " + quantity.FormatNumber(mode.NodalAngle*180/math.Pi, 3) + "° (" + like + "-like)"
 	}
 	if mode.Share < mixedShare {
-		text += "; mixed, " + quantity.FormatNumber(100*mode.Share, 2) + " % of its energy is that of the even mode"
+		text += "; mixed, " + quantity.FormatNumber(100*mode.Share, 2) + " % of it is (" + strconv.Itoa(mode.M) + ", " + strconv.Itoa(mode.N) + ")"
 	}
 	return text
 }

@@ -180,7 +180,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		// The inertia of what the unknowns do not express is an estimate, so it is
 		// counted twice; of the deflection under strips, a quarter of what the
 		// unknowns do not express, for square ends and for what bends across them.
-		inertia := 2*math.Abs(bilinear(tail, extra, y[modes:]))*m.value + math.Abs(bilinear(strips, extra, y[modes:]))/4/v
+		inertia := 2*math.Abs(bilinear(tail, extra, y[modes:]))*m.value + math.Abs(bilinear(strips, extra, y[modes:]))/4
 		m.change = m.value * (m.change + inertia + s.unresolved(list, rows, size, y, v))
 		out[k] = m
 	}

@@ -113,3 +113,29 @@ func TestStripAcross(t *testing.T) {
 		}
 	}
 }
+
+// Figures relative to the frequency do not depend on the units: the same
+// diaphragm with another radius, tension and areal density has the same ones.
+func TestAttachedInOtherUnits(t *testing.T) {
+	const radius, tension, sigma = 0.45, 310, 0.07
+	masses := func(a, weight float64) Uneven {
+		return Uneven{
+			Patches: []Patch{{Distance: 0.4 * a, Angle: 1, Radius: 0.05 * a, Mass: 0.06 * weight}, {Distance: 0.5 * a, Angle: 4, Radius: 0.05 * a, Mass: 0.02 * weight, Rigid: true}},
+			Strips:  []Strip{{Offset: 0.3 * a, Angle: 2, Width: 0.05 * a, Mass: 0.1 * weight}},
+		}
+	}
+	one := coupled(t, solve(t, Real{Radius: 1, Tension: 1, ArealDensity: 1}, Request{MaxM: 6, MaxN: 3}), masses(1, 1))
+	other := coupled(t, solve(t, Real{Radius: radius, Tension: tension, ArealDensity: sigma}, Request{MaxM: 6, MaxN: 3}), masses(radius, sigma*radius*radius))
+	scale := math.Sqrt(tension/sigma) / radius
+	for i := range 12 {
+		a, b := one.Modes[i], other.Modes[i]
+		// Frequencies to rounding of the solution, estimates as far as that reaches
+		// them.
+		if math.Abs(b.Frequency/a.Frequency/scale-1) > 1e-9 {
+			t.Errorf("mode %d: %v, want %v", i, b.Frequency, a.Frequency*scale)
+		}
+		if x, y := a.Error/a.Frequency, b.Error/b.Frequency; math.Abs(x-y) > 1e-3*x+1e-9 || x > 1e-2 {
+			t.Errorf("mode %d: relative errors %v and %v", i, x, y)
+		}
+	}
+}

@@ -30,7 +30,7 @@ export class HoopModes extends LitElement {
     sharedStyle,
     css`
       tbody tr { cursor: pointer; }
-      .choose { min-height: 36px; padding: 2px 10px; font-variant-numeric: tabular-nums; }
+      .choose { min-height: 36px; padding: 2px 10px; white-space: nowrap; font-variant-numeric: tabular-nums; }
       .count { display: flex; align-items: center; gap: 8px 18px; flex-wrap: wrap; }
       dl { display: grid; grid-template-columns: 1fr auto; gap: 3px 14px; margin: 12px 0 0; font-size: 0.94em; }
       dd { margin: 0; text-align: end; font-variant-numeric: tabular-nums; }
@@ -206,8 +206,7 @@ export class HoopModes extends LitElement {
       <td class="number" title=${mode.error > 0 ? `error of the computation below ${figure(mode.error, 1)} Hz` : ''}>${figure(mode.frequency)} Hz</td>
       <td class="number">${figure(mode.ideal)} Hz</td>
       <td class="number">${mode.ringDown > 0 ? `${figure(mode.ringDown, 2)} s` : '–'}</td>
-      <td>${mode.nodalLines}${mode.split > 0 ? html`<br /><span class="soft">${mode.upper ? 'upper' : 'lower'} of a pair, the other at ${figure(mode.partner)} Hz:
-        split ${figure(mode.splitHertz, 2)} Hz, ${percent(mode.split, 2)}</span>` : nothing}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
+      <td>${mode.nodalLines}${mode.split > 0 ? html`<br /><span class="soft">${mode.upper ? 'upper' : 'lower'} of a pair split by ${figure(mode.splitHertz, 2)} Hz (${percent(mode.split, 2)}); the other at ${figure(mode.partner)} Hz</span>` : nothing}${mode.kind ? html` <span class="chip">${mode.kind}</span>` : nothing}</td>
       <td>${nearest(mode)}</td>
     </tr>`;
   }
