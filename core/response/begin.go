@@ -196,7 +196,11 @@ func (s *start) join(c *Case) *diaphragm.Problem {
 			}
 		case wayPressure:
 			if g.Kind == SourceFront {
-				acts = append(acts, c.frontOn(p, g))
+				more, problem := c.frontOn(p, g)
+				if problem != nil {
+					return problem
+				}
+				acts = append(acts, more...)
 				continue
 			}
 			act := acting{force: g.q, pieces: g.pulse().pieces(g.At, c.unit())}
