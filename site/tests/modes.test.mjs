@@ -151,3 +151,89 @@ test('with reduced motion asked for, nothing moves until it is told to', async (
   await drawing.getByRole('button', { name: 'Move' }).click();
   await until(async () => (await path()) !== still, 'motion');
 });
+
+/** Opens Specify, edits, and comes to Modes. */
+async function specified(...steps) {
+  page = await visit.open('specify.html');
+  await box(page, 'ring.radius').waitFor();
+  for (const details of await page.locator('hoop-specify details').all()) {
+    await details.evaluate((element) => { element.open = true; });
+  }
+  for (const [field, value] of steps) {
+    if (value === undefined) {
+      await page.getByRole('button', { name: field }).click();
+    } else {
+      await box(page, field).fill(value);
+    }
+  }
+  await saved(page);
+  page = await visit.open('modes.html');
+  await rows().first().waitFor();
+}
+
+/** The modes as the page saves them, once they are no longer rough. */
+async function listed() {
+  await page.locator('#rough').waitFor({ state: 'detached' });
+  return JSON.parse((await savedBy(actions().getByRole('button', { name: 'Save JSON' }))).text);
+}
+
+test('uneven tension shows both of a pair, the split and the angle', async () => {
+  await specified(['Add a harmonic'], ['tension.harmonics.0.epsilon', '10 %'], ['tension.harmonics.0.angle', '30']);
+  await page.locator('#tautness').waitFor();
+  const { modes, smallest } = await listed();
+  const pair = modes.filter((mode) => mode.m === 1 && mode.n === 1);
+  assert.equal(pair.length, 2);
+  // k = 2 splits (1, 1) by half of its amplitude at first order, dry; a fluid that moves along weighs on both alike but for
+  // a few percent of the split, and the second order is the square of the amplitude.
+  assert.ok(Math.abs(pair[0].split - 0.05) < 0.01 + 0.005, `split ${pair[0].split}`);
+  assert.equal(pair[0].partner, pair[1].frequency);
+  // The lower one has its nodal line along the strong pull, at 30 degrees.
+  const lower = pair.find((mode) => !mode.upper);
+  assert.ok(Math.abs((lower.nodalAngle * 180) / Math.PI - 30) < 0.1, `nodal line at ${lower.nodalAngle} rad`);
+  assert.ok(smallest.share > 0.89 && smallest.share < 0.91, `smallest tension ${smallest.share} of the mean`);
+  const shown = rows().filter({ hasText: '(1, 1)' }).first();
+  await text(shown, /lower of a pair split by .* Hz .*; the other at/);
+  await text(shown, /one at 30°/);
+  await page.getByRole('button', { name: 'Draw mode (1, 1), upper of the pair' }).click();
+  await text(page.locator('#mode-figures'), /the other of its pair/);
+  await text(page.locator('#mode-figures'), /error of the computation/);
+  assert.match(await page.locator('hoop-mode-drawing canvas').getAttribute('aria-label'), /close to/);
+  // The costs of this mode end with the unevenness.
+  await text(page.locator('#costs tr').last(), /unevenness/);
+  await page.locator('hoop-mode-costs details').evaluate((element) => { element.open = true; });
+  await text(page.locator('#sensitivities'), /amplitude of harmonic k = 2/);
+  // Taken out, the pair is one again, and the page says so.
+  await page.getByLabel('unevenness').uncheck();
+  await page.locator('#tautness').waitFor({ state: 'detached' });
+  assert.equal((await listed()).modes.filter((mode) => mode.m === 1 && mode.n === 1).length, 1);
+  await page.locator('.caution').filter({ hasText: 'left out the unevenness' }).waitFor();
+});
+
+test('a patch lowers the modes, and its removal can be undone', async () => {
+  await open();
+  const before = (await listed()).modes[0].frequency;
+  await specified(['Add a patch'], ['attached.patches.0.mass', '4 g']);
+  await page.locator('#costs').filter({ hasText: 'attached masses' }).waitFor();
+  const { modes } = await listed();
+  assert.ok(modes[0].frequency < before && modes[0].frequency > 0.9 * before, `${modes[0].frequency} Hz against ${before} Hz`);
+  assert.ok(modes[0].error < 1e-3 * modes[0].frequency, `error ${modes[0].error} Hz`);
+  page = await visit.open('specify.html');
+  await page.getByRole('button', { name: 'Remove patch 1' }).click();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await until(async () => (await box(page, 'attached.patches.0.mass').count()) === 1 && (await box(page, 'attached.patches.0.mass').inputValue()) === '4', 'the patch of 4 g');
+});
+
+test('wrinkling is refused in words', async () => {
+  await specified(['tension.weftRatio', '0.2'], ['Add a harmonic'], ['tension.harmonics.0.epsilon', '60 %']);
+  await text(page.locator('p.error'), /the sheet wrinkles: the smallest is -?[0-9.]+ of the mean/);
+});
+
+test('a hub gives the modes of the annulus and says what is left out', async () => {
+  await specified(['ring.hubRadius', '225 mm']);
+  const { modes, applies } = await listed();
+  // Half the radius: J_0(x) Y_0(x/2) = J_0(x/2) Y_0(x) has x = 2 * 3.1230 (Abramowitz & Stegun, Table 9.7), against j_01.
+  const lowest = modes.find((mode) => mode.m === 0 && mode.n === 1);
+  assert.ok(Math.abs(lowest.frequency / lowest.ideal / (6.246 / 2.404825557695773) - 1) < 0.0001 / 6.246 + 1e-6);
+  assert.deepEqual(applies, []);
+  await text(page.locator('.caution').first(), /only the ideal sheet between hub and ring is computed. Left out: bending stiffness, the fluid/);
+});

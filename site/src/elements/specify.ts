@@ -1,6 +1,6 @@
 /** The page Specify: every field of the diaphragm in groups, with what follows from them. */
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
-import { customElement } from 'lit/decorators.js';
+import { customElement, state } from 'lit/decorators.js';
 
 import type { GroupName, Row } from '../contract.js';
 import { SessionController } from '../session/controller.js';
@@ -45,6 +45,9 @@ export class HoopSpecify extends LitElement {
     `,
   ];
 
+  /** The entry taken out last, for as long as it can be put back. */
+  @state() private removed: { readonly path: string; readonly name: string; readonly key: string; readonly fields: readonly Row[] } | null = null;
+
   constructor() {
     super();
     new SessionController(this);
@@ -66,7 +69,7 @@ export class HoopSpecify extends LitElement {
     const rows = session.rows.filter((r) => r.group === group.name);
     const listed = (group.lists ?? []).map((l) => ({ ...l, rows: rows.filter((r) => r.field.startsWith(`${l.path}.`)) }));
     const single = rows.filter((r) => !listed.some((l) => l.rows.includes(r)));
-    const used = listed.some((l) => l.rows.length > 0) || session.problems.some((p) => rows.some((r) => r.field === p.field));
+    const used = listed.some((l) => l.rows.length > 0 || l.path === this.removed?.path) || session.problems.some((p) => rows.some((r) => r.field === p.field));
     const body = html`${single.map((r) => field(r))}
       ${listed.map((l) => this.list(l.path, l.one, l.rows))}
       ${derivedTable(session.derived.filter((d) => d.group === group.name))}`;
@@ -74,6 +77,17 @@ export class HoopSpecify extends LitElement {
       ${group.folded ? html`<details ?open=${used}><summary><h2 id="g-${group.name}">${group.title}</h2></summary>${body}</details>`
         : html`<h2 id="g-${group.name}">${group.title}</h2>${body}`}
     </section>`;
+  }
+
+  /** Puts the entry taken out last at the end of its list, with the texts it had. */
+  private putBack(place: number): void {
+    const { removed } = this;
+    if (removed) {
+      this.removed = null;
+      void session.edit({ field: removed.path, action: 'add', text: '' }, ...removed.fields.map((row) => ({
+        field: `${removed.path}.${place}${row.field.slice(removed.key.length)}`, action: 'set' as const, text: row.unit ? `${row.text} ${row.unit}` : row.text,
+      })));
+    }
   }
 
   private list(path: string, one: string, rows: readonly Row[]): TemplateResult {
@@ -84,10 +98,12 @@ export class HoopSpecify extends LitElement {
     }
     return html`${[...entries].map(([key, fields], i) => html`<div class="line">
         <header><h3>${capital(one)} ${i + 1}</h3>
-          <button type="button" @click=${() => void session.edit({ field: key, action: 'remove', text: '' })}>Remove ${one} ${i + 1}</button></header>
+          <button type="button" @click=${() => { this.removed = { path, name: `${one} ${i + 1}`, key, fields }; void session.edit({ field: key, action: 'remove', text: '' }); }}>Remove ${one} ${i + 1}</button></header>
         ${fields.map((r) => field(r))}
       </div>`)}
-      <div class="actions"><button type="button" @click=${() => void session.edit({ field: path, action: 'add', text: '' })}>Add a ${one}</button></div>`;
+      ${this.removed?.path === path ? html`<p class="note" role="status">${capital(this.removed.name)} is removed.
+        <button type="button" @click=${() => this.putBack(entries.size)}>Undo</button></p>` : nothing}
+      <div class="actions"><button type="button" @click=${() => { this.removed = null; void session.edit({ field: path, action: 'add', text: '' }); }}>Add a ${one}</button></div>`;
   }
 }
 
