@@ -13,7 +13,10 @@ import (
 //
 //   - execution traces: every use is behind a traceLocker that is ok only once runtime/trace has started one;
 //   - the reading of runtime metrics, and GODEBUG's scheduler trace and finalizer check: a page has no environment;
-//   - buffers of CPU profiles: WebAssembly has no signals to fill them.
+//   - buffers of CPU profiles: WebAssembly has no signals to fill them;
+//   - layouts of times and rules of time zones: the program writes its times itself (core/diaphragm), and a page's zone
+//     comes from the browser;
+//   - calls of functions and methods through reflection, and GODEBUG's search for a culprit by bisection.
 //
 // Should one be called all the same, the program stops there with an error, and the page starts it anew.
 var unused = []string{
@@ -22,6 +25,9 @@ var unused = []string{
 	"runtime.(*traceRegionAlloc).", "runtime.(*traceBuf).", "runtime.traceAdvance", "runtime.traceSyncBatch", "runtime.traceReadCPU",
 	"runtime.traceStack", "runtime.makeTraceFrame", "runtime.traceRegisterLabelsAndReasons", "runtime.traceBufFlush",
 	"runtime.initMetrics", "runtime.schedtrace", "runtime.checkFinalizersAndCleanups", "runtime.(*profBuf).",
+	"time.parse", "time.nextStdChunk", "time.tzset", "time.tzrule", "time.getnum", "time.quote", "time.appendNano",
+	"time.Time.GoString", "time.Time.appendFormat", "time.Time.appendStrictRFC3339", "time.Time.MarshalJSON",
+	"reflect.callMethod", "reflect.callReflect", "reflect.Value.call", "reflect.makeMethodValue", "internal/bisect.",
 }
 
 // used are exceptions: asked whether or not there is a trace.
