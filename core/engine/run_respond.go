@@ -18,8 +18,17 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		return nil, err
 	}
 	chosen := request.Circles == 0
+	_, coupled := unevenOf(doc, request.Without)
+	coupled = coupled && doc.Ring.HubRadius == 0
+	if coupled {
+		// The modes that are coupled take part whole.
+		c.Orders, c.Circles = max(c.Orders, coupledDiameters), max(c.Circles, leastChosen)
+	}
 	if chosen {
-		c.Orders, c.Circles = 0, leastChosen
+		c.Circles = leastChosen
+		if !coupled {
+			c.Orders = 0
+		}
 	}
 	c.Fit()
 	// How long a duration may be depends on the modes, which are still to come.
@@ -31,11 +40,11 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		return nil, err
 	}
 	if chosen {
-		if err := chooseModes(c, request, effects); err != nil {
+		if err := chooseModes(c, request, effects, coupled); err != nil {
 			return nil, err
 		}
 	}
-	if c.Wet, err = wetOf(doc, effects, c.Orders, c.Circles); err != nil {
+	if c.Wet, err = wetOf(doc, request.Without, effects, c.Orders, c.Circles); err != nil {
 		return nil, err
 	}
 	if request.Duration == 0 && c.Wet != nil {
@@ -89,20 +98,29 @@ const (
 	mostChosen     = 40 // of the ideal sheet, both ways
 	defaultMissed  = 0.001
 	mostWetCircles = 20
+	// of an uneven diaphragm, whose modes are many small parts
+	mostMixedOrders  = 18
+	mostMixedCircles = 12
 )
 
 // chooseModes sets orders and circles from the tolerance.
-func chooseModes(c *response.Case, request *RespondRequest, effects modes.Effects) error {
+func chooseModes(c *response.Case, request *RespondRequest, effects modes.Effects, coupled bool) error {
 	tolerance := request.Tolerance
 	if tolerance == 0 {
 		tolerance = defaultMissed
 	}
 	orders, circles := mostChosen, mostChosen
-	if effects != (modes.Effects{}) {
+	switch {
+	case coupled:
+		orders, circles = mostMixedOrders, mostMixedCircles
+	case effects != (modes.Effects{}):
 		orders, circles = min(orders, modes.MaxDiameters), min(circles, mostWetCircles, modes.MaxCircles)
 	}
 	if err := refuse(c.Choose(tolerance, orders, circles)); err != nil {
 		return err
+	}
+	if coupled {
+		c.Orders = max(c.Orders, coupledDiameters)
 	}
 	c.Fit()
 	return refuse(slices.DeleteFunc(c.Check(), func(p Problem) bool { return p.Field == "duration" }))
@@ -143,7 +161,7 @@ func respondCase(request *RespondRequest) *response.Case {
 // respondCautions warns of what the motion leaves out.
 func respondCautions(doc *diaphragm.Diaphragm, without []Effect) []string {
 	list := append(effectCautions(doc, without), hubIgnored(doc)...)
-	if _, uneven := unevenOf(doc, nil); uneven {
+	if _, uneven := unevenOf(doc, nil); uneven && doc.Ring.HubRadius > 0 {
 		list = append(list, "Uneven tension, the ring's being out of round and attached masses are left out of the motion: it is that of the even diaphragm.")
 	}
 	return list

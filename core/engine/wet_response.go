@@ -37,15 +37,17 @@ func reallyThere(real *modes.Real, effects modes.Effects) modes.Effects {
 // wetOf gives the modes that a response is summed of; nil where every effect is
 // left out, or absent and more modes are wanted than can be had with one, which
 // is the ideal sheet.
-func wetOf(doc *diaphragm.Diaphragm, effects modes.Effects, orders, circles int) (*response.Wet, error) {
-	if effects == (modes.Effects{}) {
+func wetOf(doc *diaphragm.Diaphragm, without []Effect, effects modes.Effects, orders, circles int) (*response.Wet, error) {
+	uneven, coupled := unevenOf(doc, without)
+	coupled = coupled && doc.Ring.HubRadius == 0
+	if effects == (modes.Effects{}) && !coupled {
 		return nil, nil
 	}
 	real, err := realOf(doc)
 	if err != nil {
 		return nil, err
 	}
-	if (orders > modes.MaxDiameters || circles > modes.MaxCircles) && reallyThere(&real, effects) == (modes.Effects{}) {
+	if (orders > modes.MaxDiameters || circles > modes.MaxCircles) && !coupled && reallyThere(&real, effects) == (modes.Effects{}) {
 		return nil, nil
 	}
 	if orders > modes.MaxDiameters {
@@ -53,6 +55,9 @@ func wetOf(doc *diaphragm.Diaphragm, effects modes.Effects, orders, circles int)
 	}
 	if circles > modes.MaxCircles {
 		return nil, Fail("circles", CodeRange, "With the fluid or the stiffness, up to "+strconv.Itoa(modes.MaxCircles)+" nodal circles can be taken.")
+	}
+	if coupled {
+		return mixedOf(doc, real, effects, uneven, orders, circles)
 	}
 	key := keyOf(real, effects, orders, circles)
 	if wet, ok := wets.get(key); ok {
@@ -87,4 +92,36 @@ func radiates(real modes.Real) bool {
 		}
 	}
 	return false
+}
+
+// mixeds keeps the modes of the last few uneven diaphragms for a response.
+var mixeds = newCache[string, *response.Wet](2)
+
+// mixedOf gives the modes that a response of an uneven diaphragm is summed of.
+func mixedOf(doc *diaphragm.Diaphragm, real modes.Real, effects modes.Effects, uneven modes.Uneven, orders, circles int) (*response.Wet, error) {
+	key := strconv.Itoa(orders) + " " + strconv.Itoa(circles) + unevenKey(real, effects, uneven)
+	if wet, ok := mixeds.get(key); ok {
+		return wet, nil
+	}
+	low, err := solve(real, effects, coupledDiameters, coupledCircles)
+	if err != nil {
+		return nil, err
+	}
+	coupled, err := modes.SolveCoupled(low, uneven)
+	if err != nil {
+		return nil, unevenRefusal(err)
+	}
+	still := effects
+	still.Sound = false
+	all, err := solve(real, still, orders, circles)
+	if err != nil {
+		return nil, err
+	}
+	even := response.NewWet(all, nil, effects.Cavity, orders, circles)
+	wet := response.NewMixed(coupled, even, real.Tension)
+	wet.Words = append(unevenWords(doc, uneven), realAssumptions(doc, effects, low.Notes)[1:]...)
+	wet.Words = append(wet.Words, "Modes with more than "+strconv.Itoa(coupledDiameters)+" nodal diameters or "+strconv.Itoa(coupledCircles)+
+		" circles, and the highest of the others, are those of the even diaphragm without the masses, and do not radiate.")
+	mixeds.put(key, wet)
+	return wet, nil
 }
