@@ -19,9 +19,9 @@ func cholesky(a []float64, n int) bool {
 	return true
 }
 
-// forward solves L x = b in place.
+// forward solves L x = b in place, for as many of the first unknowns as x has.
 func forward(l []float64, n int, x []float64) {
-	for i := range n {
+	for i := range x {
 		x[i] = (x[i] - dot(l[i*n:i*n+i], x[:i])) / l[i*n+i]
 	}
 }
@@ -39,15 +39,18 @@ func backward(l []float64, n int, x []float64) {
 
 // congruent overwrites the symmetric matrix a with L^-1 A L^-T.
 func congruent(a, l []float64, n int) {
-	// Rows of A hold its columns too: solve for each row, turn over, once more.
-	for range 2 {
-		for i := range n {
-			forward(l, n, part(a, i, n))
-		}
-		for i := range n {
-			for j := range i {
-				a[i*n+j], a[j*n+i] = a[j*n+i], a[i*n+j]
-			}
+	// Rows of A hold its columns too: solve for each row, turn over, and once more
+	// for the lower triangle.
+	for i := range n {
+		forward(l, n, part(a, i, n))
+	}
+	for i := range n {
+		for j := range i {
+			a[i*n+j], a[j*n+i] = a[j*n+i], a[i*n+j]
 		}
 	}
+	for i := range n {
+		forward(l, n, part(a, i, n)[:i+1])
+	}
+	mirrored(a, n)
 }

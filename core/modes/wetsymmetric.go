@@ -69,15 +69,24 @@ func normalise(v []float64) {
 	}
 }
 
+// dot returns the sum of products of a with the first of b.
 //
 //go:noinline
 func dot(a, b []float64) float64 {
-	s := 0.0
+	// Four sums at a time, because an addition waits for the one before.
 	b = b[:len(a)]
-	for i, v := range a {
-		s += v * b[i]
+	var s0, s1, s2, s3 float64
+	i := 0
+	for ; i+3 < len(a); i += 4 {
+		s0 += a[i] * b[i]
+		s1 += a[i+1] * b[i+1]
+		s2 += a[i+2] * b[i+2]
+		s3 += a[i+3] * b[i+3]
 	}
-	return s
+	for ; i < len(a); i++ {
+		s0 += a[i] * b[i]
+	}
+	return (s0 + s1) + (s2 + s3)
 }
 
 // reduce brings s.a to tridiagonal form by reflections H = 1 - tau v v', from
