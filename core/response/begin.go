@@ -35,11 +35,12 @@ type SourceNote struct {
 	// Missed is the share of its energy that the modes leave out.
 	Missed float64 `json:"missed"`
 	// Residual is the root mean square by which a fit misses the measured values,
-	// and RimMisfit the largest value fitted within a twentieth of the radius
-	// from the rim; in the unit of the shape, SI.
+	// and RimMisfit the largest by which it misses one within a twentieth of the
+	// radius from the rim; in the unit of the shape, SI.
 	Residual  float64 `json:"residual,omitempty"`
 	RimMisfit float64 `json:"rimMisfit,omitempty"`
-	// Outliers are the lines of the table that lie far off the fit.
+	// Outliers are the lines of the table that lie far off and are left out of the
+	// fit.
 	Outliers []int `json:"outliers,omitempty"`
 }
 
@@ -116,7 +117,7 @@ func (c *Case) project(p *projector, g *given) []diaphragm.Problem {
 		shape = Shape{Kind: ShapeEven, Peak: shape.Peak}
 	}
 	var problems []diaphragm.Problem
-	if g.form, problems = shape.form(p.basis, g.prefix); len(problems) > 0 {
+	if g.form, problems = shape.form(p.basis, g.prefix, a); len(problems) > 0 {
 		return problems
 	}
 	switch g.Kind {
@@ -153,8 +154,8 @@ func (c *Case) project(p *projector, g *given) []diaphragm.Problem {
 	} else {
 		g.q = p.struck(g.coef)
 	}
-	if measured, ok := g.form.(*fitted); ok {
-		measured.report(&g.note, shape.Peak)
+	if f, ok := g.form.(*sampled); ok && f.fit != nil {
+		f.fit.report(&g.note, shape.Peak)
 	}
 	g.left = p.left(c, g.way, g.form, g.scale, g.coef, g.q)
 	return nil

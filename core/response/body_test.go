@@ -11,7 +11,7 @@ import (
 // contactOf returns the mean displacement of a contact from coefficients.
 func contactOf(t *testing.T, b *disc.Basis, shape Shape, coef []float64) float64 {
 	t.Helper()
-	f, problems := shape.form(b, "")
+	f, problems := shape.form(b, "", 1)
 	if len(problems) > 0 {
 		t.Fatal(problems)
 	}
@@ -89,7 +89,7 @@ func TestBodyStays(t *testing.T) {
 		// handed over: m (V - v) is the work of the blow on every mode.
 		was, now := get(at-1e-12, 1), get(at, 1)
 		v := contactOf(t, b, contact, now)
-		f, _ := contact.form(b, "")
+		f, _ := contact.form(b, "", 1)
 		weight := make([]float64, b.Len())
 		f.project(b, weight)
 		for i := range now {
@@ -139,7 +139,7 @@ func TestHeavyBodyOnAPoint(t *testing.T) {
 	const mass = 1e5
 	mo := started(t, struckCase(8, 8, Source{Kind: SourceBody, Shape: contact, Mass: mass, Speed: 1, Stays: true})).moves
 	b := basisOf(8, 8)
-	f, _ := contact.form(b, "")
+	f, _ := contact.form(b, "", 1)
 	give := make([]float64, b.Len())
 	f.project(b, give)
 	for i := range give {

@@ -27,7 +27,7 @@ func TestCaseIsRefused(t *testing.T) {
 		{func(c *Case) { c.Displacement.Angle = math.Inf(1) }, "displacement.angle",
 			"The angle of the place must lie between -1000 and 1000 rad."},
 		{func(c *Case) { c.Displacement = Shape{Kind: ShapeFormula, Peak: 1, Formula: "1 - rr"} }, "displacement.formula",
-			"There is nothing named \"rr\". A formula is written in r, theta, x and y, with pi and e."},
+			"There is nothing named \"rr\". A formula is written in r, theta, x and y, or rho, X and Y in metres, with pi and e."},
 		{func(c *Case) { c.Orders = 61 }, "orders",
 			"The largest number of nodal diameters is 61; it must be from 0 to 60."},
 		{func(c *Case) { c.Circles = 0 }, "circles",

@@ -54,7 +54,7 @@ func TestProjectionAgainstQuadrature(t *testing.T) {
 	// distance to the rim to exp(-180 arcosh(1/0.9)).
 	b := disc.NewBasis(5, 5)
 	for _, s := range localShapes {
-		f, _ := s.form(b, "")
+		f, _ := s.form(b, "", 1)
 		coef := coefficients(t, s, b)
 		for _, mode := range [][2]int{{0, 1}, {0, 5}, {1, 1}, {2, 3}, {5, 5}} {
 			m, n := mode[0], mode[1]
@@ -78,7 +78,7 @@ func TestNormsAgainstQuadrature(t *testing.T) {
 	b := disc.NewBasis(2, 2)
 	const h = 1e-6
 	for _, s := range localShapes {
-		f, _ := s.form(b, "")
+		f, _ := s.form(b, "", 1)
 		n := f.norms()
 		square := around(s, func(r, theta float64) float64 { return f.at(r, theta) * f.at(r, theta) })
 		if math.Abs(n.square-square) > 1e-12 {
@@ -114,7 +114,7 @@ func TestPeaksAreOne(t *testing.T) {
 	// 6/width^2 (bump), 1/(width^2 ln) (pull).
 	b := disc.NewBasis(0, 1)
 	for _, s := range localShapes {
-		f, _ := s.form(b, "")
+		f, _ := s.form(b, "", 1)
 		largest := 0.0
 		for i := range 401 {
 			for k := range 401 {
@@ -154,7 +154,7 @@ func TestParseval(t *testing.T) {
 	// bounds the rest of a series whose terms fall off as n^-2 or faster.
 	rest := Shape{Kind: ShapeRest}
 	for _, s := range localShapes {
-		f, _ := s.form(disc.NewBasis(0, 1), "")
+		f, _ := s.form(disc.NewBasis(0, 1), "", 1)
 		n := f.norms()
 		for _, c := range []struct {
 			what  string
@@ -202,7 +202,7 @@ func TestSeriesReturnsShape(t *testing.T) {
 				bound += 2 * mode.size
 			}
 		}
-		f, _ := s.form(mo.basis, "")
+		f, _ := s.form(mo.basis, "", 1)
 		for _, at := range []Point{{0, 0}, {0.35, 0.8}, {0.5, 2}, {0.9, -1}, {0.36, 0.3}} {
 			got := mo.probe(at.Radius*math.Cos(at.Angle), at.Radius*math.Sin(at.Angle), 0).w
 			if want := f.at(at.Radius, at.Angle); math.Abs(got-want) > bound {

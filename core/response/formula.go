@@ -5,11 +5,13 @@ import (
 	"unicode/utf16"
 )
 
-// Formula is a compiled formula in r, theta, x and y. It may be used by
+// Formula is a compiled formula in r, theta, x and y, rho, X and Y. It may be used by
 // several goroutines at once.
 type Formula struct {
 	code   []instruction
 	height int // of the stack
+	// length is the ring radius, m, for rho, X and Y.
+	length float64
 }
 
 // FormulaError is why a formula was not read.
@@ -53,6 +55,9 @@ const (
 	opTheta
 	opX
 	opY
+	opRho
+	opLongX
+	opLongY
 	opAdd
 	opSubtract
 	opMultiply
@@ -82,7 +87,8 @@ const (
 func (op opcode) binary() bool { return op >= opAdd && op <= opHypot }
 
 // At evaluates the formula at radius r (in units of the ring radius) and angle
-// theta (rad); x = r cos theta and y = r sin theta. The result may be infinite
+// theta (rad); x = r cos theta and y = r sin theta, and rho, X and Y are r, x and y
+// times the radius of the ring, one metre unless it is that of a case. The result may be infinite
 // or NaN, where the formula has no value. It does not allocate.
 func (f *Formula) At(r, theta float64) float64 {
 	sin, cos := math.Sincos(theta)
@@ -118,6 +124,15 @@ func (f *Formula) run(stack []float64, r, theta, x, y float64) float64 {
 		case opY:
 			top++
 			stack[top] = y
+		case opRho:
+			top++
+			stack[top] = r * f.length
+		case opLongX:
+			top++
+			stack[top] = x * f.length
+		case opLongY:
+			top++
+			stack[top] = y * f.length
 		default:
 			if step.op.binary() {
 				top--

@@ -9,12 +9,18 @@ import (
 
 // sampled is a formula on the grid of a disc transform.
 type sampled struct {
-	formula *Formula
+	formula overSheet
 	coef    []float64
 	basis   *disc.Basis
 	n       norms
 	// rim is the largest |f| on the rim, largest that anywhere on the samples.
 	rim, largest float64
+	fit          *measuredFit
+}
+
+// overSheet is a function over the sheet.
+type overSheet interface {
+	At(r, theta float64) float64
 }
 
 // mostValue is the largest |f| of a formula: its square must stay finite.
@@ -22,8 +28,8 @@ const mostValue = 1e100
 
 // newSampled analyses a formula. The message, where there is one, says at
 // which place of the sheet the formula has no use.
-func newSampled(f *Formula, b *disc.Basis) (s *sampled, message string) {
-	largest, message := f.survey()
+func newSampled(f overSheet, b *disc.Basis) (s *sampled, message string) {
+	largest, message := survey(f)
 	if message != "" {
 		return nil, message
 	}
@@ -106,7 +112,7 @@ func slopeEnergy(b *disc.Basis, coef []float64) float64 {
 // survey looks at a grid that holds the centre, the rim, the axes and the
 // diagonals. It returns the largest |f|, or a message about the first place
 // without a finite value.
-func (f *Formula) survey() (largest float64, message string) {
+func survey(f overSheet) (largest float64, message string) {
 	const radii, angles = 64, 48
 	for i := range radii + 1 {
 		r := float64(i) / radii

@@ -36,6 +36,9 @@ var variables = map[string]opcode{
 	"θ":     opTheta,
 	"x":     opX,
 	"y":     opY,
+	"rho":   opRho,
+	"X":     opLongX,
+	"Y":     opLongY,
 }
 
 var constants = map[string]float64{
@@ -54,7 +57,7 @@ var otherNames = map[string]string{
 	"phi":    "There is no \"phi\" in a formula; the angle is named theta.",
 	"φ":      "There is no \"φ\" in a formula; the angle is named theta.",
 	"t":      "There is no \"t\" in a formula: it gives the shape at the start, which has no time in it.",
-	"a":      "There is no \"a\" in a formula: r, x and y are in units of the ring radius already.",
+	"a":      "There is no \"a\" in a formula: r, x and y are in units of the ring radius already, and rho, X and Y in metres.",
 }
 
 // unknownName is the sentence for a name that is not known.
@@ -72,7 +75,7 @@ func unknownName(name string, called bool) string {
 	if called {
 		return kind + quoted(name) + ". The functions are sin, cos, tan, asin, acos, atan, atan2, sqrt, exp, ln, log10, abs, min, max, sign, step, pow and hypot."
 	}
-	return kind + quoted(name) + ". A formula is written in r, theta, x and y, with pi and e."
+	return kind + quoted(name) + ". A formula is written in r, theta, x and y, or rho, X and Y in metres, with pi and e."
 }
 
 // nearestName returns the known name that differs least from one that is not

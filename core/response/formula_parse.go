@@ -32,7 +32,7 @@ func Compile(text string) (*Formula, error) {
 	if p.err != nil {
 		return nil, p.err
 	}
-	return &Formula{code: p.code, height: p.highest}, nil
+	return &Formula{code: p.code, height: p.highest, length: 1}, nil
 }
 
 // parser holds the next token, the code so far and the first error; once there

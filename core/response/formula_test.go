@@ -67,7 +67,7 @@ func TestFormulaRefusals(t *testing.T) {
 		{"2*sen(theta)", 2, "There is no function named \"sen\"; did you mean sin?"},
 		{"sqr(r)", 0, "There is no function named \"sqr\"; did you mean sqrt?"},
 		{"1 - thetta", 4, "There is nothing named \"thetta\"; did you mean theta?"},
-		{"1 - q", 4, "There is nothing named \"q\". A formula is written in r, theta, x and y, with pi and e."},
+		{"1 - q", 4, "There is nothing named \"q\". A formula is written in r, theta, x and y, or rho, X and Y in metres, with pi and e."},
 		{"log(r)", 0, "There is no function named \"log\", which is read in two ways; use ln for the natural logarithm or log10."},
 		{"sin(t)", 4, "There is no \"t\" in a formula: it gives the shape at the start, which has no time in it."},
 		{"2r", 1, "A sign is missing before r. Write products with *, as in 2*r or r*(1 - r)."},
@@ -95,7 +95,7 @@ func TestFormulaRefusals(t *testing.T) {
 		{"1.2.3", 3, "A number has one decimal point."},
 		{"1e999", 0, "The number \"1e999\" is too large."},
 		// An offset counts UTF-16 units: the letter outside the basic plane is two.
-		{"θ + 𝛑", 4, "There is nothing named \"𝛑\". A formula is written in r, theta, x and y, with pi and e."},
+		{"θ + 𝛑", 4, "There is nothing named \"𝛑\". A formula is written in r, theta, x and y, or rho, X and Y in metres, with pi and e."},
 		{"θ + sin(𝛑) + q", 8, ""},
 		{"1 + \xff", 4, "This character cannot be read."},
 		{strings.Repeat("(", 60) + "r" + strings.Repeat(")", 60), 51, "The formula is nested too deeply; at most 50 brackets, signs and powers may stand inside one another."},

@@ -57,7 +57,7 @@ func coefficients(t *testing.T, s Shape, b *disc.Basis) []float64 {
 	if problems := s.Check(""); len(problems) > 0 {
 		t.Fatal(problems)
 	}
-	f, problems := s.form(b, "")
+	f, problems := s.form(b, "", 1)
 	if len(problems) > 0 {
 		t.Fatal(problems)
 	}

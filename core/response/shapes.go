@@ -90,9 +90,9 @@ func (s Shape) noun() string {
 	return "shape"
 }
 
-// form returns the shape at unit peak. The shape has passed Check; a formula
+// form returns the shape at unit peak on a ring of the given radius, m. The shape has passed Check; a formula
 // may still have no finite value somewhere on the sheet.
-func (s Shape) form(b *disc.Basis, prefix string) (form, []diaphragm.Problem) {
+func (s Shape) form(b *disc.Basis, prefix string, radius float64) (form, []diaphragm.Problem) {
 	// A sum of radius and width that rounds above one is taken as one.
 	width := math.Min(s.Width, 1-s.Radius)
 	at := func(p profile) form { return local{place{s.Radius, s.Angle}, p} }
@@ -114,6 +114,7 @@ func (s Shape) form(b *disc.Basis, prefix string) (form, []diaphragm.Problem) {
 		if err != nil {
 			return nil, s.Check(prefix)
 		}
+		formula.length = radius
 		form, message := newSampled(formula, b)
 		if message != "" {
 			return nil, []diaphragm.Problem{{Field: prefix + "formula", Code: CodeFormula, Message: message, Offset: -1}}
@@ -122,6 +123,20 @@ func (s Shape) form(b *disc.Basis, prefix string) (form, []diaphragm.Problem) {
 			return nil, []diaphragm.Problem{{Field: prefix + "peak", Code: diaphragm.CodeBounds, Offset: -1,
 				Message: "The peak times the formula reaches " + short(math.Abs(s.Peak)*form.largest) + "; at most 1,000,000 m or m/s are computed."}}
 		}
+		return form, nil
+	}
+	if s.Kind == ShapeMeasured {
+		list, problem := s.readMeasured(prefix, radius)
+		if problem != nil {
+			return nil, []diaphragm.Problem{*problem}
+		}
+		fit := fitMeasured(list)
+		form, message := newSampled(fit, b)
+		if message != "" {
+			return nil, []diaphragm.Problem{{Field: prefix + "table", Code: diaphragm.CodeConflict, Message: message, Offset: -1}}
+		}
+		form.fit = fit
+		fit.largest = form.largest
 		return form, nil
 	}
 	return rest{}, nil

@@ -269,7 +269,7 @@ func TestWetReciprocity(t *testing.T) {
 			mo := started(t, c).moves
 			// The mean over the receiver's bump, in Bessel functions.
 			weight, coef := make([]float64, mo.basis.Len()), make([]float64, mo.basis.Len())
-			form, _ := receiver.form(mo.basis, "")
+			form, _ := receiver.form(mo.basis, "", 1)
 			form.project(mo.basis, weight)
 			mo.values(coef, at, 0)
 			sum := 0.0
