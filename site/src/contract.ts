@@ -251,6 +251,10 @@ export interface CostsRequest {
    * Upper asks for the higher of a split pair.
    */
   upper?: boolean;
+  /**
+   * Short leaves the sensitivities out, which take longest.
+   */
+  short?: boolean;
 }
 /**
  * CostsResult lists the effects one after another, and the sensitivities.
@@ -1727,12 +1731,12 @@ export interface SourceNote {
    */
   missed: number;
   /**
-   * Residual is the root mean square by which a fit misses the measured values, and RimMisfit the largest value fitted within a twentieth of the radius from the rim; in the unit of the shape, SI.
+   * Residual is the root mean square by which a fit misses the measured values, and RimMisfit the largest by which it misses one within a twentieth of the radius from the rim; in the unit of the shape, SI.
    */
   residual?: number;
   rimMisfit?: number;
   /**
-   * Outliers are the lines of the table that lie far off the fit.
+   * Outliers are the lines of the table that lie far off and are left out of the fit.
    */
   outliers?: number[];
 }
