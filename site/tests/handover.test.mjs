@@ -3,7 +3,7 @@ import assert from 'node:assert/strict';
 import { readFile, writeFile } from 'node:fs/promises';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
-import { box, openSite, saved, testdata, text, until } from './support/visit.mjs';
+import { box, edited, openSite, saved, testdata, text, until } from './support/visit.mjs';
 
 let site, visit;
 before(async () => { site = await openSite(); });
@@ -118,9 +118,7 @@ test('notes too long for a link leave the file', async () => {
   for (let i = 1; letters.length < 3800; i = (Math.imul(i, 1664525) + 1013904223) >>> 0) {
     letters += String.fromCharCode(97 + ((i >>> 24) % 26));
   }
-  await box(page, 'notes').fill(letters);
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(page);
+  await edited(page, () => box(page, 'notes').fill(letters));
   await visit.open('hand-over.html', page);
   await text(page.locator('[aria-labelledby=link-title]'), /A link would have \d+ characters/);
   assert.equal(await page.locator('#link').count(), 0);

@@ -3,7 +3,7 @@ import assert from 'node:assert/strict';
 import { readdir } from 'node:fs/promises';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
-import { box, openSite, saved, siteDir, testdata, text, until } from './support/visit.mjs';
+import { box, edited, openSite, saved, siteDir, testdata, text, until } from './support/visit.mjs';
 
 let site, visit, address;
 before(async () => {
@@ -41,9 +41,7 @@ test('the missing microphone is explained, and a file is read', async () => {
 test('records are kept, and the page does not claim to know for how long', async () => {
   const page = await visit.open('specify.html');
   await saved(page);
-  await box(page, 'place').fill('on the intranet');
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(page);
+  await edited(page, () => box(page, 'place').fill('on the intranet'));
   await page.reload();
   await saved(page);
   assert.equal(await box(page, 'place').inputValue(), 'on the intranet');

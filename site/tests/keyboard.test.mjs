@@ -76,6 +76,7 @@ test('from Specify to Hand over without a pointer', async () => {
   await page.keyboard.type('typed throughout');
   await page.keyboard.press('Enter');
   await text(page.locator('hoop-bar .line'), /revision 1(?!, changed)/);
+  await until(async () => /saved/i.test((await focused()).words), 'the focus goes on from where the form was');
 
   await chapter('Modes');
   await page.locator('#mode-table tbody tr').first().waitFor();

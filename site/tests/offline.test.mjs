@@ -9,7 +9,7 @@ import { chromium } from 'playwright-core';
 import { executablePath, flags } from './support/chromium.mjs';
 import { buildIdOf, copyOfSite, makeNextVersion } from './support/next-version.mjs';
 import { serve } from './support/server.mjs';
-import { box, saved, siteDir, testdata, text, until, value, Visit } from './support/visit.mjs';
+import { Visit, box, edited, saved, siteDir, testdata, text, until, value } from './support/visit.mjs';
 
 const prefix = '/some/sub/path/';
 
@@ -44,10 +44,8 @@ test('with the server stopped every page opens, and the whole way works', async 
 
   await visit.open('specify.html', page);
   await saved(page);
-  await box(page, 'place').fill('Below deck, no network');
-  await box(page, 'ring.radius').fill('0.5 m');
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(page);
+  await edited(page, () => box(page, 'place').fill('Below deck, no network'));
+  await edited(page, () => box(page, 'ring.radius').fill('0.5 m'));
   const chapters = page.locator('nav.chapters');
   await chapters.getByRole('link', { name: 'Modes', exact: true }).click();
   await page.locator('#mode-table tbody tr').first().waitFor();

@@ -2,7 +2,7 @@
 import assert from 'node:assert/strict';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
-import { box, openSite, saved, testdata, text, until, value } from './support/visit.mjs';
+import { box, edited, openSite, saved, testdata, text, until, value } from './support/visit.mjs';
 
 let site, visit;
 before(async () => { site = await openSite(); });
@@ -163,9 +163,7 @@ test('in a conflict the other tab\'s can be shown instead', async () => {
   const two = await visit.open(`specify.html${new URL(one.url()).search}`);
   await saved(two);
   await Promise.all([one, two].map((page) => page.evaluate(() => { BroadcastChannel.prototype.postMessage = () => {}; })));
-  await box(one, 'place').fill('from one');
-  await one.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(one);
+  await edited(one, () => box(one, 'place').fill('from one'));
   await box(two, 'place').fill('from two');
   await two.locator('hoop-bar [data-keeping=conflict]').waitFor();
   await two.locator('hoop-bar').getByRole('button', { name: 'Show the other tab\'s' }).click();

@@ -7,7 +7,7 @@ import { after, before, test } from 'node:test';
 import { pathToFileURL } from 'node:url';
 
 import { launch, newProfile, removeProfile } from './support/chromium.mjs';
-import { box, saved, siteDir, testdata, text, until, Visit } from './support/visit.mjs';
+import { Visit, box, edited, saved, siteDir, testdata, text, until } from './support/visit.mjs';
 
 let dir, address, profile;
 before(async () => {
@@ -61,9 +61,7 @@ test('the whole way works, and the records survive a restart of the browser', as
   const first = await start();
   const page = await first.visit.open('#specify');
   await saved(page);
-  await box(page, 'place').fill('from a memory stick');
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(page);
+  await edited(page, () => box(page, 'place').fill('from a memory stick'));
   await turnTo(page, 'Modes');
   await page.locator('#mode-table tbody tr').first().waitFor();
   await turnTo(page, 'Respond');

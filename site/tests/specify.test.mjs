@@ -3,7 +3,7 @@ import assert from 'node:assert/strict';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
 import { launchToKill, newProfile, removeProfile } from './support/chromium.mjs';
-import { box, field, openSite, saved, text, value } from './support/visit.mjs';
+import { box, edited, field, openSite, saved, text, value } from './support/visit.mjs';
 
 let site, visit, page;
 before(async () => { site = await openSite(); });
@@ -102,11 +102,9 @@ test('what was typed survives a crash right after the pause', async () => {
     const tab = await first.context.newPage();
     await tab.goto(new URL('specify.html', site.address).href);
     await saved(tab);
-    await box(tab, 'place').fill('Hall 3, north wall');
-    await box(tab, 'ring.radius').fill('0.61 m');
-    await box(tab, 'sheet.thickness').fill('5o um');
-    await tab.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-    await saved(tab);
+    await edited(tab, () => box(tab, 'place').fill('Hall 3, north wall'));
+    await edited(tab, () => box(tab, 'ring.radius').fill('0.61 m'));
+    await edited(tab, () => box(tab, 'sheet.thickness').fill('5o um'));
     await first.kill();
 
     const second = await launchToKill(profile);

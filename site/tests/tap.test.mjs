@@ -3,7 +3,7 @@ import assert from 'node:assert/strict';
 import { readFile } from 'node:fs/promises';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
-import { openSite, saved, testdata, text, until } from './support/visit.mjs';
+import { edited, openSite, saved, testdata, text, until } from './support/visit.mjs';
 
 let site, visit, page, demo;
 before(async () => {
@@ -22,10 +22,8 @@ async function inVacuum() {
   page = await visit.open('specify.html');
   await saved(page);
   for (const face of ['upper', 'lower']) {
-    await page.locator(`[data-field="faces.${face}.kind"]`).locator('select').selectOption('vacuum');
+    await edited(page, () => page.locator(`[data-field="faces.${face}.kind"]`).locator('select').selectOption('vacuum'));
   }
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving]').first().waitFor();
-  await saved(page);
   await visit.open('tap.html', page);
   await page.locator('#file').waitFor();
 }

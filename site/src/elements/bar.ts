@@ -48,6 +48,12 @@ export class HoopBar extends LitElement {
     const note = new FormData(event.target as HTMLFormElement).get('note');
     this.asking = false;
     await session.keep(typeof note === 'string' ? note : '');
+    await this.updateComplete;
+    // The form and its button are gone: whoever works by keyboard goes on from what they did, unless they went elsewhere.
+    const { activeElement } = this.ownerDocument;
+    if (!activeElement || activeElement === this.ownerDocument.body) {
+      this.renderRoot.querySelector<HTMLElement>('[data-keeping]')?.focus();
+    }
   }
 
   protected override updated(): void {
@@ -61,7 +67,7 @@ export class HoopBar extends LitElement {
       <div class="line">
         <span class="name">${document?.name ?? ''}</span>
         ${document ? html`<span class="soft">${document.revision === 0 ? 'no revision kept' : `revision ${document.revision}${session.unkept ? ', changed since' : ''}`}</span>` : nothing}
-        <span class=${tone} role="status" data-keeping=${keeping}>${keepingWords[keeping]}</span>
+        <span class=${tone} role="status" tabindex="-1" data-keeping=${keeping} data-stamp=${session.stamp}>${keepingWords[keeping]}</span>
         ${document && keeping !== 'unsaveable' && session.unkept
           ? html`<button type="button" aria-expanded=${this.asking ? 'true' : 'false'} @click=${() => { this.asking = !this.asking; }}>Keep this revision</button>` : nothing}
       </div>

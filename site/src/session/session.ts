@@ -54,11 +54,12 @@ export class Session extends EventTarget {
   shared = false;
   settings: Settings = { chosen: false, linkAddress: '', units: 'si', by: '' };
   team: TeamChoices = noTeam;
+  /** Number of the last state of the working copy on this device; each save makes a higher one. */
+  stamp = 0;
 
   private drafts: Record<string, string> = {};
   private units: Record<string, string> = {};
   private desk: Record<string, string> = {};
-  private stamp = 0;
   private kept = false;
   private waiting: Edit[] = [];
   /** Sent to the engine and not yet answered. */

@@ -114,6 +114,18 @@ export const box = (page, name) => field(page, name).locator('#box');
 /** Waits until the bar says that the working copy is on the device. */
 export const saved = (page) => page.locator('hoop-bar [data-keeping=saved]').waitFor();
 
+/**
+ * Does one thing that changes the working copy, and waits until it has been saved since. (That a save is due or runs may
+ * have passed before a test looks.)
+ */
+export async function edited(page, change) {
+  const bar = page.locator('hoop-bar [data-stamp]');
+  const before = Number(await bar.getAttribute('data-stamp'));
+  await change();
+  await until(async () => Number(await bar.getAttribute('data-stamp')) > before, 'a save');
+  await saved(page);
+}
+
 /** Waits until the text of an element matches, and gives it with white space made single. */
 export async function text(locator, pattern) {
   let last = '';
