@@ -10,6 +10,8 @@ type CostsRequest struct {
 	N        int                 `json:"n"`
 	// Upper asks for the higher of a split pair.
 	Upper bool `json:"upper,omitempty"`
+	// Short leaves the sensitivities out, which take longest.
+	Short bool `json:"short,omitempty"`
 }
 
 // CostsResult lists the effects one after another, and the sensitivities.

@@ -24,9 +24,12 @@ func runCosts(ctx context.Context, request *CostsRequest) (*CostsResult, error) 
 	}
 	doc := &request.Document
 	wanted := wantedMode{request.M, request.N, request.Upper}
-	result := &CostsResult{}
+	result := &CostsResult{Steps: []CostStep{}, Sensitivities: []Sensitivity{}}
 	if err := costSteps(doc, wanted, result); err != nil {
 		return nil, err
+	}
+	if request.Short {
+		return result, nil
 	}
 	inputs := inputsOf(doc)
 	report := progress(ctx)
