@@ -41,6 +41,7 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 		h.values[i] = make([]float32, count)
 	}
 	walk := newWalk(moves, end/float64(count-1))
+	walk.bare = true
 	var seen *stage
 	radials := make([][]float64, len(c.Points))
 	for k := range count {

@@ -28,8 +28,9 @@ type walk struct {
 	// Of a quiet leg: the fundamental solutions, and about what they swing.
 	steppers     []stepper
 	c, s, around []float64
-	// q by modes, and the coefficients.
+	// q by modes, and the coefficients, which a bare walk leaves.
 	q, coef []float64
+	bare    bool
 }
 
 // newWalk begins at t = 0.
@@ -76,7 +77,7 @@ func (w *walk) settle() {
 		for i := range w.q {
 			w.q[i], _, _ = w.stage.within(i, w.leg, t-leg.from)
 		}
-		w.stage.fill(w.coef, w.q)
+		w.fill()
 		return
 	}
 	for i := range w.q {
@@ -99,5 +100,11 @@ func (w *walk) sum() {
 		st, x := &k.states[w.leg], w.around[i]
 		w.q[i] = x + w.c[i]*(st.q-x) + w.s[i]/k.omega*st.v
 	}
-	w.stage.fill(w.coef, w.q)
+	w.fill()
+}
+
+func (w *walk) fill() {
+	if !w.bare {
+		w.stage.fill(w.coef, w.q)
+	}
 }
