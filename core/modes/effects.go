@@ -110,8 +110,9 @@ func Solve(real Real, request Request) (*Solution, error) {
 		o := plan.order(m, request.MaxN+1)
 		s.orders = append(s.orders, o)
 		starts := o.solve(request.MaxN + 1)
+		refined := plan.refined(o, starts, request.MaxN)
 		for n := 1; n <= request.MaxN; n++ {
-			mode := plan.mode(o, n, starts[n-1])
+			mode := plan.mode(o, n, refined[n-1])
 			beyond = beyond || mode.BeyondSound
 			s.Modes = append(s.Modes, mode)
 		}

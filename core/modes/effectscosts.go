@@ -20,7 +20,7 @@ func SolveMode(real Real, effects Effects, m, n int) (RealMode, error) {
 	}
 	plan := newWetPlan(real, effects)
 	o := plan.order(m, n+1)
-	return plan.mode(o, n, o.solve(n + 1)[n-1]), nil
+	return plan.mode(o, n, plan.refined(o, o.solve(n+1), n)[n-1]), nil
 }
 
 var errBounds = errors.New("the nodal diameters asked for must be 0 to 40 and the nodal circles 1 to 20")

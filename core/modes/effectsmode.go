@@ -45,7 +45,7 @@ type RealMode struct {
 	coef  []float64 // of disc.HeldEdge shapes on the effective radius
 }
 
-// mode finishes mode n of an order from what wetOrder.solve gave.
+// mode finishes mode n of an order from what refined gave.
 func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 	r := p.real
 	mode := RealMode{M: o.m, N: n, inner: p.radius / r.Radius}
@@ -53,14 +53,7 @@ func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 	if r.Tension > 0 {
 		mode.Ideal = zero * math.Sqrt(r.Tension/r.ArealDensity) / (2 * math.Pi * r.Radius)
 	}
-	if o.moving() {
-		if p.soundNumber(real(w.omega())) > MaxSoundNumber {
-			mode.BeyondSound = true
-		} else {
-			w = o.refine(w)
-			mode.BeyondSound = !w.good
-		}
-	}
+	mode.BeyondSound = o.moving() && (w.still || !w.good)
 	mode.omega = w.omega()
 	omega := real(mode.omega)
 	mode.Frequency = omega / (2 * math.Pi)
@@ -79,6 +72,26 @@ func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 	}
 	p.weigh(o, w, &mode)
 	return mode
+}
+
+// refined puts sound and losses into the count lowest modes that solve gave, as far as their sound numbers allow. With a
+// cavity it looks at those beyond too, which might turn out to be the same.
+func (p *wetPlan) refined(o *wetOrder, starts []wetMode, count int) []wetMode {
+	if !o.moving() {
+		return starts
+	}
+	if o.cavity == nil {
+		starts = starts[:count]
+	}
+	within := 0
+	for within < len(starts) && p.soundNumber(real(starts[within].omega())) <= MaxSoundNumber {
+		within++
+	}
+	out := append(o.follow(starts[:within]), starts[within:]...)
+	for k := within; k < len(out); k++ {
+		out[k].still = true
+	}
+	return out
 }
 
 // soundNumber returns the largest k0 a of the faces in which sound is free to

@@ -30,9 +30,10 @@ func (o *wetOrder) refine(start wetMode) wetMode {
 	o.gained = [2]complex128{}
 	mode = start
 	for step := 1; step <= soundSteps; step++ {
-		o.sound = float64(step) / soundSteps
+		done := float64(step) / soundSteps
+		o.sound = complex(done, 0)
 		if o.cavity != nil {
-			o.cavity.ventResistance = resistance * o.sound
+			o.cavity.ventResistance = resistance * done
 		}
 		mode, _ = o.iterate(mode, iterateEnd)
 	}

@@ -17,8 +17,8 @@ type wetOrder struct {
 	faces  []fluidFace
 	cavity *cavityFace // one of faces, or nil
 	// sound scales the sound number of open and baffled faces from 0, still
-	// fluid, to 1.
-	sound float64
+	// fluid, to 1; on the way it may be complex.
+	sound complex128
 	// gained is ln of theta over that in still fluid of the last two modes.
 	gained [2]complex128
 	static []float64 // size by size
@@ -159,8 +159,8 @@ func (o *wetOrder) at(c []complex128, omega complex128) bool {
 		case !f.moving():
 		case f == fluidFace(o.cavity):
 			good = f.dynamic(w.re, w.im, omega) && good
-		case o.sound > 0:
-			good = f.dynamic(w.re, w.im, omega*complex(o.sound, 0)) && good
+		case o.sound != 0:
+			good = f.dynamic(w.re, w.im, omega*o.sound) && good
 		}
 	}
 	size := o.size()
@@ -221,6 +221,7 @@ type wetMode struct {
 	change float64
 	slope  complex128 // of y'C(theta)y in theta
 	good   bool
+	still  bool // sound was not put in: its number is beyond what the series reach
 }
 
 // still returns mode number k in still fluid.
