@@ -47,3 +47,11 @@ type places struct {
 func (p *places) Len() int           { return len(p.list) }
 func (p *places) Less(i, j int) bool { return p.less(p.list[i], p.list[j]) }
 func (p *places) Swap(i, j int)      { p.list[i], p.list[j] = p.list[j], p.list[i] }
+
+// zeros returns n zeros.
+//
+//go:noinline
+func zeros(n int) []float64 { return make([]float64, n) }
+
+// copied returns a copy.
+func copied(x []float64) []float64 { return append(zeros(0), x...) }

@@ -47,7 +47,7 @@ func (o Oval) harmonics(power float64) []float64 {
 	// The trapezium rule converges geometrically: the singularities in phi lie
 	// at an imaginary part of artanh((1-h)/(1+h)), above 0.6 for h <= 0.3.
 	const points = 128
-	g := make([]float64, points/4)
+	g := zeros(points / 4)
 	for i := range points {
 		sin, cos := math.Sincos(math.Pi * float64(i) / points)
 		v := math.Pow(square(cos/(1+o.Half))+square(sin/(1-o.Half)), power/2)
@@ -143,7 +143,7 @@ func (f *ovalFluid) addMass(b *unevenBlock) {
 // radial shapes of two orders, as if the angles matched: the integral of
 // J_b J_b' k^-4, which needs b and b' only.
 func crossForm(p, q *coupledOrder) []float64 {
-	x := make([]float64, p.n*q.n)
+	x := zeros(p.n * q.n)
 	m := min(p.m, q.m)
 	for i := range p.n {
 		for j := range q.n {
@@ -156,7 +156,7 @@ func crossForm(p, q *coupledOrder) []float64 {
 // addShapes adds X, a matrix between the radial shapes of two orders, to the
 // mass between the functions of two nodes.
 func (b *unevenBlock) addShapes(p, q *node, x []float64) {
-	half := make([]float64, q.order.n)
+	half := zeros(q.order.n)
 	for i := range p.order.omega {
 		clear(half)
 		for k, c := range p.order.row(i) {
@@ -196,7 +196,7 @@ func (f *ovalFluid) addOpen(b *unevenBlock) {
 			continue
 		}
 		mu := float64(degree) + 1.5
-		operator, round := make([]float64, size*size), make([]float64, size)
+		operator, round := zeros(size*size), zeros(size)
 		for i, p := range nodes {
 			for j, q := range nodes {
 				operator[i*size+j] = symbolFactor(f.pure, f.turn, p, q) / (4 * mu)
@@ -209,11 +209,11 @@ func (f *ovalFluid) addOpen(b *unevenBlock) {
 		for i, p := range nodes {
 			o := p.order
 			q := (degree - o.m) / 2
-			u := make([]float64, o.n)
+			u := zeros(o.n)
 			for j := max(0, q-1); j < o.n; j++ {
 				u[j] = disc.HeldEdge.OpenCoupling(o.m, j, q)
 			}
-			columns[i] = make([]float64, len(o.omega))
+			columns[i] = zeros(len(o.omega))
 			for k := range columns[i] {
 				columns[i][k] = circle(o.m) * dot(u, o.row(k))
 			}
@@ -239,8 +239,8 @@ func (f *ovalFluid) addOpen(b *unevenBlock) {
 func inverseOf(a []float64, n int) []float64 {
 	l := append([]float64(nil), a...)
 	cholesky(l, n)
-	inverse := make([]float64, n*n)
-	x := make([]float64, n)
+	inverse := zeros(n * n)
+	x := zeros(n)
 	for c := range n {
 		clear(x)
 		x[c] = 1

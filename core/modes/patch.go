@@ -97,7 +97,7 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 	// coefficients fall off alike.
 	spokes := 2*top + 6
 	rings := top/2 + 4
-	radii, weights := make([]float64, rings), make([]float64, rings)
+	radii, weights := zeros(rings), zeros(rings)
 	disc.RadialRule(radii, weights, 0)
 	for _, s := range radii {
 		a.addCircle(s*size, spokes)
@@ -109,14 +109,14 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 	for l := 0; l <= top; l++ {
 		values := make([][]float64, rings)
 		for g, s := range radii {
-			values[g] = make([]float64, (top-l)/2+1)
+			values[g] = zeros((top-l)/2 + 1)
 			zernike(values[g], l, s)
 		}
 		for _, sine := range [2]bool{false, true} {
 			if l == 0 && sine {
 				continue
 			}
-			trig := make([]float64, spokes)
+			trig := zeros(spokes)
 			for i := range trig {
 				angle := 2 * math.Pi * float64(i) / float64(spokes)
 				if trig[i] = math.Cos(float64(l) * angle); sine {
@@ -129,7 +129,7 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 				if !p.Rigid || degree <= 1 {
 					f.mass = p.Mass
 				}
-				row := make([]float64, count)
+				row := zeros(count)
 				// Mean over the patch: (1/pi) integral s ds dphi.
 				norm := zernikeNorm(l, degree) * 2 / float64(spokes)
 				for g := range radii {
@@ -141,7 +141,7 @@ func newPatchAttachment(index int, p Patch, radius, axis, k float64) *attachment
 			}
 			if p.Rigid {
 				f := functional{patch: index, order: l, degree: -1, sine: sine, load: true}
-				row := make([]float64, count)
+				row := zeros(count)
 				norm := 1 / float64(spokes)
 				if l > 0 {
 					norm *= math.Sqrt2
@@ -191,7 +191,7 @@ func (a *attachment) constraints() [][]float64 {
 		if f.degree == 0 || f.degree == 1 {
 			continue
 		}
-		row := make([]float64, len(a.list))
+		row := zeros(len(a.list))
 		row[i] = 1
 		if f.degree == -1 && f.order <= 1 {
 			// A plane b s cos phi gives b/sqrt(2) along the rim and b/2 over the

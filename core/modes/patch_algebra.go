@@ -28,7 +28,7 @@ func constrain(c []float64, n int, rows [][]float64) {
 	}
 	for _, b := range basis {
 		// (1 - b b')C(1 - b b') = C - b w' - w b' + (b'w) b b', w = C b.
-		w := make([]float64, n)
+		w := zeros(n)
 		for i := range w {
 			w[i] = dot(part(c, i, n), b)
 		}
@@ -48,7 +48,7 @@ func pivotedCholesky(a []float64, n int, scale []float64, allowed []bool) (pivot
 	// N. J. Higham, Accuracy and Stability of Numerical Algorithms, 2nd ed.
 	// (2002), section 10.3.
 	largest := 0.0
-	left := make([]float64, n)
+	left := zeros(n)
 	for i := range left {
 		if allowed[i] {
 			left[i] = a[i*n+i]
@@ -66,7 +66,7 @@ func pivotedCholesky(a []float64, n int, scale []float64, allowed []bool) (pivot
 		if left[p] <= residualTolerance*largest {
 			break
 		}
-		column := make([]float64, n)
+		column := zeros(n)
 		root := math.Sqrt(left[p])
 		for i := range column {
 			v := a[i*n+p]
@@ -87,7 +87,7 @@ func pivotedCholesky(a []float64, n int, scale []float64, allowed []bool) (pivot
 		left[p] = 0
 		columns, pivots = append(columns, column), append(pivots, p)
 	}
-	l = make([]float64, n*len(columns))
+	l = zeros(n * len(columns))
 	for e, c := range columns {
 		for i, v := range c {
 			l[i*len(columns)+e] = v

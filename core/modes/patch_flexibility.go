@@ -2,7 +2,6 @@ package modes
 
 import (
 	"math"
-	"slices"
 
 	"hoopsheet/core/disc"
 )
@@ -26,8 +25,8 @@ func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
 			f.load = append(f.load, g.load)
 		}
 	}
-	f.values = make([]float64, f.count*s.unknowns)
-	f.matrix = make([]float64, f.count*f.count)
+	f.values = zeros(f.count * s.unknowns)
+	f.matrix = zeros(f.count * f.count)
 	at := 0
 	for i, a := range list {
 		s.evaluate(f, a, at)
@@ -50,7 +49,7 @@ func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
 	// What the functions of the even sheet hold of these is counted anew with the
 	// true stiffness, so it must come off; likewise between attachments.
 	s.takeOff(f, list, T)
-	f.tail = slices.Clone(f.matrix)
+	f.tail = copied(f.matrix)
 	f.shapes = s.deflections(f)
 	for j := range f.count {
 		if !f.load[j] {
@@ -71,7 +70,7 @@ func (s *unevenSystem) flexibility(list []*attachment, T float64) *flexibility {
 func (f *flexibility) weighTail(list []*attachment, T, sheet, fluid float64) {
 	scale := make([]float64, 0, f.count)
 	for _, a := range list {
-		energy := make([]float64, len(a.list))
+		energy := zeros(len(a.list))
 		for i := range energy {
 			at := len(scale) + i
 			energy[i] = T * f.tail[at*f.count+at]
@@ -80,7 +79,7 @@ func (f *flexibility) weighTail(list []*attachment, T, sheet, fluid float64) {
 			scale = append(scale, math.Sqrt(v*sheet/T))
 		}
 	}
-	f.inertia = make([]float64, f.count*f.count)
+	f.inertia = zeros(f.count * f.count)
 	for i, x := range scale {
 		for j, y := range scale {
 			f.inertia[i*f.count+j] = x * y * f.tail[i*f.count+j]
@@ -124,7 +123,7 @@ func (s *unevenSystem) evaluate(f *flexibility, a *attachment, at int) {
 				continue
 			}
 			kept, lefts := len(order.omega), len(order.left)
-			left := make([]float64, len(a.list)*lefts)
+			left := zeros(len(a.list) * lefts)
 			for i := range a.list {
 				row := part(rows, i, n)
 				out := f.values[(at+i)*s.unknowns+node.global:]
@@ -137,7 +136,7 @@ func (s *unevenSystem) evaluate(f *flexibility, a *attachment, at int) {
 			}
 			part := shapePart{order: order, shapes: rows, left: left}
 			if a.strip != nil {
-				part.shapes = make([]float64, len(a.list)*n)
+				part.shapes = zeros(len(a.list) * n)
 				copy(part.shapes, straight[side])
 			}
 			a.parts = append(a.parts, part)
@@ -149,14 +148,14 @@ func (s *unevenSystem) evaluate(f *flexibility, a *attachment, at int) {
 // row by functional.
 func rowsOf(order *coupledOrder, r, t []float64, weights [][]float64) (both [2][]float64) {
 	n := order.n
-	u := make([]float64, len(r)*n)
-	cos, sin := make([]float64, len(r)), make([]float64, len(r))
+	u := zeros(len(r) * n)
+	cos, sin := zeros(len(r)), zeros(len(r))
 	for p := range r {
 		disc.HeldEdge.Shapes(part(u, p, n), order.m, math.Min(1, r[p]))
 		sin[p], cos[p] = math.Sincos(float64(order.m) * t[p])
 	}
 	for side, trig := range [2][]float64{cos, sin} {
-		both[side] = make([]float64, len(weights)*n)
+		both[side] = zeros(len(weights) * n)
 		if side == 1 && order.m == 0 {
 			continue
 		}
@@ -175,7 +174,7 @@ func rowsOf(order *coupledOrder, r, t []float64, weights [][]float64) (both [2][
 // weights, and every mix gives one group.
 func combine(mixes [][]float64, x []float64) []float64 {
 	size := len(x) / len(mixes[0])
-	out := make([]float64, len(mixes)*size)
+	out := zeros(len(mixes) * size)
 	for d, mix := range mixes {
 		sum := part(out, d, size)
 		for i, w := range mix {
@@ -205,14 +204,14 @@ func (s *unevenSystem) takeOff(f *flexibility, list []*attachment, T float64) {
 			for k := range a.parts {
 				p, q := a.parts[k], b.parts[k]
 				o := p.order
-				scale := make([]float64, o.n)
+				scale := zeros(o.n)
 				for j := range scale {
 					if whole { // tension 1/(2b) in each shape
 						scale[j] = -2 * disc.HeldEdge.Order(o.m, j) / (circle(o.m) * T)
 					}
 				}
 				lefts := len(o.left)
-				weighed := make([]float64, o.n)
+				weighed := zeros(o.n)
 				for i, g := range a.list {
 					for k, c := range scale {
 						weighed[k] = c * p.shapes[i*o.n+k]
@@ -243,13 +242,13 @@ func (s *unevenSystem) takeOff(f *flexibility, list []*attachment, T float64) {
 
 // deflections solves for the static shapes.
 func (s *unevenSystem) deflections(f *flexibility) []float64 {
-	shapes := make([]float64, f.count*s.unknowns)
+	shapes := zeros(f.count * s.unknowns)
 	for _, b := range s.blocks {
 		n := b.size
 		diagonal := b.diagonal()
 		var l []float64
 		if !diagonal {
-			l = slices.Clone(b.matrix)
+			l = copied(b.matrix)
 			cholesky(l, n)
 		}
 		for i := range f.count {
@@ -273,7 +272,7 @@ func (s *unevenSystem) deflections(f *flexibility) []float64 {
 
 // onlyStrips returns the tail of strips.
 func (f *flexibility) onlyStrips(list []*attachment) []float64 {
-	x := make([]float64, len(f.tail))
+	x := zeros(len(f.tail))
 	at := 0
 	for _, a := range list {
 		if a.strip != nil {
@@ -290,7 +289,7 @@ func (f *flexibility) onlyStrips(list []*attachment) []float64 {
 // deflections.
 func (f *flexibility) between(matrix []float64, pivots []int, factor []float64) []float64 {
 	n := len(pivots)
-	l, x := make([]float64, n*n), make([]float64, n*n)
+	l, x := zeros(n*n), zeros(n*n)
 	for i, p := range pivots {
 		copy(l[i*n:i*n+i+1], factor[p*n:p*n+i+1])
 		for j, q := range pivots {

@@ -15,7 +15,7 @@ import (
 // under it. tail is that energy, times T; fluid the density of the fluid at both
 // faces times a over sigma.
 func (a *attachment) inertiaOf(tail []float64, fluid float64) []float64 {
-	list := make([]float64, len(a.list))
+	list := zeros(len(a.list))
 	for i, f := range a.list {
 		if !f.load {
 			continue

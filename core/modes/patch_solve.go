@@ -63,7 +63,7 @@ func (s *unevenSystem) waveNumber() float64 {
 
 // inertia returns M x for a vector over all unknowns.
 func (s *unevenSystem) inertia(x []float64) []float64 {
-	y := slices.Clone(x)
+	y := copied(x)
 	for _, b := range s.blocks {
 		if b.mass == nil {
 			continue
@@ -80,7 +80,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	modes, r, u := len(raw), f.count, s.unknowns
 	// Functionals of the modes, over omega: unknowns are scaled to a strain energy
 	// of one half, in which the eigenvalues are 1/omega^2.
-	onModes := make([]float64, r*modes)
+	onModes := zeros(r * modes)
 	spans := make([][2]int, modes) // where a vector is not zero
 	for k, m := range raw {
 		scale := 1 / math.Sqrt(m.value)
@@ -90,7 +90,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 			onModes[i*modes+k] = scale * dot(m.vector[lo:hi], f.values[i*u+lo:i*u+hi])
 		}
 	}
-	residual := slices.Clone(f.matrix)
+	residual := copied(f.matrix)
 	for i := range r {
 		for j := range r {
 			if !f.load[i] && !f.load[j] {
@@ -102,7 +102,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	pivots, factor := pivotedCholesky(residual, r, f.matrix, f.load)
 	extra := len(pivots)
 	// The residual deflections in the unknowns, made orthonormal.
-	extras := make([]float64, extra*u)
+	extras := zeros(extra * u)
 	for e, p := range pivots {
 		x := part(extras, e, u)
 		copy(x, part(f.shapes, p, u))
@@ -118,7 +118,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		}
 	}
 	size := modes + extra
-	c := make([]float64, size*size)
+	c := zeros(size * size)
 	for k, m := range raw {
 		c[k*size+k] = 1 / m.value
 	}
@@ -132,7 +132,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		}
 	}
 	// Masses and constraints.
-	rows := make([]float64, r*size)
+	rows := zeros(r * size)
 	for i := range r {
 		copy(rows[i*size:], part(onModes, i, modes))
 		copy(rows[i*size+modes:(i+1)*size], part(factor, i, extra))
@@ -147,7 +147,7 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		}
 		if a.rigid() {
 			for _, weights := range a.constraints() {
-				row := make([]float64, size)
+				row := zeros(size)
 				for i, w := range weights {
 					if w != 0 {
 						addTo(row, w, part(rows, at+i, size))
@@ -161,12 +161,12 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	mirrored(c, size)
 	constrain(c, size, constraints)
 	wanted := min(modes, size-len(constraints))
-	vectors := make([]float64, wanted*size)
+	vectors := zeros(wanted * size)
 	values := newSymmetric(size).largest(c, wanted, vectors)
 	out := make([]rawMode, wanted)
 	for k, v := range values {
 		y := part(vectors, k, size)
-		m := rawMode{value: 1 / v, vector: make([]float64, u)}
+		m := rawMode{value: 1 / v, vector: zeros(u)}
 		// y'Cy = v is the modal mass.
 		scale := 1 / math.Sqrt(v)
 		for i, w := range raw {

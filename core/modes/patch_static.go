@@ -146,7 +146,7 @@ func (a *attachment) harmonicPart(b *attachment, kernel func(z, w complex128) fl
 		return sum
 	}
 	n := len(b.list)
-	x := make([]float64, len(a.list)*n)
+	x := zeros(len(a.list) * n)
 	for j, g := range b.list {
 		for i, f := range a.list {
 			if weight := f.onHarmonic() * g.onHarmonic(); weight != 0 {

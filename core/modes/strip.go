@@ -46,14 +46,14 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	x, wx := legendre(across + 1)
 	y, wy := legendre(degrees + 8)
 	along := vanishing(degrees, y, wy)
-	half, sum := make([]float64, len(x)), 0.0
+	half, sum := zeros(len(x)), 0.0
 	for i, v := range x {
 		offset := middle + v*width/2
 		half[i] = math.Sqrt(1 - offset*offset)
 		sum += wx[i] * half[i]
 	}
 	a.strip.half = sum / 2 // of the same area
-	measure := make([]float64, len(x))
+	measure := zeros(len(x))
 	for i := range measure {
 		measure[i] = wx[i] * half[i] / sum
 	}
@@ -73,7 +73,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	// Lines along the strip first, then their combinations across it.
 	for i := range x {
 		for l := range degrees {
-			row := make([]float64, len(a.r))
+			row := zeros(len(a.r))
 			for j := range y {
 				row[i*len(y)+j] = wy[j] / 2 * along[l][j]
 			}
@@ -81,7 +81,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 		}
 	}
 	for d, shape := range orthonormal(across, x, measure) {
-		mix, straight := make([]float64, len(x)), make([]float64, len(x))
+		mix, straight := zeros(len(x)), zeros(len(x))
 		for i := range x {
 			mix[i], straight[i] = measure[i]*shape[i], wx[i]/2*linear(d, x[i])
 		}
@@ -107,12 +107,12 @@ const maxAlong = 40
 func vanishing(count int, y, w []float64) [][]float64 {
 	// Gegenbauer's polynomials with lambda = 5/2: DLMF 18.9.1.
 	list := make([][]float64, count)
-	before, value := make([]float64, len(y)), make([]float64, len(y))
+	before, value := zeros(len(y)), zeros(len(y))
 	for j := range y {
 		value[j] = 1
 	}
 	for l := range list {
-		row, norm := make([]float64, len(y)), 0.0
+		row, norm := zeros(len(y)), 0.0
 		for j, v := range y {
 			row[j] = (1 - v*v) * value[j]
 			norm += w[j] / 2 * row[j] * row[j]
@@ -131,7 +131,7 @@ func vanishing(count int, y, w []float64) [][]float64 {
 func orthonormal(count int, x, w []float64) [][]float64 {
 	list := make([][]float64, count)
 	for d := range list {
-		row := make([]float64, len(x))
+		row := zeros(len(x))
 		for i, v := range x {
 			row[i] = math.Pow(v, float64(d))
 		}
@@ -178,7 +178,7 @@ func linear(degree int, x float64) float64 {
 // times T.
 func (s *stripLine) staticSelf() []float64 {
 	n := len(s.along)
-	x := make([]float64, 4*n*n)
+	x := zeros(4 * n * n)
 	s.addFree(x)
 	s.mirror(x)
 	s.addImage(x)
@@ -197,7 +197,7 @@ func (s *stripLine) addFree(x []float64) {
 	edges = append(edges, 2)
 	g, wg := legendre(12)
 	points, weights := legendre(n + 4)
-	here, there := make([]float64, len(points)), make([]float64, len(points))
+	here, there := zeros(len(points)), zeros(len(points))
 	for i := range len(edges) - 1 {
 		for j, v := range g {
 			length := (edges[i+1] - edges[i]) / 2
@@ -243,7 +243,7 @@ func (s *stripLine) addImage(x []float64) {
 	var image [2][2][]float64
 	for d := range 2 {
 		for e := range 2 {
-			image[d][e] = make([]float64, m*m)
+			image[d][e] = zeros(m * m)
 		}
 	}
 	for p, t := range s.nodes {
@@ -262,7 +262,7 @@ func (s *stripLine) addImage(x []float64) {
 			}
 		}
 	}
-	inner := make([]float64, m)
+	inner := zeros(m)
 	for d := range 2 {
 		for e := range 2 {
 			for l, q := range s.along {
@@ -284,7 +284,7 @@ func (s *stripLine) addImage(x []float64) {
 // at returns the polynomials along the strip at other points.
 func (s *stripLine) at(y []float64) [][]float64 {
 	list := make([][]float64, len(s.along))
-	before, value := make([]float64, len(y)), make([]float64, len(y))
+	before, value := zeros(len(y)), zeros(len(y))
 	for j := range y {
 		value[j] = 1
 	}
@@ -292,7 +292,7 @@ func (s *stripLine) at(y []float64) [][]float64 {
 		// The norm of the polynomials: DLMF 18.3, lambda = 5/2, over the mean.
 		n := float64(l)
 		norm := math.Sqrt((n + 2.5) * 18 / ((n + 1) * (n + 2) * (n + 3) * (n + 4)))
-		list[l] = make([]float64, len(y))
+		list[l] = zeros(len(y))
 		for j, v := range y {
 			list[l][j] = norm * (1 - v*v) * value[j]
 			before[j], value[j] = value[j], (2*(n+2.5)*v*value[j]-(n+4)*before[j])/(n+1)
@@ -320,7 +320,7 @@ func (s *stripLine) across(u float64) (even, odd float64) {
 // legendre returns the Gauss rule of n points on -1 to 1.
 func legendre(n int) (x, w []float64) {
 	// Newton's method on P_n from DLMF 18.16.6; weights DLMF 3.5(v).
-	x, w = make([]float64, n), make([]float64, n)
+	x, w = zeros(n), zeros(n)
 	for i := range x {
 		z := math.Cos(math.Pi * (float64(i) + 0.75) / (float64(n) + 0.5))
 		slope := 0.0

@@ -103,13 +103,13 @@ func (o *coupledOrder) fill(n int) {
 		o.add(mode.coef[:n], mode.SheetMass+mode.FluidMass, last)
 		o.cut = append(o.cut, energy(o.m, mode.coef, n)/energy(o.m, mode.coef, 0))
 	}
-	static := make([]float64, size*size)
+	static := zeros(size * size)
 	for i := range size {
 		copy(part(static, i, size), source.static[i*whole:])
 	}
-	vectors := make([]float64, size*size)
+	vectors := zeros(size * size)
 	values := newSymmetric(size).largest(static, size, vectors)
-	y, q := make([]float64, whole), make([]float64, source.strain.n)
+	y, q := zeros(whole), zeros(source.strain.n)
 	for k := range size {
 		if source.cavity == nil && k < len(o.known) {
 			continue
@@ -186,7 +186,7 @@ func slopesOf(radial, around []float64, m int, r float64) {
 	//
 	// Zernike's radial polynomials of one degree, m + 2j + 1.
 	n := len(radial)
-	outer := make([]float64, n)
+	outer := zeros(n)
 	zernike(outer, m+1, r)
 	if m == 0 {
 		for j, v := range outer {
@@ -194,7 +194,7 @@ func slopesOf(radial, around []float64, m int, r float64) {
 		}
 		return
 	}
-	inner := make([]float64, n+1)
+	inner := zeros(n + 1)
 	zernike(inner, m-1, r)
 	for j, v := range outer {
 		radial[j] = (inner[j+1] - v) / 2
@@ -235,8 +235,8 @@ type gradientTable struct {
 
 func (o *coupledOrder) gradients(radii []float64) *gradientTable {
 	k := len(o.omega)
-	t := &gradientTable{functions: k, radial: make([]float64, len(radii)*k), around: make([]float64, len(radii)*k)}
-	ur, ut := make([]float64, o.n), make([]float64, o.n)
+	t := &gradientTable{functions: k, radial: zeros(len(radii) * k), around: zeros(len(radii) * k)}
+	ur, ut := zeros(o.n), zeros(o.n)
 	for g, r := range radii {
 		slopesOf(ur, ut, o.m, r)
 		for i := range k {
@@ -255,7 +255,7 @@ func unevenRule(orders []*coupledOrder, power int) (radii, weights []float64) {
 		degree = max(degree, o.m+2*o.n-1)
 	}
 	points := (2*degree+power)/4 + 1
-	radii, weights = make([]float64, points), make([]float64, points)
+	radii, weights = zeros(points), zeros(points)
 	disc.RadialRule(radii, weights, 0)
 	return radii, weights
 }

@@ -96,7 +96,7 @@ func newUnevenSystem(orders []*coupledOrder, uneven Field, oval Oval, even *Solu
 		b := newUnevenBlock(group, s.unknowns, parts, tables)
 		s.unknowns += b.size
 		if fluid != nil {
-			b.mass = make([]float64, b.size*b.size)
+			b.mass = zeros(b.size * b.size)
 			for i := range b.size {
 				b.mass[i*b.size+i] = 1
 			}
@@ -169,7 +169,7 @@ func newUnevenBlock(group []*node, first int, parts []*harmonicPart, tables map[
 		b.size += len(n.order.omega)
 		b.wanted += n.order.listed
 	}
-	b.matrix = make([]float64, b.size*b.size)
+	b.matrix = zeros(b.size * b.size)
 	for i, p := range group {
 		for k, omega := range p.order.omega {
 			b.matrix[(p.at+k)*b.size+p.at+k] = omega * omega
@@ -217,9 +217,9 @@ func (s *unevenSystem) solve() {
 // solve finds the lowest modes of the block.
 func (b *unevenBlock) solve() {
 	n := b.size
-	b.vectors = make([]float64, b.wanted*n)
+	b.vectors = zeros(b.wanted * n)
 	if b.mass == nil && b.diagonal() {
-		b.values = make([]float64, b.wanted)
+		b.values = zeros(b.wanted)
 		place := inOrder(n, func(i, j int) bool { return b.matrix[i*n+i] < b.matrix[j*n+j] })
 		for k := range b.values {
 			b.values[k] = b.matrix[place[k]*n+place[k]]
@@ -227,12 +227,12 @@ func (b *unevenBlock) solve() {
 		}
 		return
 	}
-	c := slices.Clone(b.matrix)
+	c := copied(b.matrix)
 	var l []float64
 	if b.mass != nil {
 		// To the ordinary problem by M = LL': Golub & Van Loan, Matrix
 		// Computations, 4th ed., algorithm 8.7.1.
-		l = slices.Clone(b.mass)
+		l = copied(b.mass)
 		cholesky(l, n)
 		congruent(c, l, n)
 	}

@@ -32,8 +32,8 @@ func (m *CoupledMode) Drawing() *CoupledShape {
 func (s *coupledShape) table(steps int) []radialPair {
 	list := make([]radialPair, len(s.cos))
 	for m := range list {
-		u := make([]float64, len(s.cos[m]))
-		p := radialPair{make([]float64, steps+1), make([]float64, steps+1)}
+		u := zeros(len(s.cos[m]))
+		p := radialPair{zeros(steps + 1), zeros(steps + 1)}
 		for i := range steps {
 			if x := float64(i) / float64(steps) / s.inner; x < 1 {
 				disc.HeldEdge.Shapes(u, m, x)
@@ -98,7 +98,7 @@ func (s *CoupledShape) DiameterAngles() []float64 { return []float64{} }
 // a grid of 32 radii and 96 angles.
 func (s *CoupledShape) Lobes() []Lobe {
 	const rings, spokes = 32, 96
-	value := make([]float64, (rings+1)*spokes)
+	value := zeros((rings + 1) * spokes)
 	for i := range rings {
 		for k := range spokes {
 			sin, cos := math.Sincos(2 * math.Pi * float64(k) / spokes)

@@ -53,7 +53,7 @@ func (s *unevenSystem) modes() []rawMode {
 	var list []rawMode
 	for _, b := range s.blocks {
 		for k, v := range b.values {
-			vector := make([]float64, s.unknowns)
+			vector := zeros(s.unknowns)
 			copy(b.of(vector), part(b.vectors, k, b.size))
 			list = append(list, rawMode{value: v, vector: vector, change: s.truncation(vector, v, len(b.nodes))})
 		}
@@ -138,7 +138,7 @@ func (s *unevenSystem) label(raw []rawMode, even *Solution) []CoupledMode {
 			}
 		}
 	}
-	shares := make([]float64, len(raw)) // above 0 for what has a label
+	shares := zeros(len(raw)) // above 0 for what has a label
 	give := func(k int, p *slot, share float64) {
 		p.modes, shares[k] = append(p.modes, k), math.Min(1, math.Max(share, 1e-9))
 	}
@@ -237,7 +237,7 @@ func (s *unevenSystem) finish(r rawMode, order, n int, even *Solution) CoupledMo
 func (s *unevenSystem) shapeOf(r rawMode, even *Solution) *coupledShape {
 	shape := &coupledShape{inner: even.orders[0].radius / even.Real.Radius, scale: 1}
 	for i, o := range s.orders {
-		a, b := make([]float64, o.n), make([]float64, o.n)
+		a, b := zeros(o.n), zeros(o.n)
 		for k := range o.omega {
 			cos, sin := s.component(r.vector, i, k)
 			addTo(a, cos, o.row(k))
@@ -280,7 +280,7 @@ func (m *CoupledMode) Coefficients() (cos, sin [][]float64, radius float64) {
 }
 
 func scaled(x []float64, f float64) []float64 {
-	y := make([]float64, len(x))
+	y := zeros(len(x))
 	for i, v := range x {
 		y[i] = f * v
 	}
@@ -293,7 +293,7 @@ func (s *coupledShape) at(r, theta float64) float64 {
 		return 0
 	}
 	w := 0.0
-	u := make([]float64, len(s.cos[0]))
+	u := zeros(len(s.cos[0]))
 	for m := range s.cos {
 		u = slices.Grow(u[:0], len(s.cos[m]))[:len(s.cos[m])]
 		disc.HeldEdge.Shapes(u, m, x)

@@ -39,7 +39,7 @@ func (f Field) harmonicParts(radii, weights []float64, T float64) []*harmonicPar
 				c = 0
 			}
 			h = &harmonicPart{k: p.K, cos: c, sin: s}
-			h.rr, h.tt, h.rt = make([]float64, len(radii)), make([]float64, len(radii)), make([]float64, len(radii))
+			h.rr, h.tt, h.rt = zeros(len(radii)), zeros(len(radii)), zeros(len(radii))
 			byKey[key] = h
 			list = append(list, h)
 		}
