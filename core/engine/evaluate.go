@@ -6,6 +6,7 @@ import (
 
 	"hoopsheet/core/air"
 	"hoopsheet/core/bessel"
+	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/modes"
 	"hoopsheet/core/response"
 	"hoopsheet/core/tap"
@@ -27,6 +28,13 @@ var checkable = []quantityOf{
 	{"frequency-ratio", 2, func(a []float64) float64 { return unitMode(a[0], a[1]).Frequency / unitMode(0, 1).Frequency }},
 	{"frequency-number", 2, func(a []float64) float64 { return unitMode(a[0], a[1]).Frequency }},
 	{"nodal-circle", 3, func(a []float64) float64 { return circle(unitMode(a[0], a[1]), int(a[2])) }},
+	{"clamped-number", 3, func(a []float64) float64 { return stiffNumber(a[0], a[1], a[2], 0, modes.RimClamped) }},
+	{"supported-number", 4, func(a []float64) float64 { return stiffNumber(a[0], a[1], a[2], a[3], modes.RimSupported) }},
+	{"added-mass-baffled", 2, func(a []float64) float64 {
+		return addedMass(a, diaphragm.FaceBaffled, diaphragm.FaceVacuum)
+	}},
+	{"added-mass-open", 2, func(a []float64) float64 { return addedMass(a, diaphragm.FaceOpen, diaphragm.FaceOpen) / 2 }},
+	{"kettle-number", 2, kettleNumber},
 	{"air-density", 3, func(a []float64) float64 { return air.Density(a[0], a[1], a[2], air.CarbonDioxide) }},
 	{"sound-speed", 4, func(a []float64) float64 { return air.SoundSpeed(a[0], a[1], a[2], a[3]) }},
 	{"bulge-motion", 2, bulgeMotion},
@@ -71,6 +79,42 @@ func circle(mode modes.Mode, k int) float64 {
 		return math.NaN()
 	}
 	return mode.CircleRadii[k-1]
+}
+
+// stiffNumber is omega a^2 sqrt(sigma/D) of mode (m, n) of a sheet with s = T a^2/D.
+func stiffNumber(s, m, n, nu float64, rim modes.Rim) float64 {
+	roots := modes.StiffRoots(make([]float64, int(n)), int(m), s, nu, rim)
+	alpha := roots[len(roots)-1]
+	return alpha * math.Sqrt(alpha*alpha+s)
+}
+
+// addedMass is the mass of the fluid over rho a of mode (m, n) of a unit sheet, in the limit of a thin fluid, which leaves
+// the shape as it is: extrapolated from three densities.
+func addedMass(a []float64, upper, lower diaphragm.FaceKind) float64 {
+	factor := func(density float64) float64 {
+		r := modes.Real{Radius: 1, Tension: 1, ArealDensity: 1,
+			Upper: modes.Face{Kind: upper, Density: density, SoundSpeed: 1}, Lower: modes.Face{Kind: lower, Density: density, SoundSpeed: 1}}
+		mode, err := modes.SolveMode(r, modes.Effects{Fluid: true}, int(a[0]), int(a[1]))
+		if err != nil {
+			return math.NaN()
+		}
+		return mode.FluidMass / mode.SheetMass / density
+	}
+	const d = 1e-3
+	return (8*factor(d/4) - 6*factor(d/2) + factor(d)) / 3 // Richardson: the error is of the third order
+}
+
+// kettleNumber is omega a sqrt(sigma/T) of mode (0, n) over a closed volume whose pressure is even: a cavity with a light
+// gas that is fast, a[0] = rho c^2 a^2/(T L).
+func kettleNumber(a []float64) float64 {
+	const density, speed, depth = 1e-7, 1e5, 0.5
+	r := modes.Real{Radius: 1, Tension: density * speed * speed / (a[0] * depth), ArealDensity: 1,
+		Lower: modes.Face{Kind: diaphragm.FaceCavity, Density: density, SoundSpeed: speed, Depth: depth}}
+	mode, err := modes.SolveMode(r, modes.Effects{Fluid: true, Sound: true, Cavity: true}, 0, int(a[1]))
+	if err != nil {
+		return math.NaN()
+	}
+	return 2 * math.Pi * mode.Frequency / math.Sqrt(r.Tension)
 }
 
 // bulgeMotion is the displacement at radius r and time t of the sheet of unit
