@@ -75,19 +75,25 @@ func (s *unevenSystem) inertia(x []float64) []float64 {
 	return y
 }
 
+// ritzFunction is a function by its unknowns from first on, as far as they are
+// not zero.
+type ritzFunction struct {
+	first  int
+	vector []float64
+}
+
 // ritz solves in the modes and the residual deflections.
 func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) []rawMode {
 	modes, r, u := len(raw), f.count, s.unknowns
-	// Functionals of the modes, over omega: unknowns are scaled to a strain energy
-	// of one half, in which the eigenvalues are 1/omega^2.
+	// Functions and their functionals are scaled to a strain energy of one half, in
+	// which the eigenvalues are 1/omega^2.
+	basis := make([]ritzFunction, modes)
 	onModes := zeros(r * modes)
-	spans := make([][2]int, modes) // where a vector is not zero
 	for k, m := range raw {
-		scale := 1 / math.Sqrt(m.value)
 		lo, hi := span(m.vector)
-		spans[k] = [2]int{lo, hi}
+		basis[k] = ritzFunction{lo, scaled(m.vector[lo:hi], 1/math.Sqrt(m.value))}
 		for i := range r {
-			onModes[i*modes+k] = scale * dot(m.vector[lo:hi], f.values[i*u+lo:i*u+hi])
+			onModes[i*modes+k] = dot(basis[k].vector, part(f.values, i, u)[lo:])
 		}
 	}
 	residual := copied(f.matrix)
@@ -102,20 +108,18 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	pivots, factor := pivotedCholesky(residual, r, f.matrix, f.load)
 	extra := len(pivots)
 	// The residual deflections in the unknowns, made orthonormal.
-	extras := zeros(extra * u)
 	for e, p := range pivots {
-		x := part(extras, e, u)
-		copy(x, part(f.shapes, p, u))
-		for k, m := range raw {
-			lo, hi := spans[k][0], spans[k][1]
-			addTo(x[lo:], -onModes[p*modes+k]/math.Sqrt(m.value), m.vector[lo:hi])
+		x := copied(part(f.shapes, p, u))
+		for k := range basis {
+			c := 0.0
+			if k < modes {
+				c = onModes[p*modes+k]
+			} else {
+				c = factor[p*extra+k-modes]
+			}
+			addTo(x[basis[k].first:], -c, basis[k].vector)
 		}
-		for d := range e {
-			addTo(x, -factor[p*extra+d], part(extras, d, u))
-		}
-		for i := range x {
-			x[i] /= factor[p*extra+e]
-		}
+		basis = append(basis, ritzFunction{0, scaled(x, 1/factor[p*extra+e])})
 	}
 	size := modes + extra
 	c := zeros(size * size)
@@ -125,10 +129,9 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 	tail := f.between(f.inertia, pivots, factor)
 	strips := f.between(f.onlyStrips(list), pivots, factor)
 	for e := range extra {
-		y := s.inertia(part(extras, e, u))
+		y := s.inertia(basis[modes+e].vector)
 		for d := range e + 1 {
-			v := dot(y, part(extras, d, u)) + tail[e*extra+d]
-			c[(modes+e)*size+modes+d], c[(modes+d)*size+modes+e] = v, v
+			c[(modes+e)*size+modes+d] = dot(y, basis[modes+d].vector) + tail[e*extra+d]
 		}
 	}
 	// Masses and constraints.
@@ -169,13 +172,11 @@ func (s *unevenSystem) ritz(raw []rawMode, list []*attachment, f *flexibility) [
 		m := rawMode{value: 1 / v, vector: zeros(u)}
 		// y'Cy = v is the modal mass.
 		scale := 1 / math.Sqrt(v)
-		for i, w := range raw {
-			m.change += y[i] * y[i] * w.change / w.value
-			lo, hi := spans[i][0], spans[i][1]
-			addTo(m.vector[lo:], scale*y[i]/math.Sqrt(w.value), w.vector[lo:hi])
-		}
-		for e := range extra {
-			addTo(m.vector, scale*y[modes+e], part(extras, e, u))
+		for i, b := range basis {
+			if i < modes {
+				m.change += y[i] * y[i] * raw[i].change / raw[i].value
+			}
+			addTo(m.vector[b.first:], scale*y[i], b.vector)
 		}
 		// The inertia of what the unknowns do not express is an estimate, so it is
 		// counted twice; of the deflection under strips, a quarter of what the

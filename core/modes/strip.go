@@ -45,7 +45,7 @@ func newStripAttachment(s Strip, radius, axis, k float64) *attachment {
 	across := min(2+int(k*width/2), 5) // at least 1 and linear
 	x, wx := legendre(across + 1)
 	y, wy := legendre(degrees + 8)
-	along := vanishing(degrees, y, wy)
+	along := vanishing(degrees, y)
 	half, sum := zeros(len(x)), 0.0
 	for i, v := range x {
 		offset := middle + v*width/2
@@ -104,22 +104,20 @@ const maxAlong = 40
 
 // vanishing returns polynomials (1-y^2) times those of degree 0, 1, .. at the
 // points y, orthonormal under the mean over -1 to 1.
-func vanishing(count int, y, w []float64) [][]float64 {
-	// Gegenbauer's polynomials with lambda = 5/2: DLMF 18.9.1.
+func vanishing(count int, y []float64) [][]float64 {
+	// Gegenbauer's polynomials with lambda = 5/2: DLMF 18.9.1; their norm, DLMF
+	// 18.3, over the mean.
 	list := make([][]float64, count)
 	before, value := zeros(len(y)), zeros(len(y))
 	for j := range y {
 		value[j] = 1
 	}
 	for l := range list {
-		row, norm := zeros(len(y)), 0.0
-		for j, v := range y {
-			row[j] = (1 - v*v) * value[j]
-			norm += w[j] / 2 * row[j] * row[j]
-		}
-		list[l] = scaled(row, 1/math.Sqrt(norm))
 		n := float64(l)
+		norm := math.Sqrt((n + 2.5) * 18 / ((n + 1) * (n + 2) * (n + 3) * (n + 4)))
+		list[l] = zeros(len(y))
 		for j, v := range y {
+			list[l][j] = norm * (1 - v*v) * value[j]
 			before[j], value[j] = value[j], (2*(n+2.5)*v*value[j]-(n+4)*before[j])/(n+1)
 		}
 	}
@@ -208,7 +206,7 @@ func (s *stripLine) addFree(x []float64) {
 				here[p] = -1 + (1-u/2)*(1+v)
 				there[p] = here[p] + u
 			}
-			a, b := s.at(here), s.at(there)
+			a, b := vanishing(n, here), vanishing(n, there)
 			for k := range n {
 				for p := range a[k] {
 					a[k][p] *= weights[p] * (1 - u/2) * wg[j] * length / 4
@@ -279,26 +277,6 @@ func (s *stripLine) addImage(x []float64) {
 			}
 		}
 	}
-}
-
-// at returns the polynomials along the strip at other points.
-func (s *stripLine) at(y []float64) [][]float64 {
-	list := make([][]float64, len(s.along))
-	before, value := zeros(len(y)), zeros(len(y))
-	for j := range y {
-		value[j] = 1
-	}
-	for l := range list {
-		// The norm of the polynomials: DLMF 18.3, lambda = 5/2, over the mean.
-		n := float64(l)
-		norm := math.Sqrt((n + 2.5) * 18 / ((n + 1) * (n + 2) * (n + 3) * (n + 4)))
-		list[l] = zeros(len(y))
-		for j, v := range y {
-			list[l][j] = norm * (1 - v*v) * value[j]
-			before[j], value[j] = value[j], (2*(n+2.5)*v*value[j]-(n+4)*before[j])/(n+1)
-		}
-	}
-	return list
 }
 
 // across is the mean of -(1/2 pi) ln sqrt(u^2 + (s-s')^2) over s and s' across
