@@ -33,17 +33,15 @@ func (c *Case) assumptions() []string {
 			list = append(list, "At the start the fluid moves along with the sheet.")
 		}
 		return append(list,
-			"The motion is the sum of the modes with m = 0 to "+strconv.Itoa(c.Orders)+" nodal diameters and n = 1 to "+
-				strconv.Itoa(c.Circles)+" within each, each with its own damping.")
+			say("The motion is the sum of the modes with m = 0 to # nodal diameters and n = 1 to # within each, each with its own damping.", c.Orders, c.Circles))
 	}
 	list := []string{
 		"The sheet is ideal: limp, evenly tensioned, fixed at the rim, without air, stiffness, cavity or attached masses.",
 		"The motion is small, so that the tension stays the same.",
-		"The motion is the sum of the modes with m = 0 to " + strconv.Itoa(c.Orders) + " nodal diameters and n = 1 to " +
-			strconv.Itoa(c.Circles) + " nodal circles.",
+		say("The motion is the sum of the modes with m = 0 to # nodal diameters and n = 1 to # nodal circles.", c.Orders, c.Circles),
 	}
 	if c.Zeta > 0 {
-		return append(list, "Every mode has the damping ratio "+short(c.Zeta)+".")
+		return append(list, say("Every mode has the damping ratio #.", c.Zeta))
 	}
 	return append(list, "There is no damping.")
 }
@@ -51,7 +49,7 @@ func (c *Case) assumptions() []string {
 // warnings says in words where the answer reaches a limit.
 func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 	list := []string{}
-	add := func(text string) { list = append(list, text) }
+	add := func(text string, parts ...any) { list = append(list, say(text, parts...)) }
 
 	energy := m.Energy
 	if c.Wet != nil || c.later() {
@@ -59,14 +57,12 @@ func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 		energy = c.Sheet.Tension / 2 * s.moves.strain()
 	}
 	if stretch := c.extraTension(energy); stretch > refuseStretch {
-		add("The motion stretches the sheet: its tension could rise by up to " + percent(stretch) +
-			". This is far beyond small motion; do not use these figures.")
+		add("The motion stretches the sheet: its tension could rise by up to #. This is far beyond small motion; do not use these figures.", percent(stretch))
 	} else if stretch > warnStretch {
-		add("The motion stretches the sheet: its tension could rise by up to " + percent(stretch) +
-			", which this answer leaves out. Frequencies would be higher and travel smaller.")
+		add("The motion stretches the sheet: its tension could rise by up to #, which this answer leaves out. Frequencies would be higher and travel smaller.", percent(stretch))
 	}
 	if seen.steepest > warnSlope && !math.IsInf(seen.steepest, 1) {
-		add("The sheet reaches a slope of " + short2(seen.steepest) + "; the equations are for slopes well below 0.1.")
+		add("The sheet reaches a slope of #; the equations are for slopes well below 0.1.", short2(seen.steepest))
 	}
 
 	for _, value := range []struct {
@@ -85,28 +81,27 @@ func (c *Case) warnings(s *start, m *Motion, seen warned) []string {
 		formula, isFormula := value.form.(*sampled)
 		jumps := math.IsInf(value.form.norms().slope, 1)
 		if isFormula && formula.leavesRim() {
-			add("The formula of the " + value.what + " is not zero at the rim, where the sheet is fixed; it reaches " +
-				short2(formula.rim/formula.largest) + " of its largest value there. The modes bring it to zero with ripples beside the rim.")
+			add("The formula of the # is not zero at the rim, where the sheet is fixed; it reaches # of its largest value there. The modes bring it to zero with ripples beside the rim.",
+				value.what, short2(formula.rim/formula.largest))
 		} else if jumps {
-			add("The " + value.what + " has a sharp edge. However many modes are taken, their sum overshoots beside it by about 9 % of the jump.")
+			add("The # has a sharp edge. However many modes are taken, their sum overshoots beside it by about 9 % of the jump.", value.what)
 		}
 		switch {
 		case jumps && value.jumpUp:
-			add("An unbroken sheet cannot take up an " + value.what + " with a jump: its energy would have no limit. Energies here are those of the chosen modes.")
+			add("An unbroken sheet cannot take up an # with a jump: its energy would have no limit. Energies here are those of the chosen modes.", value.what)
 		case value.missed > notableMiss:
-			add("The chosen modes leave out " + percent(value.missed) + " of the energy of the " + value.what + "; take more nodal diameters or circles to see finer detail.")
+			add("The chosen modes leave out # of the energy of the #; take more nodal diameters or circles to see finer detail.", percent(value.missed), value.what)
 		}
 	}
 	if spacing := c.Duration / float64(c.Frames-1); spacing > m.Period/4 {
-		add("The frames are " + short2(spacing*1e3) + " ms apart and the period of mode (0, 1) is " + short2(m.Period*1e3) +
-			" ms, so the moving picture may mislead. Take more frames or a shorter duration; travel and histories do not depend on the frames.")
+		add("The frames are # ms apart and the period of mode (0, 1) is # ms, so the moving picture may mislead. Take more frames or a shorter duration; travel and histories do not depend on the frames.",
+			short2(spacing*1e3), short2(m.Period*1e3))
 	}
 	if seen.cappedHistory {
 		add("The duration is long for the fastest modes: the histories show fewer than 8 instants of their period.")
 	}
 	if seen.coarseSearch {
-		add("The duration is long for the fastest modes: the largest travel was sought at " + strconv.Itoa(mostSearch) +
-			" instants, between which a larger one may have been missed.")
+		add("The duration is long for the fastest modes: the largest travel was sought at # instants, between which a larger one may have been missed.", mostSearch)
 	}
 	return list
 }

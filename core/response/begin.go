@@ -3,7 +3,6 @@ package response
 import (
 	"math"
 	"slices"
-	"strconv"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/internal/sorting"
@@ -73,10 +72,8 @@ const mostStates = 3 << 20
 func (c *Case) start() (*start, []diaphragm.Problem) {
 	basis := basisOf(c.Orders, c.terms())
 	s := &start{projector: c.newProjector(basis), displacement: rest{}, velocity: rest{}}
-	sources, prefixes := c.sources()
 	var problems []diaphragm.Problem
-	for i := range sources {
-		g := &given{Source: sources[i], prefix: prefixes[i], way: wayOf[sources[i].Kind], at: sources[i].At / c.unit()}
+	for i, g := range c.sources() {
 		if more := c.project(s.projector, g); len(more) > 0 {
 			problems = append(problems, more...)
 			continue
@@ -91,8 +88,8 @@ func (c *Case) start() (*start, []diaphragm.Problem) {
 	if len(problems) > 0 {
 		return nil, problems
 	}
-	if problem := s.join(c); problem != nil {
-		return nil, []diaphragm.Problem{*problem}
+	if problems := s.join(c); problems != nil {
+		return nil, problems
 	}
 	s.account(c)
 	return s, nil
@@ -172,7 +169,7 @@ func contactArea(s Shape) float64 {
 }
 
 // join makes the motion of all sources.
-func (s *start) join(c *Case) *diaphragm.Problem {
+func (s *start) join(c *Case) []diaphragm.Problem {
 	p := s.projector
 	begin := make([]state, len(p.modes))
 	var acts []acting
@@ -217,8 +214,8 @@ func (s *start) join(c *Case) *diaphragm.Problem {
 		count += len(acts[i].pieces) + 1
 	}
 	if count*len(first.modes) > mostStates {
-		return &diaphragm.Problem{Field: "sources", Code: diaphragm.CodeConflict, Offset: -1,
-			Message: "The pulses have " + strconv.Itoa(count) + " parts, too many for " + strconv.Itoa(len(first.modes)) + " modes; take a shorter table or fewer modes."}
+		return refusal("sources", diaphragm.CodeConflict, -1,
+			say("The pulses have # parts, too many for # modes; take a shorter table or fewer modes.", count, len(first.modes)))
 	}
 	s.moves = &motion{basis: p.basis, stages: []*stage{first}}
 	first.act(begin, acts, infinity)

@@ -3,7 +3,6 @@ package response
 import (
 	"math"
 	"slices"
-	"strconv"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/internal/sorting"
@@ -14,7 +13,7 @@ const mostJoined = 900
 
 // bodies lets the bodies strike one after another: each meets the sheet as what
 // came before has left it.
-func (s *start) bodies(c *Case, begin []state, acts []acting) *diaphragm.Problem {
+func (s *start) bodies(c *Case, begin []state, acts []acting) []diaphragm.Problem {
 	list := slices.DeleteFunc(slices.Clone(s.list), func(g *given) bool { return g.Kind != SourceBody })
 	if len(list) == 0 {
 		return nil
@@ -59,8 +58,8 @@ func (s *start) bodies(c *Case, begin []state, acts []acting) *diaphragm.Problem
 		}
 		joined := join(now.modes, contact, g.Mass/scale)
 		if joined == nil {
-			return &diaphragm.Problem{Field: "sources", Code: diaphragm.CodeConflict, Offset: -1,
-				Message: "A body that stays joins the modes of the sheet; with " + strconv.Itoa(len(now.modes)) + " modes these are more than " + strconv.Itoa(mostJoined) + ". Take fewer nodal diameters or circles."}
+			return refusal("sources", diaphragm.CodeConflict, -1,
+				say("A body that stays joins the modes of the sheet; with # modes these are more than #. Take fewer nodal diameters or circles.", len(now.modes), mostJoined))
 		}
 		// Before: the stage up to here.
 		at := make([]state, len(now.modes))

@@ -2,7 +2,6 @@ package response
 
 import (
 	"math"
-	"strconv"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/disc"
@@ -68,71 +67,68 @@ const (
 // small first letter. It does not look at the values of a formula over the
 // sheet; Respond does.
 func (c *Case) Check() []diaphragm.Problem {
-	var problems []diaphragm.Problem
+	var r refusals
 	if c.Displacement.Kind != "" {
-		problems = append(problems, c.Displacement.Check("displacement.")...)
+		r.list = append(r.list, c.Displacement.Check("displacement.")...)
 	}
 	if c.Velocity.Kind != "" {
-		problems = append(problems, c.Velocity.Check("velocity.")...)
+		r.list = append(r.list, c.Velocity.Check("velocity.")...)
 	}
-	add := func(field string, code diaphragm.Code, message string) {
-		problems = append(problems, diaphragm.Problem{Field: field, Code: code, Message: message, Offset: -1})
-	}
-	problems = append(problems, c.checkSources()...)
+	c.checkSources(&r)
 	if !(c.Smooth >= 0 && c.Smooth <= 0.5) {
-		add("smooth", diaphragm.CodeBounds, "The radius of smoothing is "+short(c.Smooth)+" ring radii; it must be from 0 to 0.5.")
+		r.bounds("smooth", say("The radius of smoothing is # ring radii; it must be from 0 to 0.5.", c.Smooth))
 	}
-	sound := true
-	within := func(field, name string, value, least, most int) {
-		if value < least || value > most {
-			sound = false
-			add(field, diaphragm.CodeBounds, name+" is "+strconv.Itoa(value)+"; it must be from "+strconv.Itoa(least)+" to "+strconv.Itoa(most)+".")
+	before := len(r.list)
+	for _, w := range [...]struct {
+		field, name        string
+		value, least, most int
+	}{
+		{"orders", "largest number of nodal diameters", c.Orders, 0, MostOrders},
+		{"circles", "largest number of nodal circles", c.Circles, 1, MostCircles},
+		{"frames", "number of frames", c.Frames, 2, MostFrames},
+		{"radii", "number of radii of the display grid", c.Radii, 2, MostRadii},
+		{"angles", "number of angles of the display grid", c.Angles, 4, MostAngles},
+	} {
+		if w.value < w.least || w.value > w.most {
+			r.bounds(w.field, say("The # is #; it must be from # to #.", w.name, w.value, w.least, w.most))
 		}
 	}
-	within("orders", "The largest number of nodal diameters", c.Orders, 0, MostOrders)
-	within("circles", "The largest number of nodal circles", c.Circles, 1, MostCircles)
-	within("frames", "The number of frames", c.Frames, 2, MostFrames)
-	within("radii", "The number of radii of the display grid", c.Radii, 2, MostRadii)
-	within("angles", "The number of angles of the display grid", c.Angles, 4, MostAngles)
-	if sound {
+	if len(r.list) == before {
 		if c.Angles != disc.NextAngles(c.Angles) || c.Angles < disc.MinAngles(c.Orders) {
-			add("angles", diaphragm.CodeBounds, "The number of angles of the display grid is "+strconv.Itoa(c.Angles)+
-				"; modes with up to "+strconv.Itoa(c.Orders)+" nodal diameters need an even number of at least "+strconv.Itoa(2*c.Orders+2)+
-				", whose half has no prime factor above 5, such as "+strconv.Itoa(disc.NextAngles(max(c.Angles, 2*c.Orders+2)))+".")
+			r.bounds("angles", say("The number of angles of the display grid is #; modes with up to # nodal diameters need an even number of at least #, whose half has no prime factor above 5, such as #.",
+				c.Angles, c.Orders, 2*c.Orders+2, disc.NextAngles(max(c.Angles, 2*c.Orders+2))))
 		}
 		if c.Frames*c.Radii*c.Angles > MostMotion {
-			add("frames", diaphragm.CodeConflict, "Frames times radii times angles come to "+strconv.Itoa(c.Frames*c.Radii*c.Angles)+
-				" values; at most "+strconv.Itoa(MostMotion)+" are computed. Take fewer frames or a coarser grid.")
+			r.add("frames", diaphragm.CodeConflict, -1, say("Frames times radii times angles come to # values; at most # are computed. Take fewer frames or a coarser grid.",
+				c.Frames*c.Radii*c.Angles, MostMotion))
 		}
 	}
 	if c.Wet != nil && c.Orders >= 0 {
 		if message := c.wetProblem(); message != "" {
-			add("orders", diaphragm.CodeConflict, message)
-			return problems
+			r.add("orders", diaphragm.CodeConflict, -1, message)
+			return r.list
 		}
 	}
 	if !(c.Zeta >= 0 && c.Zeta <= 100) {
-		add("damping.ratio", diaphragm.CodeBounds, "The damping ratio must be from 0 to 100.")
+		r.bounds("damping.ratio", "The damping ratio must be from 0 to 100.")
 	}
 	// An unsound diaphragm has no period; its own problems say so.
 	if most := MostPeriods * c.period(); most > 0 && !(c.Duration > 0 && c.Duration <= most) {
-		add("duration", diaphragm.CodeBounds, "The duration must be above 0 and at most "+strconv.Itoa(MostPeriods)+
-			" periods of mode (0, 1), which are "+short(most)+" s.")
+		r.bounds("duration", say("The duration must be above 0 and at most # periods of mode (0, 1), which are # s.", MostPeriods, most))
 	}
 	if len(c.Points) > MostPoints {
-		add("points", diaphragm.CodeBounds, strconv.Itoa(len(c.Points))+" points are given; histories are kept of at most "+strconv.Itoa(MostPoints)+".")
-		return problems
+		r.bounds("points", say("# points are given; histories are kept of at most #.", len(c.Points), MostPoints))
+		return r.list
 	}
 	for i, p := range c.Points {
-		name := "points." + strconv.Itoa(i)
 		if !(p.Radius >= 0 && p.Radius <= 1) {
-			add(name+".radius", diaphragm.CodeBounds, "Point "+strconv.Itoa(i+1)+" is at "+short(p.Radius)+" ring radii from the centre; it must be from 0 to 1.")
+			r.bounds(say("points.#.radius", i), say("Point # is at # ring radii from the centre; it must be from 0 to 1.", i+1, p.Radius))
 		}
 		if !(math.Abs(p.Angle) <= mostAngle) {
-			add(name+".angle", diaphragm.CodeBounds, "The angle of point "+strconv.Itoa(i+1)+" must lie between -1000 and 1000 rad.")
+			r.bounds(say("points.#.angle", i), say("The angle of point # must lie between -1000 and 1000 rad.", i+1))
 		}
 	}
-	return problems
+	return r.list
 }
 
 // Fit raises the number of angles of the display grid to what the orders need.

@@ -25,9 +25,7 @@ func (c *Case) Choose(tolerance float64, mostOrders, mostCircles int) []diaphrag
 	p := wide.newProjector(b)
 	// Shares by orders and by circles, summed over the sources.
 	byOrder, byCircle := make([]float64, b.M+1), make([]float64, b.N+1)
-	sources, prefixes := c.sources()
-	for i := range sources {
-		g := &given{Source: sources[i], prefix: prefixes[i], way: wayOf[sources[i].Kind]}
+	for _, g := range c.sources() {
 		if g.Kind == SourceFront {
 			// On its way a front loads a part of the disc.
 			g.Kind, g.Shape = SourcePressure, Shape{Kind: ShapeHalf, Peak: g.Shape.Peak, Angle: g.FrontDirection}

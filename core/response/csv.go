@@ -18,10 +18,11 @@ type textTable struct {
 	offsets, lines []int
 }
 
-// readTable reads lines of the given number of numbers, parted by commas,
+// readTable reads lines of the given number of numbers, from least to most of
+// them, parted by commas,
 // semicolons, tabs or blanks. A decimal comma is read where commas do not part.
 // Empty lines and those that begin with # are passed over.
-func readTable(text, field string, columns int) (*textTable, *diaphragm.Problem) {
+func readTable(text, field string, columns, least, most int) (*textTable, []diaphragm.Problem) {
 	t := &textTable{}
 	offset := 0
 	for number, line := range strings.Split(text, "\n") {
@@ -35,12 +36,12 @@ func readTable(text, field string, columns int) (*textTable, *diaphragm.Problem)
 		var row [3]float64
 		bad := ""
 		if len(parts) < columns {
-			bad = "has " + strconv.Itoa(len(parts)) + " numbers; it needs " + strconv.Itoa(columns)
+			bad = say("has # numbers; it needs #", len(parts), columns)
 		}
 		for i := 0; i < columns && bad == ""; i++ {
 			value, err := strconv.ParseFloat(parts[i], 64)
 			if err != nil || math.IsNaN(value) || math.IsInf(value, 0) {
-				bad = "has " + quoted(parts[i]) + " where a number is needed"
+				bad = say("has # where a number is needed", quoted(parts[i]))
 			}
 			row[i] = value
 		}
@@ -49,11 +50,13 @@ func readTable(text, field string, columns int) (*textTable, *diaphragm.Problem)
 				t.header = parts
 				continue
 			}
-			return nil, &diaphragm.Problem{Field: field, Code: diaphragm.CodeUnreadable, Offset: at,
-				Message: "Line " + strconv.Itoa(number+1) + " of the table " + bad + "."}
+			return nil, refusal(field, diaphragm.CodeUnreadable, at, say("Line # of the table #.", number+1, bad))
 		}
 		t.rows = append(t.rows, row)
 		t.offsets, t.lines = append(t.offsets, at), append(t.lines, number+1)
+	}
+	if n := len(t.rows); n < least || n > most {
+		return nil, refusal(field, diaphragm.CodeBounds, -1, say("The table has # lines of numbers; from # to # are read.", n, least, most))
 	}
 	return t, nil
 }

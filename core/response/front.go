@@ -2,7 +2,6 @@ package response
 
 import (
 	"math"
-	"strconv"
 
 	"hoopsheet/core/bessel"
 	"hoopsheet/core/diaphragm"
@@ -19,7 +18,7 @@ const (
 )
 
 // frontOn gives the loads of a travelling front on the modes.
-func (c *Case) frontOn(p *projector, g *given) ([]acting, *diaphragm.Problem) {
+func (c *Case) frontOn(p *projector, g *given) ([]acting, []diaphragm.Problem) {
 	// The load on a mode while the front passes over the place s, -1 to 1 along its
 	// way, is known exactly; see crossing. Between its start and its end it is
 	// interpolated in time on panels that are even in arccos s, so that they are
@@ -36,9 +35,8 @@ func (c *Case) frontOn(p *projector, g *given) ([]acting, *diaphragm.Problem) {
 	}
 	panels := max(16, int(math.Ceil(math.Pi/2*math.Max(wave, decay/speed))))
 	if panels > mostPanels {
-		return nil, &diaphragm.Problem{Field: g.prefix, Code: diaphragm.CodeConflict, Offset: -1,
-			Message: "The load behind the front decays within " + short(speed/decay) + " ring radii of its way, or there are too many modes: that takes " +
-				strconv.Itoa(panels) + " steps, and at most " + strconv.Itoa(mostPanels) + " are computed."}
+		return nil, refusal(g.prefix, diaphragm.CodeConflict, -1,
+			say("The load behind the front decays within # ring radii of its way, or there are too many modes: that takes # steps, and at most # are computed.", speed/decay, panels, mostPanels))
 	}
 	cross := newCrossing(p.basis, g, c.Smooth)
 	time := func(s float64) float64 { return g.at + (1+s)/speed }

@@ -3,7 +3,6 @@ package response
 import (
 	"math"
 	"slices"
-	"strconv"
 	"strings"
 
 	"hoopsheet/core/diaphragm"
@@ -47,51 +46,45 @@ type point struct {
 	line            int
 }
 
+// toSI reads a unit of a table; nil if there is none of that name.
+func toSI(symbol string, dimensions ...quantity.Dimension) func(float64) float64 {
+	if symbol == "" {
+		return func(x float64) float64 { return x }
+	}
+	for _, d := range dimensions {
+		if u, ok := quantity.Find(d, symbol); ok {
+			return u.ToSI
+		}
+	}
+	return nil
+}
+
 // readMeasured reads the table of a shape; radius is that of the ring, m.
-func (s *Shape) readMeasured(prefix string, radius float64) ([]point, *diaphragm.Problem) {
+func (s *Shape) readMeasured(prefix string, radius float64) ([]point, []diaphragm.Problem) {
 	field := prefix + "table"
-	unit := func(name, symbol string, dimensions ...quantity.Dimension) (func(float64) float64, *diaphragm.Problem) {
-		if symbol == "" {
-			return func(x float64) float64 { return x }, nil
-		}
-		for _, d := range dimensions {
-			if u, ok := quantity.Find(d, symbol); ok {
-				return u.ToSI, nil
-			}
-		}
-		return nil, &diaphragm.Problem{Field: prefix + name, Code: diaphragm.CodeChoice, Offset: -1,
-			Message: quoted(symbol) + " is no unit that the table may be in."}
+	toLength, toValue := toSI(s.PlaceUnit, quantity.Length), toSI(s.ValueUnit, quantity.Length, quantity.Speed, quantity.Pressure)
+	if toLength == nil {
+		return nil, refusal(prefix+"placeUnit", diaphragm.CodeChoice, -1, say("# is no unit of length.", quoted(s.PlaceUnit)))
 	}
-	toLength, problem := unit("placeUnit", s.PlaceUnit, quantity.Length)
-	if problem != nil {
-		return nil, problem
+	if toValue == nil {
+		return nil, refusal(prefix+"valueUnit", diaphragm.CodeChoice, -1, say("# is no unit of length, speed or pressure.", quoted(s.ValueUnit)))
 	}
-	toValue, problem := unit("valueUnit", s.ValueUnit, quantity.Length, quantity.Speed, quantity.Pressure)
-	if problem != nil {
-		return nil, problem
-	}
-	table, problem := readTable(s.Table, field, 3)
-	if problem != nil {
-		return nil, problem
-	}
-	if n := len(table.rows); n < leastMeasured || n > MostMeasured {
-		return nil, &diaphragm.Problem{Field: field, Code: diaphragm.CodeBounds, Offset: -1,
-			Message: "The table has " + strconv.Itoa(n) + " measured points; from " + strconv.Itoa(leastMeasured) + " to " + strconv.Itoa(MostMeasured) + " are read."}
+	table, problems := readTable(s.Table, field, 3, leastMeasured, MostMeasured)
+	if problems != nil {
+		return nil, problems
 	}
 	polar := len(table.header) > 1 && strings.HasPrefix(strings.ToLower(table.header[1]), "theta")
 	list := make([]point, len(table.rows))
 	for i, row := range table.rows {
 		p := point{value: toValue(row[2]), line: table.lines[i]}
+		x, y := toLength(row[0])/radius, toLength(row[1])/radius
+		p.r, p.theta = math.Hypot(x, y), math.Atan2(y, x)
 		if polar {
-			p.r, p.theta = toLength(row[0])/radius, row[1]*math.Pi/180
-		} else {
-			x, y := toLength(row[0])/radius, toLength(row[1])/radius
-			p.r, p.theta = math.Hypot(x, y), math.Atan2(y, x)
+			p.r, p.theta = x, row[1]*math.Pi/180
 		}
 		if !(p.r >= 0 && p.r <= 1.02) || !(math.Abs(p.value) <= mostPeak) {
-			return nil, &diaphragm.Problem{Field: field, Code: diaphragm.CodeBounds, Offset: table.offsets[i],
-				Message: "Line " + strconv.Itoa(p.line) + " of the table lies at " + short(p.r) + " ring radii with the value " + short(p.value) +
-					"; a place must be within the ring and a value between -1,000,000 and 1,000,000."}
+			return nil, refusal(field, diaphragm.CodeBounds, table.offsets[i],
+				say("Line # of the table lies at # ring radii with the value #; a place must be within the ring and a value between -1,000,000 and 1,000,000.", p.line, p.r, p.value))
 		}
 		p.r = math.Min(p.r, 1)
 		list[i] = p
@@ -254,16 +247,16 @@ func (f *measuredFit) At(r, theta float64) float64 {
 func (f *measuredFit) report(n *SourceNote, peak float64) {
 	size := math.Abs(peak)
 	n.Residual, n.RimMisfit, n.Outliers = size*f.residual, size*f.rim, f.outliers
-	n.Notes = append(n.Notes, "A smooth shape of degree "+strconv.Itoa(f.degree+2)+", zero at the rim, is fitted to "+strconv.Itoa(f.points)+
-		" points by least squares; it misses them by "+short2(100*f.residual/math.Max(f.scale, 1e-300))+" % of the largest value (root mean square).")
+	add := func(text string, parts ...any) { n.Notes = append(n.Notes, say(text, parts...)) }
+	add("A smooth shape of degree #, zero at the rim, is fitted to # points by least squares; it misses them by # of the largest value (root mean square).",
+		f.degree+2, f.points, percent(f.residual/math.Max(f.scale, 1e-300)))
 	if len(f.outliers) > 0 {
-		n.Notes = append(n.Notes, strconv.Itoa(len(f.outliers))+" points lie more than four times the usual misfit off and are left out of the fit.")
+		add("# points lie more than four times the usual misfit off and are left out of the fit.", len(f.outliers))
 	}
 	if f.rim > 3*f.residual && f.rim > 0.01*f.scale {
-		n.Notes = append(n.Notes, "Within a twentieth of the radius from the rim the values miss a sheet held at the rim by up to "+
-			short2(100*f.rim/f.scale)+" % of the largest: look at the zero of the measurement.")
+		add("Within a twentieth of the radius from the rim the values miss a sheet held at the rim by up to # of the largest: look at the zero of the measurement.", percent(f.rim/f.scale))
 	}
 	if f.largest > 1.5*f.scale {
-		n.Notes = append(n.Notes, "Between the points the shape swings to "+short2(f.largest/f.scale)+" times the largest measured value: measure where it does.")
+		add("Between the points the shape swings to # times the largest measured value: measure where it does.", short2(f.largest/f.scale))
 	}
 }

@@ -87,9 +87,9 @@ func TestOutliersAndRim(t *testing.T) {
 		t.Errorf("polar grid: %v, want %v", got, want)
 	}
 	for text, part := range map[string]string{
-		"0,0,1\n": "The table has 1 measured points; from 6 to 4000 are read.",
+		"0,0,1\n":                                "The table has 1 lines of numbers; from 6 to 4000 are read.",
 		strings.Repeat("0.1,0,1\n", 6) + "3,0,1": "Line 7 of the table lies at 3 ring radii",
-		"0,0\n1,1\n": "Line 1 of the table has 2 numbers; it needs 3.",
+		"0,0\n1,1\n":                             "Line 1 of the table has 2 numbers; it needs 3.",
 	} {
 		s.Table = text
 		if _, problems := s.form(basisOf(4, 4), "shape.", 1); len(problems) != 1 || !strings.Contains(problems[0].Message, part) || problems[0].Field != "shape.table" {

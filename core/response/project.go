@@ -17,13 +17,6 @@ const (
 	wayRelease                 // likewise; held until its time
 )
 
-var wayOf = map[SourceKind]way{
-	SourceDisplacement: wayDisplacement, SourceVelocity: wayVelocity,
-	SourceImpulse: wayImpulse, SourceBlow: wayImpulse, SourceBody: wayImpulse,
-	SourcePressure: wayPressure, SourceFront: wayPressure, SourceShake: wayPressure,
-	SourceRelease: wayRelease,
-}
-
 // projector takes Fourier-Bessel coefficients to the modes of a case.
 type projector struct {
 	basis *disc.Basis

@@ -3,7 +3,6 @@ package response
 import (
 	"math"
 	"math/cmplx"
-	"strconv"
 
 	"hoopsheet/core/diaphragm"
 )
@@ -33,8 +32,14 @@ const (
 
 // PulseKinds lists every kind in the order in which it is offered.
 func PulseKinds() []PulseKind {
-	return []PulseKind{PulseStep, PulseRamp, PulseHalfSine, PulseTriangle, PulseRectangle, PulseDecay, PulseTable}
+	var list []PulseKind
+	for _, kind := range pulseNames {
+		list = append(list, PulseKind(kind))
+	}
+	return list
 }
+
+var pulseNames = []string{string(PulseStep), string(PulseRamp), string(PulseHalfSine), string(PulseTriangle), string(PulseRectangle), string(PulseDecay), string(PulseTable)}
 
 // Pulse is the course of a load in time.
 type Pulse struct {
@@ -49,44 +54,33 @@ type Pulse struct {
 const MostTable = 5000
 
 func (p *Pulse) check(prefix string) []diaphragm.Problem {
-	one := func(field string, code diaphragm.Code, message string) []diaphragm.Problem {
-		return []diaphragm.Problem{{Field: prefix + field, Code: code, Message: message, Offset: -1}}
+	r := refusals{prefix: prefix}
+	if !r.choice("kind", "pulse", string(p.Kind), pulseNames) || p.Kind == PulseStep {
+		return r.list
 	}
-	switch p.Kind {
-	case PulseStep:
-	case PulseTable:
-		if _, problem := p.rows(prefix + "table"); problem != nil {
-			return []diaphragm.Problem{*problem}
-		}
-	case PulseRamp, PulseHalfSine, PulseTriangle, PulseRectangle, PulseDecay:
-		if !(p.Duration >= leastTime && p.Duration <= mostTime) {
-			return one("duration", diaphragm.CodeBounds, "The duration of the pulse is "+short(p.Duration)+" s; it must be from 1e-09 to 1e+05 s.")
-		}
-	default:
-		return one("kind", diaphragm.CodeChoice, "There is no pulse named "+quoted(string(p.Kind))+"; the pulses are "+listed(PulseKinds())+".")
+	if p.Kind == PulseTable {
+		_, problems := p.rows(prefix + "table")
+		return problems
 	}
-	return nil
+	r.within("duration", "The duration of the pulse", " s", p.Duration, leastTime, mostTime)
+	return r.list
 }
 
 // rows reads the table.
-func (p *Pulse) rows(field string) ([][3]float64, *diaphragm.Problem) {
-	table, problem := readTable(p.Table, field, 2)
-	if problem != nil {
-		return nil, problem
-	}
-	wrong := func(line int, message string) *diaphragm.Problem {
-		return &diaphragm.Problem{Field: field, Code: diaphragm.CodeConflict, Message: message, Offset: table.offsets[line]}
-	}
-	if len(table.rows) < 2 || len(table.rows) > MostTable {
-		return nil, &diaphragm.Problem{Field: field, Code: diaphragm.CodeBounds, Offset: -1,
-			Message: "The table has " + strconv.Itoa(len(table.rows)) + " lines of numbers; from 2 to " + strconv.Itoa(MostTable) + " are read."}
+func (p *Pulse) rows(field string) ([][3]float64, []diaphragm.Problem) {
+	table, problems := readTable(p.Table, field, 2, 2, MostTable)
+	if problems != nil {
+		return nil, problems
 	}
 	for i, row := range table.rows {
+		message := ""
 		if math.Abs(row[0]) > mostTime || math.Abs(row[1]) > mostForce {
-			return nil, wrong(i, "A time of the table must lie within 1e+05 s of zero, and a value between -1e+09 and 1e+09.")
+			message = "A time of the table must lie within 1e+05 s of zero, and a value between -1e+09 and 1e+09."
+		} else if i > 0 && row[0] < table.rows[i-1][0] {
+			message = say("The times of the table must rise; # s follows # s.", row[0], table.rows[i-1][0])
 		}
-		if i > 0 && row[0] < table.rows[i-1][0] {
-			return nil, wrong(i, "The times of the table must rise; "+short(row[0])+" s follows "+short(table.rows[i-1][0])+" s.")
+		if message != "" {
+			return nil, refusal(field, diaphragm.CodeConflict, table.offsets[i], message)
 		}
 	}
 	return table.rows, nil

@@ -3,8 +3,6 @@ package response
 import (
 	"errors"
 	"math"
-	"slices"
-	"strings"
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/disc"
@@ -27,43 +25,37 @@ const (
 // Check lists what is wrong with the shape; prefix is put before the names of
 // its fields, such as "displacement.". It does not look at the values of a
 // formula over the sheet.
-func (s Shape) Check(prefix string) []diaphragm.Problem {
-	var problems []diaphragm.Problem
-	add := func(field string, code diaphragm.Code, offset int, message string) {
-		problems = append(problems, diaphragm.Problem{Field: prefix + field, Code: code, Message: message, Offset: offset})
+func (s *Shape) Check(prefix string) []diaphragm.Problem {
+	r := refusals{prefix: prefix}
+	var names []string
+	for _, kind := range ShapeKinds() {
+		names = append(names, string(kind))
 	}
-	if !slices.Contains(ShapeKinds(), s.Kind) {
-		names := make([]string, len(ShapeKinds()))
-		for i, kind := range ShapeKinds() {
-			names[i] = string(kind)
-		}
-		add("kind", diaphragm.CodeChoice, -1, "There is no shape named "+quoted(string(s.Kind))+"; the shapes are "+strings.Join(names, ", ")+".")
-		return problems
-	}
-	if s.Kind == ShapeRest {
-		return nil
+	if !r.choice("kind", "shape", string(s.Kind), names) || s.Kind == ShapeRest {
+		return r.list
 	}
 	if !(math.Abs(s.Peak) <= mostPeak) {
-		add("peak", diaphragm.CodeBounds, -1, "The peak must lie between -1,000,000 and 1,000,000 m or m/s.")
+		r.bounds("peak", "The peak must lie between -1,000,000 and 1,000,000 m or m/s.")
 	}
 	switch s.Kind {
 	case ShapePoint, ShapeBump, ShapePatch:
 		placed := true
 		if !(s.Radius >= 0 && s.Radius < 1) {
 			placed = false
-			add("radius", diaphragm.CodeBounds, -1, "The place is at "+short(s.Radius)+" ring radii from the centre; it must be from 0 to below 1.")
+			r.bounds("radius", say("The place is at # ring radii from the centre; it must be from 0 to below 1.", s.Radius))
 		}
 		if !(math.Abs(s.Angle) <= mostAngle) {
-			add("angle", diaphragm.CodeBounds, -1, "The angle of the place must lie between -1000 and 1000 rad.")
+			r.bounds("angle", "The angle of the place must lie between -1000 and 1000 rad.")
 		}
 		if !(s.Width >= leastWidth && s.Width <= 1) {
 			placed = false
-			add("width", diaphragm.CodeBounds, -1, "The width is "+short(s.Width)+" ring radii; it must be above 0 and at most 1.")
+			r.bounds("width", say("The width is # ring radii; it must be above 0 and at most 1.", s.Width))
 		}
 		if placed && s.Radius+s.Width > 1+1e-12 {
-			add("width", diaphragm.CodeConflict, -1, "The "+s.noun()+" reaches over the rim: its place at "+short(s.Radius)+
-				" and its width of "+short(s.Width)+" ring radii add up to more than 1.")
+			r.add("width", diaphragm.CodeConflict, -1, say("The # reaches over the rim: its place at # and its width of # ring radii add up to more than 1.", s.noun(), s.Radius, s.Width))
 		}
+	case ShapeHalf:
+		r.within("angle", "The direction of the loaded half", " rad", s.Angle, -mostAngle, mostAngle)
 	case ShapeFormula:
 		if _, err := Compile(s.Formula); err != nil {
 			offset := -1
@@ -71,28 +63,23 @@ func (s Shape) Check(prefix string) []diaphragm.Problem {
 			if errors.As(err, &refusal) {
 				offset = refusal.Offset
 			}
-			add("formula", CodeFormula, offset, err.Error())
+			r.add("formula", CodeFormula, offset, err.Error())
 		}
 	}
-	return problems
+	return r.list
 }
 
 // noun names the shape in a sentence.
-func (s Shape) noun() string {
-	switch s.Kind {
-	case ShapePoint:
+func (s *Shape) noun() string {
+	if s.Kind == ShapePoint {
 		return "pad"
-	case ShapePatch:
-		return "patch"
-	case ShapeBump:
-		return "bump"
 	}
-	return "shape"
+	return string(s.Kind)
 }
 
 // form returns the shape at unit peak on a ring of the given radius, m. The shape has passed Check; a formula
 // may still have no finite value somewhere on the sheet.
-func (s Shape) form(b *disc.Basis, prefix string, radius float64) (form, []diaphragm.Problem) {
+func (s *Shape) form(b *disc.Basis, prefix string, radius float64) (form, []diaphragm.Problem) {
 	// A sum of radius and width that rounds above one is taken as one.
 	width := math.Min(s.Width, 1-s.Radius)
 	at := func(p profile) form { return local{place{s.Radius, s.Angle}, p} }
@@ -117,23 +104,23 @@ func (s Shape) form(b *disc.Basis, prefix string, radius float64) (form, []diaph
 		formula.length = radius
 		form, message := newSampled(formula, b)
 		if message != "" {
-			return nil, []diaphragm.Problem{{Field: prefix + "formula", Code: CodeFormula, Message: message, Offset: -1}}
+			return nil, refusal(prefix+"formula", CodeFormula, -1, message)
 		}
 		if math.Abs(s.Peak)*form.largest > mostPeak {
-			return nil, []diaphragm.Problem{{Field: prefix + "peak", Code: diaphragm.CodeBounds, Offset: -1,
-				Message: "The peak times the formula reaches " + short(math.Abs(s.Peak)*form.largest) + "; at most 1,000,000 m or m/s are computed."}}
+			return nil, refusal(prefix+"peak", diaphragm.CodeBounds, -1,
+				say("The peak times the formula reaches #; at most 1,000,000 m or m/s are computed.", math.Abs(s.Peak)*form.largest))
 		}
 		return form, nil
 	}
 	if s.Kind == ShapeMeasured {
-		list, problem := s.readMeasured(prefix, radius)
-		if problem != nil {
-			return nil, []diaphragm.Problem{*problem}
+		list, problems := s.readMeasured(prefix, radius)
+		if problems != nil {
+			return nil, problems
 		}
 		fit := fitMeasured(list)
 		form, message := newSampled(fit, b)
 		if message != "" {
-			return nil, []diaphragm.Problem{{Field: prefix + "table", Code: diaphragm.CodeConflict, Message: message, Offset: -1}}
+			return nil, refusal(prefix+"table", diaphragm.CodeConflict, -1, message)
 		}
 		form.fit = fit
 		fit.largest = form.largest

@@ -2,9 +2,6 @@ package response
 
 import (
 	"math"
-	"slices"
-	"strconv"
-	"strings"
 
 	"hoopsheet/core/diaphragm"
 )
@@ -36,11 +33,6 @@ const (
 	// SourceShake accelerates the ring along its axis, m/s^2.
 	SourceShake SourceKind = "shake"
 )
-
-// SourceKinds lists every kind in the order in which it is offered.
-func SourceKinds() []SourceKind {
-	return []SourceKind{SourceDisplacement, SourceVelocity, SourceImpulse, SourceBlow, SourceBody, SourcePressure, SourceFront, SourceRelease, SourceShake}
-}
 
 // Source is one thing that sets the sheet moving. What its kind does not name is
 // not read.
@@ -76,60 +68,95 @@ const (
 	mostForce   = 1e9
 )
 
-// uses says which parts of a source its kind reads.
-type uses struct{ shape, pulse, contact bool }
+// Which parts of a source its kind reads.
+const (
+	usesShape = 1 << iota
+	usesPulse
+	usesContact
+)
 
-var usesOf = map[SourceKind]uses{
-	SourceDisplacement: {shape: true}, SourceVelocity: {shape: true}, SourceImpulse: {shape: true},
-	SourceBlow: {shape: true, contact: true}, SourceBody: {shape: true, contact: true},
-	SourcePressure: {shape: true, pulse: true}, SourceFront: {pulse: true}, SourceRelease: {shape: true}, SourceShake: {pulse: true},
+// sourceTable has what depends on the kind alone, in the order of SourceKinds.
+var sourceTable = [...]struct {
+	kind SourceKind
+	way  way
+	uses int
+	note string
+}{
+	{SourceDisplacement, wayDisplacement, usesShape, ""},
+	{SourceVelocity, wayVelocity, usesShape, "The fluid is taken to move along with the sheet."},
+	{SourceImpulse, wayImpulse, usesShape, blowNote},
+	{SourceBlow, wayImpulse, usesShape | usesContact, blowNote},
+	{SourceBody, wayImpulse, usesShape | usesContact, "The body meets the mass of the sheet, and of the fluid with it, that the modes used let move under its contact at once."},
+	{SourcePressure, wayPressure, usesShape | usesPulse, ""},
+	{SourceFront, wayPressure, usesPulse, ""},
+	{SourceRelease, wayRelease, usesShape, ""},
+	{SourceShake, wayPressure, usesPulse, "Displacements are seen from the ring. Wall and fluid are carried along with it, so that only the inertia of the sheet is left."},
+}
+
+const blowNote = "The blow is over before anything has moved; it sets sheet and fluid moving."
+
+// place of the kind in the table; -1 if there is none.
+func (s *Source) place() int {
+	for i := range sourceTable {
+		if sourceTable[i].kind == s.Kind {
+			return i
+		}
+	}
+	return -1
+}
+
+func (s *Source) way() way { return sourceTable[s.place()].way }
+
+// SourceKinds lists every kind in the order in which it is offered.
+func SourceKinds() []SourceKind {
+	list := make([]SourceKind, len(sourceTable))
+	for i := range list {
+		list[i] = sourceTable[i].kind
+	}
+	return list
 }
 
 // Check lists what is wrong with a source; prefix is put before the names of its
 // fields, such as "sources.0.".
 func (s *Source) Check(prefix string) []diaphragm.Problem {
-	var problems []diaphragm.Problem
-	within := func(field, name string, value, least, most float64, unit string) {
-		if !(value >= least && value <= most) {
-			problems = append(problems, diaphragm.Problem{Field: prefix + field, Code: diaphragm.CodeBounds, Offset: -1,
-				Message: name + " is " + short(value) + unit + "; it must be from " + short(least) + " to " + short(most) + unit + "."})
-		}
+	r := refusals{prefix: prefix}
+	var names []string
+	for i := range sourceTable {
+		names = append(names, string(sourceTable[i].kind))
 	}
-	use, known := usesOf[s.Kind]
-	if !known {
-		return []diaphragm.Problem{{Field: prefix + "kind", Code: diaphragm.CodeChoice, Offset: -1,
-			Message: "There is no source named " + quoted(string(s.Kind)) + "; the sources are " + listed(SourceKinds()) + "."}}
+	if !r.choice("kind", "source", string(s.Kind), names) {
+		return r.list
 	}
-	within("at", "The time of the source", s.At, 0, mostTime, " s")
-	if use.shape {
-		problems = append(problems, s.Shape.Check(prefix+"shape.")...)
+	uses := sourceTable[s.place()].uses
+	r.within("at", "The time of the source", " s", s.At, 0, mostTime)
+	if uses&usesShape != 0 {
+		r.list = append(r.list, s.Shape.Check(prefix+"shape.")...)
 	}
-	if use.contact && s.Shape.Kind != ShapePatch && s.Shape.Kind != ShapeBump {
-		problems = append(problems, diaphragm.Problem{Field: prefix + "shape.kind", Code: diaphragm.CodeChoice, Offset: -1,
-			Message: "A contact is a patch or a bump, not " + quoted(string(s.Shape.Kind)) + "."})
+	if uses&usesContact != 0 && s.Shape.Kind != ShapePatch && s.Shape.Kind != ShapeBump {
+		r.add("shape.kind", diaphragm.CodeChoice, -1, "A contact is a patch or a bump.")
 	}
 	switch s.Kind {
 	case SourceBlow:
-		within("momentum", "The momentum", s.Momentum, -mostForce, mostForce, " N s")
+		r.within("momentum", "The momentum", " N s", s.Momentum, -mostForce, mostForce)
 	case SourceBody:
-		within("mass", "The mass of the body", s.Mass, 1e-12, 1e6, " kg")
-		within("speed", "The speed of the body", s.Speed, -1e4, 1e4, " m/s")
+		r.within("mass", "The mass of the body", " kg", s.Mass, 1e-12, 1e6)
+		r.within("speed", "The speed of the body", " m/s", s.Speed, -1e4, 1e4)
 		if !s.Stays {
-			within("restitution", "The restitution", s.Restitution, 0, 1, "")
+			r.within("restitution", "The restitution", "", s.Restitution, 0, 1)
 		}
 	case SourceFront:
-		within("frontSpeed", "The speed of the front", s.FrontSpeed, 1e-6, 1e6, " m/s")
-		within("frontDirection", "The direction of the front", s.FrontDirection, -mostAngle, mostAngle, " rad")
-		within("shape.peak", "The pressure behind the front", s.Shape.Peak, -mostForce, mostForce, " Pa")
+		r.within("frontSpeed", "The speed of the front", " m/s", s.FrontSpeed, 1e-6, 1e6)
+		r.within("frontDirection", "The direction of the front", " rad", s.FrontDirection, -mostAngle, mostAngle)
+		r.within("shape.peak", "The pressure behind the front", " Pa", s.Shape.Peak, -mostForce, mostForce)
 	}
-	if use.pulse {
-		problems = append(problems, s.pulse().check(prefix+"pulse.")...)
-		if kind := s.pulse().Kind; s.Kind == SourceFront && kind != PulseStep && kind != PulseRectangle && kind != PulseDecay {
-			problems = append(problems, diaphragm.Problem{Field: prefix + "pulse.kind", Code: diaphragm.CodeChoice, Offset: -1,
-				Message: "Behind a travelling front the pressure stays (step), lasts for a time (rectangle) or decays (decay)."})
+	if uses&usesPulse != 0 {
+		p := s.pulse()
+		r.list = append(r.list, p.check(prefix+"pulse.")...)
+		if s.Kind == SourceFront && p.Kind != PulseStep && p.Kind != PulseRectangle && p.Kind != PulseDecay {
+			r.add("pulse.kind", diaphragm.CodeChoice, -1, "Behind a travelling front the pressure stays (step), lasts for a time (rectangle) or decays (decay).")
 		}
 	}
-	return problems
+	return r.list
 }
 
 // pulse of the source; a step where none is given.
@@ -140,20 +167,11 @@ func (s *Source) pulse() *Pulse {
 	return s.Pulse
 }
 
-// listed writes the words of a choice.
-func listed[T ~string](words []T) string {
-	texts := make([]string, len(words))
-	for i, w := range words {
-		texts[i] = string(w)
-	}
-	return strings.Join(texts, ", ")
-}
-
 // sources lists everything that sets the sheet of a case moving, with the names
 // of their fields.
-func (c *Case) sources() (list []Source, prefixes []string) {
+func (c *Case) sources() (list []*given) {
 	add := func(s Source, prefix string) {
-		list, prefixes = append(list, s), append(prefixes, prefix)
+		list = append(list, &given{Source: s, prefix: prefix, way: s.way(), at: s.At / c.unit()})
 	}
 	if c.Displacement.Kind != ShapeRest && c.Displacement.Kind != "" {
 		add(Source{Kind: SourceDisplacement, Shape: c.Displacement}, "displacement.")
@@ -166,29 +184,30 @@ func (c *Case) sources() (list []Source, prefixes []string) {
 		add(Source{Kind: kind, Shape: c.Velocity}, "velocity.")
 	}
 	for i, s := range c.Sources {
-		add(s, "sources."+strconv.Itoa(i)+".shape.")
+		add(s, say("sources.#.shape.", i))
 	}
-	return list, prefixes
+	return list
 }
 
 // checkSources lists what is wrong with the sources of a case.
-func (c *Case) checkSources() []diaphragm.Problem {
-	var problems []diaphragm.Problem
+func (c *Case) checkSources(r *refusals) {
 	if len(c.Sources) > MostSources {
-		return []diaphragm.Problem{{Field: "sources", Code: diaphragm.CodeBounds, Offset: -1,
-			Message: strconv.Itoa(len(c.Sources)) + " sources are given; at most " + strconv.Itoa(MostSources) + " are computed."}}
+		r.bounds("sources", say("# sources are given; at most # are computed.", len(c.Sources), MostSources))
+		return
 	}
 	for i := range c.Sources {
-		problems = append(problems, c.Sources[i].Check("sources."+strconv.Itoa(i)+".")...)
+		r.list = append(r.list, c.Sources[i].Check(say("sources.#.", i))...)
 	}
-	return problems
 }
 
 // later tells whether anything acts after the start.
 func (c *Case) later() bool {
-	return slices.ContainsFunc(c.Sources, func(s Source) bool {
-		return s.At > 0 || usesOf[s.Kind].pulse
-	})
+	for i := range c.Sources {
+		if s := &c.Sources[i]; s.At > 0 || sourceTable[s.place()].uses&usesPulse != 0 {
+			return true
+		}
+	}
+	return false
 }
 
 var infinity = math.Inf(1)
