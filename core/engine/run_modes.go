@@ -67,7 +67,7 @@ func runModes(_ context.Context, request *ModesRequest) (*ModesResult, error) {
 			result.Assumptions = append(result.Assumptions, "The list ends where modes beyond "+strconv.Itoa(coupledDiameters)+
 				" nodal diameters or "+strconv.Itoa(coupledCircles)+" circles could be missing.")
 		}
-		result.Cautions = unevenCautions(uneven, coupled)
+		result.Cautions = unevenCautions(coupled, result.Modes)
 	default:
 		list, notes, err := solveLowest(real, effects, request.Count)
 		if err != nil {

@@ -233,21 +233,19 @@ func unevenWords(doc *diaphragm.Diaphragm, uneven modes.Uneven) []string {
 }
 
 // unevenCautions warns where a limit of what is computed is near.
-func unevenCautions(uneven modes.Uneven, coupled *modes.Coupled) []string {
+func unevenCautions(coupled *modes.Coupled, lines []Mode) []string {
 	var list []string
 	if low := coupled.Smallest.Value; low < nearWrinkling {
 		list = append(list, "The sheet is close to wrinkling: its smallest tension is "+quantity.FormatNumber(100*low, 2)+" % of the mean.")
 	}
 	mixed := 0
-	for i := range coupled.Modes {
-		if coupled.Modes[i].Share < 0.5 {
+	for i := range lines {
+		if lines[i].Share < 0.5 {
 			mixed++
 		}
 	}
-	if mixed > 0 && mixed < len(coupled.Modes)/2 {
-		list = append(list, strconv.Itoa(mixed)+" of the modes are mixed so much that (m, n) is a label only.")
-	} else if mixed > 0 {
-		list = append(list, "Most modes are mixed so much that (m, n) is a label only.")
+	if mixed > 0 {
+		list = append(list, "Modes mixed so much that (m, n) is a label only: "+strconv.Itoa(mixed)+" of "+strconv.Itoa(len(lines))+".")
 	}
 	return list
 }
