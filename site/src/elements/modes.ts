@@ -217,7 +217,7 @@ function degrees(angle: number): string {
 }
 
 function taut(t: Tautness): string {
-  return `${figure(t.tension, 3)} N/m (${percent(t.share, 3)} of the mean) at ${figure(t.radius, 2)} of the radius, ${degrees(t.angle)}, pulling along ${degrees(t.direction)}`;
+  return `${figure(t.tension, 3)} N/m (${percent(t.share, 3)} of the mean) ${t.radius < 0.005 ? 'in the middle' : `at ${figure(t.radius, 2)} of the radius, ${degrees(t.angle)}`}, pulling along ${degrees(t.direction)}`;
 }
 
 function nearest(mode: Mode): TemplateResult {
