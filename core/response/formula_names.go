@@ -4,66 +4,93 @@ import "math"
 
 // function is a function that a formula may call.
 type function struct {
-	op opcode
+	name string
+	op   opcode
 	// values it takes; most < 0 for any number from least.
 	least, most int
 }
 
-var functions = map[string]function{
-	"sin":   {opSin, 1, 1},
-	"cos":   {opCos, 1, 1},
-	"tan":   {opTan, 1, 1},
-	"asin":  {opAsin, 1, 1},
-	"acos":  {opAcos, 1, 1},
-	"atan":  {opAtan, 1, 1},
-	"atan2": {opAtan2, 2, 2},
-	"sqrt":  {opSqrt, 1, 1},
-	"exp":   {opExp, 1, 1},
-	"ln":    {opLn, 1, 1},
-	"log10": {opLog10, 1, 1},
-	"abs":   {opAbs, 1, 1},
-	"min":   {opMin, 2, -1},
-	"max":   {opMax, 2, -1},
-	"sign":  {opSign, 1, 1},
-	"step":  {opStep, 1, 1},
-	"pow":   {opPower, 2, 2},
-	"hypot": {opHypot, 2, 2},
+// The names are in tables without keys, which need no code to set up.
+var functions = [...]function{
+	{"sin", opSin, 1, 1},
+	{"cos", opCos, 1, 1},
+	{"tan", opTan, 1, 1},
+	{"asin", opAsin, 1, 1},
+	{"acos", opAcos, 1, 1},
+	{"atan", opAtan, 1, 1},
+	{"atan2", opAtan2, 2, 2},
+	{"sqrt", opSqrt, 1, 1},
+	{"exp", opExp, 1, 1},
+	{"ln", opLn, 1, 1},
+	{"log10", opLog10, 1, 1},
+	{"abs", opAbs, 1, 1},
+	{"min", opMin, 2, -1},
+	{"max", opMax, 2, -1},
+	{"sign", opSign, 1, 1},
+	{"step", opStep, 1, 1},
+	{"pow", opPower, 2, 2},
+	{"hypot", opHypot, 2, 2},
 }
 
-var variables = map[string]opcode{
-	"r":     opR,
-	"theta": opTheta,
-	"θ":     opTheta,
-	"x":     opX,
-	"y":     opY,
-	"rho":   opRho,
-	"X":     opLongX,
-	"Y":     opLongY,
+// value is a variable, or a constant with its number.
+type value struct {
+	name   string
+	op     opcode
+	number float64
 }
 
-var constants = map[string]float64{
-	"pi": math.Pi,
-	"π":  math.Pi,
-	"e":  math.E,
+var values = [...]value{
+	{"r", opR, 0},
+	{"theta", opTheta, 0},
+	{"θ", opTheta, 0},
+	{"x", opX, 0},
+	{"y", opY, 0},
+	{"rho", opRho, 0},
+	{"X", opLongX, 0},
+	{"Y", opLongY, 0},
+	{"pi", opNumber, math.Pi},
+	{"π", opNumber, math.Pi},
+	{"e", opNumber, math.E},
 }
 
 // otherNames are names that people may expect, with what to write instead.
-var otherNames = map[string]string{
-	"log":    "There is no function named \"log\", which is read in two ways; use ln for the natural logarithm or log10.",
-	"lg":     "There is no function named \"lg\"; use log10.",
-	"arcsin": "There is no function named \"arcsin\"; use asin.",
-	"arccos": "There is no function named \"arccos\"; use acos.",
-	"arctan": "There is no function named \"arctan\"; use atan or atan2.",
-	"phi":    "There is no \"phi\" in a formula; the angle is named theta.",
-	"φ":      "There is no \"φ\" in a formula; the angle is named theta.",
-	"t":      "There is no \"t\" in a formula: it gives the shape at the start, which has no time in it.",
-	"a":      "There is no \"a\" in a formula: r, x and y are in units of the ring radius already, and rho, X and Y in metres.",
+var otherNames = [...][2]string{
+	{"log", "There is no function named \"log\", which is read in two ways; use ln for the natural logarithm or log10."},
+	{"lg", "There is no function named \"lg\"; use log10."},
+	{"arcsin", "There is no function named \"arcsin\"; use asin."},
+	{"arccos", "There is no function named \"arccos\"; use acos."},
+	{"arctan", "There is no function named \"arctan\"; use atan or atan2."},
+	{"phi", "There is no \"phi\" in a formula; the angle is named theta."},
+	{"φ", "There is no \"φ\" in a formula; the angle is named theta."},
+	{"t", "There is no \"t\" in a formula: it gives the shape at the start, which has no time in it."},
+	{"a", "There is no \"a\" in a formula: r, x and y are in units of the ring radius already, and rho, X and Y in metres."},
+}
+
+// functionNamed and valueNamed return nil where there is none.
+func functionNamed(name string) *function {
+	for i := range functions {
+		if functions[i].name == name {
+			return &functions[i]
+		}
+	}
+	return nil
+}
+
+func valueNamed(name string) *value {
+	for i := range values {
+		if values[i].name == name {
+			return &values[i]
+		}
+	}
+	return nil
 }
 
 // unknownName is the sentence for a name that is not known.
 func unknownName(name string, called bool) string {
-	if text, ok := otherNames[name]; ok {
-		return text
+	for i := range otherNames {
+		if otherNames[i][0] == name {
+			return otherNames[i][1]
+		}
 	}
 	kind := "There is nothing named "
 	if called {
@@ -97,15 +124,12 @@ func nearestName(name string, called bool) string {
 			limit, best = d, candidate
 		}
 	}
-	for candidate := range functions {
-		consider(candidate)
+	for i := range functions {
+		consider(functions[i].name)
 	}
 	if !called {
-		for candidate := range variables {
-			consider(candidate)
-		}
-		for candidate := range constants {
-			consider(candidate)
+		for i := range values {
+			consider(values[i].name)
 		}
 	}
 	return best

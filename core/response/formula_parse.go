@@ -162,22 +162,22 @@ func (p *parser) value() {
 // name reads a variable, a constant or a call; the name itself has been taken.
 func (p *parser) name(t token) {
 	called := p.token.is("(")
-	if op, ok := variables[t.text]; ok {
-		p.push(instruction{op: op})
+	if v := valueNamed(t.text); v != nil {
+		if v.op == opNumber {
+			p.number(v.number)
+		} else {
+			p.push(instruction{op: v.op})
+		}
 		return
 	}
-	if value, ok := constants[t.text]; ok {
-		p.number(value)
-		return
-	}
-	f, ok := functions[t.text]
+	f := functionNamed(t.text)
 	switch {
-	case !ok:
+	case f == nil:
 		p.fail(t.at, unknownName(t.text, called))
 	case !called:
-		p.fail(t.at, t.text+" is a function; write its value in brackets, as in "+t.text+"("+exampleValues(f)+").")
+		p.fail(t.at, t.text+" is a function; write its value in brackets, as in "+t.text+"("+exampleValues(*f)+").")
 	default:
-		p.call(t, f)
+		p.call(t, *f)
 	}
 }
 
