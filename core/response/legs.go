@@ -36,6 +36,17 @@ func (l *leg) quiet() bool {
 	return true
 }
 
+// around is where a mode would rest under the steady loads of a quiet leg.
+func (l *leg) around(k *modal) float64 {
+	sum := 0.0
+	for n := range l.loads {
+		if load := &l.loads[n]; len(load.poly) > 0 {
+			sum += k.gains[load.source] * load.poly[0] / (k.omega * k.omega)
+		}
+	}
+	return sum
+}
+
 // value returns the load on mode i at the time t of its leg, for a gain of one.
 func (l *load) value(i int, t float64) float64 {
 	poly := l.poly

@@ -27,6 +27,9 @@ type stage struct {
 	basis *disc.Basis
 	modes []modal // those that move: order by order, cosine before sine
 	legs  []leg   // the first begins with the stage
+	// first marks the modes that are the cosine of a pair, of which the sine
+	// follows; made by pair.
+	first []bool
 }
 
 // modal is one mode and its coordinate q,
@@ -92,7 +95,7 @@ func (mo *motion) keep() {
 				}
 			}
 		}
-		s.modes = kept
+		s.modes, s.first = kept, nil
 	}
 	// Coefficients stand order by order, so those of a basis with fewer orders
 	// are the first ones of this.
@@ -157,20 +160,32 @@ func (mo *motion) values(coef []float64, t float64, k int) {
 func (s *stage) fill(coef, q []float64) {
 	clear(coef)
 	// A pair shares its row, and orders their place: cosine and sine together.
+	if len(s.first) != len(s.modes) {
+		s.pair()
+	}
 	for i := 0; i < len(s.modes); i++ {
 		k := &s.modes[i]
-		if k.only(disc.Cos) && i+1 < len(s.modes) && s.modes[i+1].pairs(k) {
+		if s.first[i] {
 			addPair(coef[s.basis.Index(k.shape[0].m, 1, disc.Cos):], k.shape[0].row, q[i], q[i+1])
 			i++
 			continue
 		}
-		for _, b := range k.shape {
+		for n := range k.shape {
+			b := &k.shape[n]
 			if b.row == nil {
 				coef[s.basis.Index(b.m, b.n, b.part)] += q[i]
 				continue
 			}
 			addRow(coef[s.basis.Index(b.m, 1, b.part):], b.row, q[i])
 		}
+	}
+}
+
+// pair finds the pairs.
+func (s *stage) pair() {
+	s.first = make([]bool, len(s.modes))
+	for i := range s.modes[:max(0, len(s.modes)-1)] {
+		s.first[i] = s.modes[i].only(disc.Cos) && s.modes[i+1].pairs(&s.modes[i])
 	}
 }
 
@@ -396,5 +411,5 @@ func (k *modal) energy(l int) float64 {
 	return k.norm * (q*q + v*v)
 }
 
-// same tells whether two modes are those of one pair that has not split.
-func (k *modal) same(l *modal) bool { return k.m == l.m && k.n == l.n && k.omega == l.omega }
+// same tells whether two modes swing alike, as those of a pair that has not split.
+func (k *modal) same(l *modal) bool { return k.omega == l.omega && k.zeta == l.zeta && k.m == l.m }

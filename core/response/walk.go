@@ -28,9 +28,9 @@ type walk struct {
 	// Of a quiet leg: the fundamental solutions, and about what they swing.
 	steppers     []stepper
 	c, s, around []float64
-	// q by modes, and the coefficients, which a bare walk leaves.
+	twin         []bool // swings like the one before
+	// q by modes, and the coefficients.
 	q, coef []float64
-	bare    bool
 }
 
 // newWalk begins at t = 0.
@@ -48,8 +48,12 @@ func (w *walk) next() {
 	t := w.time()
 	s := w.stage
 	if w.quiet && w.mo.stage(t) == s && s.legAt(t) == w.leg {
-		for i, a := range w.steppers {
-			w.c[i], w.s[i] = a.next(w.c[i], w.s[i])
+		for i := range w.steppers {
+			if w.twin[i] {
+				w.c[i], w.s[i] = w.c[i-1], w.s[i-1]
+				continue
+			}
+			w.c[i], w.s[i] = w.steppers[i].next(w.c[i], w.s[i])
 		}
 		w.sum()
 		return
@@ -66,8 +70,11 @@ func (w *walk) settle() {
 		lists := make([]float64, 4*n)
 		w.c, w.s, w.around, w.q = lists[:n], lists[n:2*n], lists[2*n:3*n], lists[3*n:]
 		w.steppers = make([]stepper, n)
+		w.twin = make([]bool, n)
 		for i := range w.steppers {
-			w.steppers[i] = newStepper(s.modes[i].omega, s.modes[i].zeta, w.step)
+			if w.twin[i] = i > 0 && s.modes[i].same(&s.modes[i-1]); !w.twin[i] {
+				w.steppers[i] = newStepper(s.modes[i].omega, s.modes[i].zeta, w.step)
+			}
 		}
 	}
 	w.leg = w.stage.legAt(t)
@@ -77,18 +84,13 @@ func (w *walk) settle() {
 		for i := range w.q {
 			w.q[i], _, _ = w.stage.within(i, w.leg, t-leg.from)
 		}
-		w.fill()
+		w.stage.fill(w.coef, w.q)
 		return
 	}
 	for i := range w.q {
 		k := &w.stage.modes[i]
 		w.c[i], w.s[i] = fundamental(k.omega, k.zeta, t-leg.from)
-		w.around[i] = 0
-		for n := range leg.loads {
-			if load := &leg.loads[n]; len(load.poly) > 0 {
-				w.around[i] += k.gains[load.source] * load.poly[0] / (k.omega * k.omega)
-			}
-		}
+		w.around[i] = leg.around(k)
 	}
 	w.sum()
 }
@@ -100,11 +102,5 @@ func (w *walk) sum() {
 		st, x := &k.states[w.leg], w.around[i]
 		w.q[i] = x + w.c[i]*(st.q-x) + w.s[i]/k.omega*st.v
 	}
-	w.fill()
-}
-
-func (w *walk) fill() {
-	if !w.bare {
-		w.stage.fill(w.coef, w.q)
-	}
+	w.stage.fill(w.coef, w.q)
 }
