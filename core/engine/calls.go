@@ -12,6 +12,7 @@ func calls() []call {
 		define("edit", "Changes fields of a diaphragm by what was typed, and gives the rows of its form.", runEdit),
 		define("modes", "Lists the modes of the diaphragm as it stands, with damping and the distance to the lines to keep clear of.", runModes),
 		define("costs", "Says what each effect does to one mode, and what its frequency is most sensitive to.", runCosts),
+		define("compare", "Holds a diaphragm against another: what differs in its modes and in its specification.", runCompare),
 		define("shape", "Draws one mode: raster, section, nodal lines and lobes.", runShape),
 		define("respond", "Computes the motion after initial values: frames, histories, largest travel, missed energy.", runRespond),
 		define("peaks", "Reads a WAV recording and finds its ringing lines.", runPeaks),

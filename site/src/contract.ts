@@ -227,6 +227,75 @@ export interface ChosenPeak {
   n: number;
 }
 /**
+ * CompareRequest asks for two diaphragms side by side.
+ */
+export interface CompareRequest {
+  /**
+   * Document as it is now, and Other what it is held against.
+   */
+  document: Diaphragm;
+  other: Diaphragm;
+  /**
+   * Count of modes to compare, the lowest of Document first; 1 to 200.
+   */
+  count: number;
+}
+/**
+ * CompareResult is what differs.
+ */
+export interface CompareResult {
+  modes: ComparedMode[];
+  /**
+   * Lines of the specification that differ, in page order.
+   */
+  lines: ComparedLine[];
+  /**
+   * Changed counts the modes whose verdict on the lines to keep clear of differs.
+   */
+  changed: number;
+}
+/**
+ * ComparedLine is a line of the specification that differs; a text is empty where one of the two does not state it.
+ */
+export interface ComparedLine {
+  group: GroupName;
+  name: string;
+  now: string;
+  other: string;
+  unit: string;
+}
+/**
+ * ComparedMode is one mode of both.
+ */
+export interface ComparedMode {
+  m: number;
+  n: number;
+  /**
+   * Upper marks the higher of a split pair.
+   */
+  upper: boolean;
+  /**
+   * Frequency now and Other's, Hz; Other is 0 where it has no such mode among its lowest.
+   */
+  frequency: number;
+  other: number;
+  /**
+   * Relative is (now - other)/other.
+   */
+  relative: number;
+  /**
+   * RingDown to -60 dB, s, of both.
+   */
+  ringDown: number;
+  otherRingDown: number;
+  /**
+   * Verdict on the lines to keep clear of, in words, of both; Differs is true where it is another one.
+   */
+  verdict: string;
+  otherVerdict: string;
+  differs: boolean;
+}
+/**
  * CostStep is one more effect taken into account.
  */
 export interface CostStep {
@@ -2053,6 +2122,8 @@ export interface CallMap {
   "modes": { request: ModesRequest; result: ModesResult };
   /** Says what each effect does to one mode, and what its frequency is most sensitive to. */
   "costs": { request: CostsRequest; result: CostsResult };
+  /** Holds a diaphragm against another: what differs in its modes and in its specification. */
+  "compare": { request: CompareRequest; result: CompareResult };
   /** Draws one mode: raster, section, nodal lines and lobes. */
   "shape": { request: ShapeRequest; result: ShapeResult };
   /** Computes the motion after initial values: frames, histories, largest travel, missed energy. */

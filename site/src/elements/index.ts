@@ -1,5 +1,6 @@
 // Every custom element, each defined by the module that holds it.
 import './bar.js';
+import './compare.js';
 import './handover.js';
 import './modes.js';
 import './numbers.js';
