@@ -49,7 +49,7 @@ func drawMode(request *ShapeRequest) (*ShapeResult, error) {
 	var result *ShapeResult
 	switch {
 	case doc.Ring.HubRadius > 0:
-		result = drawShape(request, modes.NewHubShape(doc.Ring.HubRadius/doc.Ring.Radius, request.M, request.N, request.Orientation).Drawing())
+		result = drawShape(request, modes.DrawHub(doc.Ring.HubRadius/doc.Ring.Radius, request.M, request.N, request.Orientation))
 		result.Hub = doc.Ring.HubRadius / doc.Ring.Radius
 	case coupling:
 		coupled, _, _, err := solveCoupled(real, effects, uneven)

@@ -13,8 +13,8 @@ import (
 //	f_mn = x_mn/(2 pi a) sqrt(T/sigma),
 //	J_m(x) Y_m(q x) - J_m(q x) Y_m(x) = 0,
 //
-// T in N/m, sigma in kg/m^2. Zero holds x_mn, CircleRadii the nodal circles
-// between hub and rim, neither counted inside; N counts the rim and not the hub.
+// T in N/m, sigma in kg/m^2. Zero holds x_mn; N counts the rim and not the
+// hub. The nodal circles are those of HubShape.
 // Frequency equals Ideal. The roots are as good as bessel.ZeroAnnulus.
 //
 // As q goes to 0 the modes with m >= 1 reach those of the full sheet like
@@ -50,9 +50,8 @@ func Hub(a, q, T, sigma float64, count int) []Mode {
 			next = append(next, bessel.ZeroAnnulus(len(next), q, 1))
 			taken = append(taken, 0)
 		}
-		shape := newHubShape(q, m, taken[m], x, 0)
 		f := scale * x
-		list = append(list, Mode{M: m, N: taken[m], Zero: x, Ideal: f, Frequency: f, CircleRadii: shape.CircleRadii()})
+		list = append(list, Mode{M: m, N: taken[m], Zero: x, Ideal: f, Frequency: f})
 	}
 	return list
 }
@@ -83,8 +82,7 @@ func NewHubShape(q float64, m, n int, orientation float64) *HubShape {
 }
 
 func newHubShape(q float64, m, n int, x, orientation float64) *HubShape {
-	s := &HubShape{M: m, N: n, Hub: q, Zero: x, Orientation: orientation, scale: 1}
-	s.ratio = bessel.JInt(m, x*q) / bessel.Y(float64(m), x*q)
+	s := plainHubShape(q, m, n, x, orientation)
 	// The radial part has n-1 zeros between the edges, and one extreme in each
 	// of the n spans. Zeros lie no closer than pi/x for m >= 1, by Sturm's
 	// comparison of sqrt(r) times it with sin(x r), and little closer for m = 0:
@@ -109,6 +107,22 @@ func newHubShape(q float64, m, n int, x, orientation float64) *HubShape {
 	}
 	s.scale = 1 / largest
 	return s
+}
+
+// plainHubShape has neither its scale nor its circles yet.
+func plainHubShape(q float64, m, n int, x, orientation float64) *HubShape {
+	return &HubShape{M: m, N: n, Hub: q, Zero: x, Orientation: orientation, scale: 1, ratio: bessel.JInt(m, x*q) / bessel.Y(float64(m), x*q)}
+}
+
+// DrawHub prepares the drawing of mode (m, n) between hub and ring.
+func DrawHub(q float64, m, n int, orientation float64) *RealShape {
+	s := plainHubShape(q, m, n, bessel.ZeroAnnulus(m, q, n), orientation)
+	return newRealShape(m, orientation, func(r float64) float64 {
+		if r <= q || r >= 1 {
+			return 0
+		}
+		return s.radial(r)
+	})
 }
 
 // radial is the radial part times scale.

@@ -51,8 +51,8 @@ func TestHubOrderAndDomain(t *testing.T) {
 		if i > 0 && mode.Frequency < list[i-1].Frequency {
 			t.Errorf("mode %d is below the one before", i)
 		}
-		if len(mode.CircleRadii) != mode.N-1 {
-			t.Errorf("(%d,%d) has %d circles inside", mode.M, mode.N, len(mode.CircleRadii))
+		if circles := NewHubShape(0.3, mode.M, mode.N, 0).CircleRadii(); len(circles) != mode.N-1 {
+			t.Errorf("(%d,%d) has %d circles inside", mode.M, mode.N, len(circles))
 		}
 		count[[2]int{mode.M, mode.N}] = true
 	}
@@ -196,5 +196,22 @@ func TestHubShape(t *testing.T) {
 	laplace := (s.At(r+h, 0)-2*s.At(r, 0)+s.At(r-h, 0))/(h*h) + (s.At(r+h, 0)-s.At(r-h, 0))/(2*h*r) - s.At(r, 0)/(r*r)
 	if got, want := laplace, -s.Zero*s.Zero*s.At(r, 0); math.Abs(got-want) > 1e-3*math.Abs(s.Zero*s.Zero) {
 		t.Errorf("Laplacian %v, want %v", got, want)
+	}
+}
+
+// The drawing is the shape at its scale, to the steps of its table.
+func TestHubDrawing(t *testing.T) {
+	shape, drawing := NewHubShape(0.25, 2, 2, 0.3), DrawHub(0.25, 2, 2, 0.3)
+	line := make([]float32, 41)
+	drawing.Section(line, 0.3)
+	for i, got := range line {
+		r := math.Abs(float64(2*i-40) / 40)
+		if want := shape.At(r, 0.3); math.Abs(float64(got)-want) > 2e-4 {
+			t.Errorf("at %v: %v, want %v", r, got, want)
+		}
+	}
+	a, b := shape.CircleRadii(), drawing.CircleRadii()
+	if len(a) != 1 || len(b) != 1 || math.Abs(a[0]-b[0]) > 1e-5 {
+		t.Errorf("circles %v, drawn %v", a, b)
 	}
 }

@@ -25,16 +25,6 @@ func NewRealShape(mode *RealMode, orientation float64) *RealShape {
 	return newRealShape(mode.M, orientation, mode.Radial)
 }
 
-// Drawing prepares the drawing of the mode between hub and ring.
-func (s *HubShape) Drawing() *RealShape {
-	return newRealShape(s.M, s.Orientation, func(r float64) float64 {
-		if r <= s.Hub || r >= 1 {
-			return 0
-		}
-		return s.radial(r)
-	})
-}
-
 func newRealShape(m int, orientation float64, radial func(r float64) float64) *RealShape {
 	s := &RealShape{M: m, Orientation: orientation, radial: make([]float64, realShapeSteps+1)}
 	largest := 0.0
