@@ -22,7 +22,7 @@ func Demo(id, created string) Diaphragm {
 	doc.Faces = Faces{Upper: Face{Kind: FaceBaffled}, Lower: Face{Kind: FaceBaffled}}
 	doc.Surroundings.ServiceMin, doc.Surroundings.ServiceMax = 278.15, 308.15
 	doc.Avoid = Avoid{
-		Lowest: 20,
+		Lowest: 12,
 		Lines: []Line{
 			{Name: "mains hum", Frequency: 50, HalfWidth: 0.03},
 			{Name: "mains hum, doubled", Frequency: 100, HalfWidth: 0.03},

@@ -33,7 +33,7 @@ func runCompare(ctx context.Context, request *CompareRequest) (*CompareResult, e
 		if partner := sameMode(other.Modes, mode); partner != nil {
 			row.Other, row.OtherRingDown, row.OtherVerdict = partner.Frequency, partner.RingDown, verdictOf(partner)
 			row.Relative = mode.Frequency/partner.Frequency - 1
-			row.Differs = row.Verdict != row.OtherVerdict
+			row.Differs = clearanceOf(mode) != clearanceOf(partner)
 		}
 		if row.Differs {
 			result.Changed++
@@ -60,14 +60,22 @@ func sameMode(list []Mode, wanted *Mode) *Mode {
 
 // verdictOf says how a mode stands to the lines to keep clear of.
 func verdictOf(mode *Mode) string {
-	if mode.BelowLowest {
-		return "below the lowest allowed"
+	words := clearanceOf(mode)
+	if !mode.BelowLowest && words != "" {
+		words += ": " + mode.Distances[0].Line
 	}
-	if len(mode.Distances) == 0 {
+	return words
+}
+
+// clearanceOf is the same without the name of the line.
+func clearanceOf(mode *Mode) string {
+	switch {
+	case mode.BelowLowest:
+		return "below the lowest allowed"
+	case len(mode.Distances) == 0:
 		return ""
 	}
-	nearest := &mode.Distances[0]
-	return string(nearest.Clearance) + ": " + nearest.Line
+	return string(mode.Distances[0].Clearance)
 }
 
 // comparedLines lists the lines of two specifications that differ.
