@@ -162,7 +162,7 @@ func coupledLine(doc *diaphragm.Diaphragm, mode *modes.CoupledMode) Mode {
 	line.Upper, line.Error = mode.Upper, mode.Error
 	line.Ideal = idealFrequency(doc, mode.M, mode.N)
 	line.Even, line.Share = mode.Even, mode.Share
-	line.Damping.RadiationKnown = true
+	line.Damping.RadiationKnown = !mode.BeyondSound
 	line.NodalLines = coupledWords(mode)
 	return line
 }

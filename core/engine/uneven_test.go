@@ -202,3 +202,30 @@ func TestCoupledSensitivities(t *testing.T) {
 		t.Errorf("%d of 2 are listed: %+v", found, costs.Sensitivities)
 	}
 }
+
+// Where nothing is stated of the radiation of an even mode, nothing is of the
+// coupled one that goes on from it.
+func TestRadiationOfCoupledModes(t *testing.T) {
+	doc := unevenDocument()
+	doc.Tension.Nominal = 2e5 // sound waves as short as the ring is wide
+	both := map[bool]int{}
+	for _, without := range [][]Effect{nil, {EffectMasses, EffectUnevenness}} {
+		result, err := runModes(context.Background(), &ModesRequest{Document: doc, Count: 40, Without: without})
+		if err != nil {
+			t.Fatal(err)
+		}
+		known := 0
+		for _, mode := range result.Modes {
+			if mode.Damping.RadiationKnown {
+				known++
+			}
+		}
+		if known == 0 || known == len(result.Modes) {
+			t.Errorf("without %v: radiation of %d of %d is known", without, known, len(result.Modes))
+		}
+		both[without == nil] = known
+	}
+	if both[true] < both[false] {
+		t.Errorf("known of %d coupled modes, of %d even ones and pairs", both[true], both[false])
+	}
+}

@@ -29,6 +29,8 @@ type CoupledMode struct {
 	Share float64
 	// Damping, to first order: the losses of the even modes by their shares.
 	Damping Damping
+	// BeyondSound: the even mode is, so there is no figure for its radiation.
+	BeyondSound bool
 
 	shape *coupledShape
 }
@@ -217,6 +219,7 @@ func (s *unevenSystem) finish(r rawMode, order, n int, even *Solution) CoupledMo
 		antinode := s.axis + math.Atan2(sin, cos)/m
 		mode.NodalAngle = wrap(antinode+math.Pi/(2*m), math.Pi/m)
 	}
+	mode.BeyondSound = n < len(o.known) && o.known[n].BeyondSound
 	d := &mode.Damping
 	for i, p := range s.orders {
 		for k, e := range p.damping {
