@@ -158,45 +158,68 @@ func (f Field) Extremes() (smallest, largest Tautness) {
 	nr, nt := 8*highest+8, 16*highest
 	sample := func(r, theta float64, sign float64) Tautness {
 		rr, tt, rt := f.At(r, theta)
-		half := math.Hypot((rr-tt)/2, rt)
 		turn := math.Atan2(2*rt, rr-tt) / 2
 		if sign < 0 {
 			turn += math.Pi / 2
 		}
-		return Tautness{Value: (rr+tt)/2 + sign*half, Radius: r, Angle: theta, Direction: theta + turn}
+		return Tautness{Value: principal(rr, tt, rt, sign), Radius: r, Angle: theta, Direction: theta + turn}
 	}
-	find := func(sign float64) Tautness {
-		best := sample(0, 0, sign)
-		better := func(t Tautness) bool {
-			// A margin, so that a place is not chosen by rounding.
-			if sign*(t.Value-best.Value) > 1e-13*(1+math.Abs(best.Value)) {
-				best = t
-				return true
-			}
-			return false
+	best := [2]Tautness{sample(0, 0, -1), sample(0, 0, 1)}
+	// A margin, so that a place is not chosen by rounding.
+	better := func(side int, value float64) bool {
+		return float64(2*side-1)*(value-best[side].Value) > 1e-13*(1+math.Abs(best[side].Value))
+	}
+	cos, sin := zeros(nt*len(f)), zeros(nt*len(f)) // of each part, by angle
+	for j := range nt {
+		for i, p := range f {
+			sin[j*len(f)+i], cos[j*len(f)+i] = math.Sincos(float64(p.K) * (2*math.Pi*float64(j)/float64(nt) - p.Angle))
 		}
-		for i := nr; i >= 0; i-- {
-			for j := range nt {
-				better(sample(float64(i)/float64(nr), 2*math.Pi*float64(j)/float64(nt), sign))
+	}
+	power := zeros(len(f))
+	for i := nr; i >= 0; i-- {
+		r := float64(i) / float64(nr)
+		for k, p := range f {
+			power[k] = math.Pow(r, float64(p.Power))
+		}
+		for j := range nt {
+			rr, tt, rt := 1.0, 1.0, 0.0
+			for k, p := range f {
+				c, s := power[k]*cos[j*len(f)+k], power[k]*sin[j*len(f)+k]
+				rr += p.RR * c
+				tt += p.TT * c
+				rt += p.RT * s
+			}
+			for side := range 2 {
+				if sign := float64(2*side - 1); better(side, principal(rr, tt, rt, sign)) {
+					best[side] = sample(r, 2*math.Pi*float64(j)/float64(nt), sign)
+				}
 			}
 		}
+	}
+	for side := range best {
+		b := &best[side]
 		dr, dt := 1/float64(nr), 2*math.Pi/float64(nt)
 		for range 30 {
-			at := best
+			at := *b
 			moved := false
 			for _, step := range [4][2]float64{{dr, 0}, {-dr, 0}, {0, dt}, {0, -dt}} {
 				r := math.Min(1, math.Max(0, at.Radius+step[0]))
-				moved = better(sample(r, at.Angle+step[1], sign)) || moved
+				if t := sample(r, at.Angle+step[1], float64(2*side-1)); better(side, t.Value) {
+					*b, moved = t, true
+				}
 			}
 			if !moved {
 				dr, dt = dr/2, dt/2
 			}
 		}
-		best.Angle = wrap(best.Angle, 2*math.Pi)
-		best.Direction = wrap(best.Direction, math.Pi)
-		return best
+		b.Angle, b.Direction = wrap(b.Angle, 2*math.Pi), wrap(b.Direction, math.Pi)
 	}
-	return find(-1), find(1)
+	return best[0], best[1]
+}
+
+// principal is the smaller (sign -1) or larger principal value.
+func principal(rr, tt, rt, sign float64) float64 {
+	return (rr+tt)/2 + sign*math.Hypot((rr-tt)/2, rt)
 }
 
 // wrap returns x less whole turns, from 0 up to but not including turn.
