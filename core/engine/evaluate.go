@@ -35,6 +35,7 @@ var checkable = []quantityOf{
 	}},
 	{"added-mass-open", 2, func(a []float64) float64 { return addedMass(a, diaphragm.FaceOpen, diaphragm.FaceOpen) / 2 }},
 	{"kettle-number", 2, kettleNumber},
+	{"ellipse-number", 4, ellipseNumber},
 	{"air-density", 3, func(a []float64) float64 { return air.Density(a[0], a[1], a[2], air.CarbonDioxide) }},
 	{"sound-speed", 4, func(a []float64) float64 { return air.SoundSpeed(a[0], a[1], a[2], a[3]) }},
 	{"bulge-motion", 2, bulgeMotion},
@@ -115,6 +116,26 @@ func kettleNumber(a []float64) float64 {
 		return math.NaN()
 	}
 	return 2 * math.Pi * mode.Frequency / math.Sqrt(r.Tension)
+}
+
+// ellipseNumber is k times the longer semi-axis of mode (m, n) of an elliptic sheet of eccentricity a[0], a[3] being 1 for
+// the higher of a pair.
+func ellipseNumber(a []float64) float64 {
+	even, err := modes.Solve(modes.Real{Radius: 1, Tension: 1, ArealDensity: 1}, modes.Request{MaxM: coupledDiameters, MaxN: coupledCircles})
+	if err != nil {
+		return math.NaN()
+	}
+	ratio := math.Sqrt(1 - a[0]*a[0]) // of the semi-axes
+	half := (1 - ratio) / (1 + ratio)
+	coupled, err := modes.SolveCoupled(even, modes.Uneven{Oval: modes.Oval{Half: half}})
+	if err != nil {
+		return math.NaN()
+	}
+	mode, err := coupledModeNamed(coupled, int(a[1]), int(a[2]), a[3] == 1)
+	if err != nil {
+		return math.NaN()
+	}
+	return 2 * math.Pi * mode.Frequency * (1 + half)
 }
 
 // bulgeMotion is the displacement at radius r and time t of the sheet of unit
