@@ -6,6 +6,7 @@ import type { GroupName, Row } from '../contract.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
 import { derivedTable } from './derived.js';
+import './faces.js';
 import './field.js';
 import { cautions } from './notes.js';
 import { sharedStyle } from './style.js';
@@ -70,7 +71,7 @@ export class HoopSpecify extends LitElement {
     const listed = (group.lists ?? []).map((l) => ({ ...l, rows: rows.filter((r) => r.field.startsWith(`${l.path}.`)) }));
     const single = rows.filter((r) => !listed.some((l) => l.rows.includes(r)));
     const used = listed.some((l) => l.rows.length > 0 || l.path === this.removed?.path) || session.problems.some((p) => rows.some((r) => r.field === p.field));
-    const body = html`${single.map((r) => field(r))}
+    const body = html`${group.name === 'faces' ? html`<hoop-faces></hoop-faces>` : nothing}${single.map((r) => field(r))}
       ${listed.map((l) => this.list(l.path, l.one, l.rows))}
       ${derivedTable(session.derived.filter((d) => d.group === group.name))}`;
     return html`<section class="panel" aria-labelledby="g-${group.name}">
