@@ -237,3 +237,18 @@ test('a hub gives the modes of the annulus and says what is left out', async () 
   assert.deepEqual(applies, []);
   await text(page.locator('.caution').first(), /only the ideal sheet between hub and ring is computed. Left out: bending stiffness, the fluid/);
 });
+
+test('the list shows only what is asked for, and copies that', async () => {
+  await open();
+  const all = await rows().count();
+  await page.locator('#filter').selectOption('2');
+  await until(async () => (await rows().count()) < all, 'fewer modes');
+  for (const words of await rows().allInnerTexts()) {
+    assert.match(words, /^\(2, /);
+  }
+  await text(page.locator('#filtered'), /are shown/);
+  await page.locator('#filter').selectOption('close');
+  await until(async () => (await rows().allInnerTexts()).every((words) => /near|hit|below the lowest/.test(words)), 'those close to a line');
+  await page.locator('#filter').selectOption('all');
+  await until(async () => (await rows().count()) === all, 'all of them');
+});

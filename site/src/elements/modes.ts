@@ -51,6 +51,8 @@ export class HoopModes extends LitElement {
   @state() private count = 24;
   @state() private without: readonly Effect[] = [];
   @state() private sort: 'frequency' | 'order' | 'ring-down' = 'frequency';
+  /** What is listed: all, what is near or hits a line, or the modes of one number of nodal diameters. */
+  @state() private filter = 'all';
   private asked: unknown = null;
 
   constructor() {
@@ -169,14 +171,30 @@ export class HoopModes extends LitElement {
     }
   }
 
+  private shown(modes: readonly Mode[]): readonly Mode[] {
+    switch (this.filter) {
+      case 'all':
+        return modes;
+      case 'close':
+        return modes.filter((mode) => mode.belowLowest || (mode.distances[0] !== undefined && mode.distances[0].clearance !== 'clear'));
+      default:
+        return modes.filter((mode) => mode.m === Number(this.filter));
+    }
+  }
+
   private table(result: ModesResult): TemplateResult {
-    const table = shownTable(result.modes);
+    const listed = this.sorted(this.shown(result.modes));
+    const table = shownTable(listed);
+    const diameters = [...new Set(result.modes.map((mode) => mode.m))].sort((a, b) => a - b);
     return html`<section class="panel" aria-labelledby="modes-title">
       <h2 id="modes-title">The lowest ${result.modes.length} modes</h2>
       <div class="count">
         <label>Modes to list <select @change=${this.setCount}>${counts.map((c) => html`<option ?selected=${c === this.count}>${c}</option>`)}</select></label>
         <label>sorted by <select id="sort" @change=${(e: Event) => { this.sort = (e.target as HTMLSelectElement).value as typeof this.sort; }}>
           <option value="frequency">frequency</option><option value="order">nodal diameters</option><option value="ring-down">ring-down</option></select></label>
+        <label>shown <select id="filter" @change=${(e: Event) => { this.filter = (e.target as HTMLSelectElement).value; }}>
+          <option value="all">all</option><option value="close">near, hit or too low</option>
+          ${diameters.map((m) => html`<option value=${m} ?selected=${String(m) === this.filter}>${m === 0 ? 'no nodal diameter' : m === 1 ? '1 nodal diameter' : `${m} nodal diameters`}</option>`)}</select></label>
       </div>
       <fieldset class="count"><legend class="unseen">Effects taken into account</legend>
         ${result.applies.map((e) => html`<label><input type="checkbox" .checked=${!this.without.includes(e)} @change=${() => this.toggle(e)} /> ${effectNames[e]}</label>`)}</fieldset>
@@ -187,8 +205,9 @@ export class HoopModes extends LitElement {
           <th scope="col">mode (<var>m</var>, <var>n</var>)</th><th scope="col" class="number">frequency</th><th scope="col" class="number">ideal</th>
           <th scope="col" class="number">rings for 60 dB</th><th scope="col">nodal lines</th><th scope="col">nearest line to keep clear of</th>
         </tr></thead>
-        <tbody>${this.sorted(result.modes).map((mode) => this.modeRow(mode))}</tbody>
+        <tbody>${listed.map((mode) => this.modeRow(mode))}</tbody>
       </table></div>
+      ${listed.length < result.modes.length ? html`<p role="status" id="filtered">${listed.length} of ${result.modes.length} are shown, and copied or saved.</p>` : nothing}
       <hoop-table-actions .table=${table} .whole=${result}></hoop-table-actions>
       ${assumptions(result.assumptions)}
     </section>`;
