@@ -2,10 +2,11 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { customElement, query, state } from 'lit/decorators.js';
 
-import type { RespondResult, ShapeKind } from '../contract.js';
+import type { RespondRequest, RespondResult, ShapeKind } from '../contract.js';
 import { Curve, curveStyle } from '../draw/curve.js';
 import { engine, type Problem } from '../engine/client.js';
 import { controlsOf, firstSetup, kindNames, modeChoices, mostPoints, type Part, parts, placeTexts, readItems, type Setup } from '../respond/setup.js';
+import { shownAs, sourceItems, type SourceSetup, toSource } from '../respond/sources.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
 import { themeChanged } from '../shell/theme.js';
@@ -13,6 +14,7 @@ import { assumptions, caution } from './notes.js';
 import { figure, percent } from './number-text.js';
 import type { Handle } from './respond-drawing.js';
 import './respond-drawing.js';
+import './respond-sources.js';
 import { sharedStyle } from './style.js';
 import './table-actions.js';
 import type { ShownTable } from './table-copy.js';
@@ -45,6 +47,7 @@ export class HoopRespond extends LitElement {
   @state() private result: RespondResult | null = null;
   @state() private problems: readonly Problem[] = [];
   @query('#history') private historyHost!: HTMLElement | null;
+  @query('hoop-respond-sources') private sourcesPart!: LitElement | null;
   private readonly texts = new TypedTexts();
   private curve: Curve | null = null;
   private asked = '';
@@ -84,21 +87,27 @@ export class HoopRespond extends LitElement {
     void this.compute();
   }
 
+  /** Sources beside the two starts; a setup remembered earlier has none. */
+  private get more(): readonly SourceSetup[] {
+    return this.setup.more ?? [];
+  }
+
   private changeShape(part: Part, change: Partial<Setup[Part]>): void {
     this.change({ ...this.setup, [part]: { ...this.setup[part], ...change } });
   }
 
   private async compute(): Promise<void> {
     const { document } = session;
-    if (!document || !(await this.texts.read(readItems(this.setup), 'respond-texts'))) {
+    if (!document || !(await this.texts.read([...readItems(this.setup), ...sourceItems(this.more)], 'respond-texts'))) {
       return;
     }
     this.requestUpdate();
     if (!this.texts.sound) {
       return;
     }
-    const request = {
+    const request: RespondRequest = {
       document,
+      sources: this.more.map((source, i) => toSource(source, (name) => this.texts.value(`more.${i}.${name}`))),
       displacement: this.shape('displacement'),
       velocity: this.shape('velocity'),
       impulse: this.setup.impulse,
@@ -172,6 +181,8 @@ export class HoopRespond extends LitElement {
   }
 
   protected override updated(): void {
+    // What was read of the texts is kept in one object, which does not tell of a change.
+    this.sourcesPart?.requestUpdate();
     this.drawHistory();
   }
 
@@ -196,8 +207,8 @@ export class HoopRespond extends LitElement {
     if (!document) {
       return html`<section class="panel"><p role="status">${session.message || 'Opening the diaphragm…'}</p></section>`;
     }
-    const shown = ['displacement', 'velocity', 'duration', 'points'];
-    const general = this.problems.filter((p) => !shown.some((s) => p.field.startsWith(s)));
+    const shown = ['displacement', 'velocity', 'duration', 'points', 'more.'];
+    const general = this.problems.filter((p) => !shown.some((s) => shownAs(p.field).startsWith(s)));
     return html`
       <section class="panel" aria-label="How it starts, and the motion"><div class="split">
         <div>
@@ -208,16 +219,21 @@ export class HoopRespond extends LitElement {
             'Left empty: six periods of mode (0, 1).')}
           <label for="orders">Modes used, in <var>m</var> and in <var>n</var></label>
           <select id="orders" @change=${(e: Event) => this.change({ ...this.setup, orders: Number((e.target as HTMLSelectElement).value) })}>
-            ${modeChoices.map((n) => html`<option value=${n} ?selected=${n === this.setup.orders}>m up to ${n}, n up to ${n}</option>`)}
+            ${modeChoices.map((n) => html`<option value=${n} ?selected=${n === this.setup.orders}>${n === 0 ? 'as many as leave out a thousandth of the energy' : `m up to ${n}, n up to ${n}`}</option>`)}
           </select>
           ${general.map((p) => html`<p class="error" role="alert">${p.message}</p>`)}
         </div>
         <div class="drawing">
           <h2>The sheet in motion</h2>
-          <hoop-respond-drawing .result=${this.result} .radii=${radii} .angles=${angles} .clamps=${document.ring.clamps} .handles=${this.handles}
+          <hoop-respond-drawing .result=${this.result} .radii=${radii} .angles=${this.result?.angles ?? angles} .clamps=${document.ring.clamps} .handles=${this.handles}
             @dragged=${this.dragged} @placed=${this.placed}></hoop-respond-drawing>
         </div>
       </div></section>
+      <section class="panel" aria-labelledby="more-title">
+        <h2 id="more-title">What else sets it moving</h2>
+        <hoop-respond-sources .sources=${this.more} .texts=${this.texts} .problems=${this.problems} .notes=${this.result?.sources ?? []}
+          @changed=${(e: CustomEvent<SourceSetup[]>) => this.change({ ...this.setup, more: e.detail })}></hoop-respond-sources>
+      </section>
       ${this.result ? this.answers(this.result) : nothing}
       ${this.pointsPanel()}
       ${this.result ? this.modesPanel(this.result) : nothing}`;
@@ -261,6 +277,8 @@ export class HoopRespond extends LitElement {
         <dt>energy at the start</dt><dd>${figure(result.energy, 3)} J</dd>
         <dt>missed by the modes used</dt><dd id="missed">${percent(result.missedEnergy, 2)} of the energy
           (${percent(result.missedDisplacement, 2)} of the shape's, ${percent(result.missedVelocity, 2)} of the motion's)</dd>
+        <dt>modes used</dt><dd id="used">m up to ${result.orders}, n up to ${result.circles}; the others could move it by ${
+          result.missedTravel < 0 ? 'a sum without end' : `at most about ${figure(result.missedTravel * 1000, 2)} mm`}</dd>
         <dt>period of mode (0, 1)</dt><dd>${figure(result.period * 1000, 4)} ms</dd>
         <dt>rings for 60 dB</dt><dd>${result.ringDown > 0 ? `${figure(result.ringDown, 3)} s` : 'without end: no damping is given'}</dd>
       </dl>

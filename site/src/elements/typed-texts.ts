@@ -8,16 +8,26 @@ import { engine } from '../engine/client.js';
 export class TypedTexts {
   private readings = new Map<string, ReadOut>();
   private asked = '';
+  /** The reading of what was asked for last, which may be on its way. */
+  private reading: Promise<boolean> = Promise.resolve(true);
 
   /** Reads all items. False when a newer reading is on its way. */
-  async read(items: readonly ReadItem[], key: string): Promise<boolean> {
+  read(items: readonly ReadItem[], key: string): Promise<boolean> {
     const asked = JSON.stringify(items);
-    if (asked === this.asked) {
-      return true;
+    if (asked !== this.asked) {
+      this.asked = asked;
+      this.reading = this.fetch(items, key, asked);
     }
-    this.asked = asked;
+    return this.reading;
+  }
+
+  private async fetch(items: readonly ReadItem[], key: string, asked: string): Promise<boolean> {
     const answer = await engine.call('read', { items: [...items] }, { key, quick: true });
-    if (answer.kind !== 'result' || asked !== this.asked) {
+    if (asked !== this.asked) {
+      return false;
+    }
+    if (answer.kind !== 'result') {
+      this.asked = '';
       return false;
     }
     this.readings = new Map(answer.result.readings.map((r) => [r.field, r]));

@@ -1,5 +1,6 @@
 /** What the page Respond remembers of its controls: texts as typed, so that nothing is lost or converted. */
 import type { Dimension, ReadItem, ShapeKind } from '../contract.js';
+import type { SourceSetup } from './sources.js';
 
 export interface ShapeSetup {
   kind: ShapeKind;
@@ -23,6 +24,8 @@ export interface Setup {
   duration: string;
   orders: number;
   points: PointSetup[];
+  /** What sets the sheet moving besides. */
+  more?: SourceSetup[];
 }
 
 export type Part = 'displacement' | 'velocity';
@@ -31,7 +34,8 @@ export const parts: readonly Part[] = ['displacement', 'velocity'];
 
 export const mostPoints = 4;
 
-export const modeChoices = [8, 12, 16, 20];
+/** 0 lets the engine choose. */
+export const modeChoices = [0, 8, 12, 16, 20];
 
 export function firstSetup(): Setup {
   return {
