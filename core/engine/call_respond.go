@@ -40,6 +40,8 @@ type RespondRequest struct {
 	Radii  int              `json:"radii"`
 	Angles int              `json:"angles"`
 	Points []response.Point `json:"points"`
+	// Neighbour is a flat surface to which the clearance is sought.
+	Neighbour *response.Neighbour `json:"neighbour,omitempty"`
 }
 
 // RespondResult is the motion, ready to draw.
@@ -56,6 +58,14 @@ type RespondResult struct {
 	Travel Travel `json:"travel"`
 	// Envelope is the largest |w| on the display grid over all frames, m.
 	Envelope Numbers `json:"envelope"`
+	// Clearance to the neighbour asked about.
+	Clearance *response.Approach `json:"clearance,omitempty"`
+	// EnergyTimes, s, and the potential and kinetic energy then, J; EnergyOrders
+	// holds, instant by instant, that of each number of nodal diameters.
+	EnergyTimes  Numbers `json:"energyTimes"`
+	Potential    Numbers `json:"potential"`
+	Kinetic      Numbers `json:"kinetic"`
+	EnergyOrders Numbers `json:"energyOrders"`
 	// Angles of the display grid, as used.
 	Angles int `json:"angles"`
 	// Orders and Circles of the modes used.
@@ -86,10 +96,13 @@ type RespondResult struct {
 	Warnings    []string    `json:"warnings"`
 }
 
-// History is the displacement of one point against time.
+// History is the displacement, m, of one point against time, with its velocity,
+// m/s, and acceleration, m/s^2.
 type History struct {
-	Point  response.Point `json:"point"`
-	Values Numbers        `json:"values"`
+	Point        response.Point `json:"point"`
+	Values       Numbers        `json:"values"`
+	Velocity     Numbers        `json:"velocity"`
+	Acceleration Numbers        `json:"acceleration"`
 }
 
 // Travel is the largest displacement found, with its place and time.

@@ -132,10 +132,15 @@ func TestRespondOfEverySource(t *testing.T) {
 		{Kind: response.SourceRelease, At: 0.01, Shape: response.Shape{Kind: response.ShapePoint, Peak: 0.5, Width: 0.05}},
 		{Kind: response.SourceShake, Pulse: &response.Pulse{Kind: response.PulseTable, Table: "0,0\n0.01,3\n0.02,-3\n0.03,0"}},
 	} {
-		result, err := runRespond(context.Background(), sourcesRequest(source))
+		request := sourcesRequest(source)
+		request.Neighbour = &response.Neighbour{Below: true, Gap: 0.05}
+		result, err := runRespond(context.Background(), request)
 		if err != nil {
 			t.Errorf("%s: %v", source.Kind, err)
 			continue
+		}
+		if h := result.Histories[0]; result.Clearance == nil || math.Abs(result.Clearance.Least) > 1 || len(h.Velocity) != len(h.Values) || len(h.Acceleration) != len(h.Values) || len(result.Kinetic) != len(result.EnergyTimes) {
+			t.Errorf("%s: clearance %+v", source.Kind, result.Clearance)
 		}
 		note := result.Sources[0]
 		if len(result.Sources) != 1 || note.Kind != source.Kind || !(math.Abs(result.Travel.Displacement) > 0) || math.IsNaN(note.Missed) || math.IsNaN(result.MissedTravel) {

@@ -67,6 +67,11 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 			Time:         motion.Travel.Time,
 		},
 		Envelope:           motion.Envelope,
+		Clearance:          motion.Clearance,
+		EnergyTimes:        motion.Energies.Times,
+		Potential:          motion.Energies.Potential,
+		Kinetic:            motion.Energies.Kinetic,
+		EnergyOrders:       motion.Energies.Orders,
 		Angles:             c.Angles,
 		Orders:             c.Orders,
 		Circles:            c.Circles,
@@ -84,7 +89,7 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		Warnings:           append(respondCautions(&request.Document, request.Without), motion.Warnings...),
 	}
 	for i, values := range motion.Histories {
-		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values})
+		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values, Velocity: motion.Speeds[i], Acceleration: motion.Accelerations[i]})
 	}
 	for _, share := range motion.Strongest {
 		result.Strongest = append(result.Strongest, ModeShare{M: share.M, N: share.N, Share: share.Share, Frequency: share.Frequency})
@@ -155,6 +160,7 @@ func respondCase(request *RespondRequest) *response.Case {
 		Radii:        request.Radii,
 		Angles:       request.Angles,
 		Points:       request.Points,
+		Neighbour:    request.Neighbour,
 	}
 }
 

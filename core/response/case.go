@@ -47,6 +47,8 @@ type Case struct {
 	Radii, Angles int
 	// Points whose history is kept.
 	Points []Point
+	// Neighbour, if there is one, to which the clearance is sought.
+	Neighbour *Neighbour
 }
 
 // Bounds of a Case.
@@ -56,7 +58,7 @@ const (
 	MostFrames  = 2000
 	MostRadii   = 257
 	MostAngles  = 512
-	MostPoints  = 4
+	MostPoints  = 8
 	// MostMotion is the largest number of values of all frames together.
 	MostMotion = 8 << 20
 	// MostPeriods of mode (0,1) in a duration.
@@ -77,6 +79,9 @@ func (c *Case) Check() []diaphragm.Problem {
 	c.checkSources(&r)
 	if !(c.Smooth >= 0 && c.Smooth <= 0.5) {
 		r.bounds("smooth", say("The radius of smoothing is # ring radii; it must be from 0 to 0.5.", c.Smooth))
+	}
+	if c.Neighbour != nil {
+		c.Neighbour.check(&r, c.Sheet.Radius)
 	}
 	before := len(r.list)
 	for _, w := range [...]struct {

@@ -42,8 +42,8 @@ func TestCaseIsRefused(t *testing.T) {
 			"The duration must be above 0 and at most 10000 periods of mode (0, 1), which are 495.7 s."},
 		{func(c *Case) { c.Duration = math.NaN() }, "duration", ""},
 		{func(c *Case) { c.Zeta = -0.1 }, "damping.ratio", "The damping ratio must be from 0 to 100."},
-		{func(c *Case) { c.Points = make([]Point, 5) }, "points",
-			"5 points are given; histories are kept of at most 4."},
+		{func(c *Case) { c.Points = make([]Point, 9) }, "points",
+			"9 points are given; histories are kept of at most 8."},
 		{func(c *Case) { c.Points[1].Radius = 1.2 }, "points.1.radius",
 			"Point 2 is at 1.2 ring radii from the centre; it must be from 0 to 1."},
 	} {

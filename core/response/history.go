@@ -15,16 +15,17 @@ const (
 	mostSamples      = 8192
 )
 
-// histories are the displacements of some points at the same instants.
+// histories are the displacements of some points at the same instants, their
+// velocities and accelerations.
 type histories struct {
-	times  []float32   // s
-	values [][]float32 // m, one list per point
-	capped bool        // there are fewer than samplesPerPeriod
+	times  []float32      // s
+	values [3][][]float32 // m/s^k, one list per point
+	capped bool           // there are fewer than samplesPerPeriod
 }
 
 // follow computes the histories of the points of a case. unit is a/c in s.
 func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histories, error) {
-	h := &histories{values: make([][]float32, len(c.Points))}
+	h := &histories{}
 	if len(c.Points) == 0 {
 		return h, nil
 	}
@@ -38,35 +39,35 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 		h.times[i] = float32(c.Duration * float64(i) / float64(count-1))
 	}
 	step := end / float64(count-1)
-	sums := make([][]float64, len(c.Points))
-	for i := range sums {
-		sums[i] = make([]float64, count)
-	}
-	for n, stage := range moves.stages {
-		until := infinity
-		if n+1 < len(moves.stages) {
-			until = moves.stages[n+1].from
+	scale := 1.0
+	for d := range h.values {
+		h.values[d] = make([][]float32, len(c.Points))
+		for i := range h.values[d] {
+			sum := make([]float64, count)
+			for n, stage := range moves.stages {
+				until := infinity
+				if n+1 < len(moves.stages) {
+					until = moves.stages[n+1].from
+				}
+				if ctx.Err() != nil {
+					return nil, ctx.Err()
+				}
+				stage.follow(sum, stage.radials(c.Points[i]), d, step, until)
+			}
+			h.values[d][i] = make([]float32, count)
+			for k, w := range sum {
+				h.values[d][i][k] = float32(w * scale)
+			}
 		}
-		if err := stage.follow(ctx, sums, c.Points, step, until); err != nil {
-			return nil, err
-		}
-	}
-	for i, sum := range sums {
-		h.values[i] = make([]float32, count)
-		for k, w := range sum {
-			h.values[i][k] = float32(w)
-		}
+		scale /= unit
 	}
 	return h, nil
 }
 
-// follow writes the displacements of points at even steps of time, those within
-// the stage.
-func (s *stage) follow(ctx context.Context, sums [][]float64, points []Point, step, until float64) error {
-	values := make([][]float64, len(points))
-	for p := range points {
-		values[p] = s.radials(points[p])
-	}
+// follow writes the displacement of a point at which the modes have the values
+// given, or its derivative of order d, at even steps of time, those within the
+// stage.
+func (s *stage) follow(sum, values []float64, d int, step, until float64) {
 	at := int(math.Ceil(s.from / step))
 	for l := range s.legs {
 		end := until
@@ -74,54 +75,51 @@ func (s *stage) follow(ctx context.Context, sums [][]float64, points []Point, st
 			end = s.legs[l+1].from
 		}
 		first := at
-		for at < len(sums[0]) && float64(at)*step < end {
+		for at < len(sum) && float64(at)*step < end {
 			at++
 		}
-		if err := ctx.Err(); err != nil {
-			return err
-		}
-		if at-first < 3 || !s.legs[l].quiet() {
-			for k := first; k < at; k++ {
-				for i := range s.modes {
-					q, _, _ := s.within(i, l, float64(k)*step-s.legs[l].from)
-					for p, sum := range sums {
-						sum[k] += q * values[p][i]
-					}
-				}
-			}
+		t := float64(first)*step - s.legs[l].from
+		if at-first > 3 && s.legs[l].quiet() {
+			s.swing(sum[first:at], values, d, l, t, step)
 			continue
 		}
-		for p, sum := range sums {
-			s.swing(sum[first:at], values[p], l, float64(first)*step-s.legs[l].from, step)
+		for k := range sum[first:at] {
+			for i, v := range values {
+				sum[first+k] += v * s.derivative(i, l, d, t+float64(k)*step)
+			}
 		}
 	}
-	return nil
 }
 
-// swing adds the displacement of a point, at which the modes have the values
-// given, at even steps of a quiet leg from the time t of it on.
-func (s *stage) swing(sum, values []float64, l int, t, step float64) {
+// derivative of order d of the coordinate of mode i at the time t of leg l.
+func (s *stage) derivative(i, l, d int, t float64) float64 {
+	var q [3]float64
+	q[0], q[1], q[2] = s.within(i, l, t)
+	return q[d]
+}
+
+// swing does the work of follow in a quiet leg, from the time t of it on.
+func (s *stage) swing(sum, values []float64, d, l int, t, step float64) {
 	// By Cayley and Hamilton's theorem the values of one mode at even steps, that
-	// of any solution, follow y'' = trace y' - determinant y of its stepper. In n
-	// steps rounding grows at most like n^2 units in the last place, which for
-	// mostSamples is below that of float32. Four go together, so that none waits
-	// for its last step; modes that swing alike are one.
+	// of any solution and its derivatives, follow y'' = trace y' - determinant y of
+	// its stepper. In n steps rounding grows at most like n^2 units in the last
+	// place, which for mostSamples is below that of float32. Four go together, so
+	// that none waits for its last step; modes that swing alike are one.
 	var rest float64
 	var now, next, trace, det [4]float64
 	for i, lane := 0, 0; i < len(s.modes) || lane > 0; {
 		if lane < 4 && i < len(s.modes) {
 			k := &s.modes[i]
-			c, sn := fundamental(k.omega, k.zeta, t)
 			a := newStepper(k.omega, k.zeta, step)
-			nextC, nextS := a.next(c, sn)
 			var y, z float64
 			for ; i < len(s.modes) && s.modes[i].same(k); i++ {
-				around := s.legs[l].around(&s.modes[i])
-				rest += values[i] * around
-				st := s.modes[i].states[l]
-				q, v := values[i]*(st.q-around), values[i]*st.v/k.omega
-				y += c*q + sn*v
-				z += nextC*q + nextS*v
+				v, around := values[i], 0.0
+				if d == 0 {
+					around = s.legs[l].around(&s.modes[i])
+				}
+				rest += v * around
+				y += v * (s.derivative(i, l, d, t) - around)
+				z += v * (s.derivative(i, l, d, t+step) - around)
 			}
 			now[lane], next[lane], trace[lane], det[lane] = y, z, a.cc+a.ss, a.cc*a.ss-a.cs*a.sc
 			lane++

@@ -20,6 +20,12 @@ type Motion struct {
 	// Envelope is the largest |w| of all frames on the display grid, m.
 	Envelope []float32
 	Travel   Travel
+	// Clearance to the neighbour of the case, if it has one.
+	Clearance *Approach
+	// Speeds, m/s, and Accelerations, m/s^2, belong to Histories.
+	Speeds, Accelerations [][]float32
+	// Energies against time.
+	Energies Energies
 	// Sources tell what was found about each source.
 	Sources []SourceNote
 	// MissedTravel estimates how far the modes left out could move the sheet
@@ -80,17 +86,25 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 	if err != nil {
 		return nil, nil, err
 	}
+	var clearance *Approach
+	if c.Neighbour != nil {
+		if clearance, err = begin.moves.clearance(ctx, c, c.Duration/unit); err != nil {
+			return nil, nil, err
+		}
+	}
 	m := &Motion{
+		Clearance:    clearance,
 		Times:        pictures.times,
 		Values:       pictures.motion,
 		Envelope:     pictures.envelope,
 		HistoryTimes: histories.times,
-		Histories:    histories.values,
-		Travel:       travelOf(top, unit, c.Duration),
-		Period:       c.period(),
-		RingDown:     ringDown(2*math.Pi/c.period(), c.lowestZeta()),
+		Histories:    histories.values[0], Speeds: histories.values[1], Accelerations: histories.values[2],
+		Travel:   travelOf(top, unit, c.Duration),
+		Period:   c.period(),
+		RingDown: ringDown(2*math.Pi/c.period(), c.lowestZeta()),
 	}
 	begin.energies(m, c)
+	m.Energies = begin.moves.energies(c)
 	m.Assumptions = c.assumptions()
 	m.Warnings = c.warnings(begin, m, warned{
 		steepest:      math.Max(pictures.steepest, begin.steepest/c.Sheet.Radius),
@@ -195,19 +209,7 @@ func (mo *motion) strongest(whole float64, c *Case) []Share {
 
 // travelOf takes a candidate to SI units.
 func travelOf(top candidate, unit, duration float64) Travel {
-	t := Travel{
-		Displacement: top.value,
-		At:           Point{Radius: math.Min(top.r, 1), Angle: top.theta},
-		Time:         math.Min(top.t*unit, duration),
-	}
-	// A place within rounding of the centre has no angle.
-	if t.At.Radius < 1e-7 {
-		t.At = Point{}
-	}
-	if t.At.Angle < 0 {
-		t.At.Angle += 2 * math.Pi
-	}
-	return t
+	return Travel{Displacement: top.value, At: placeOf(top), Time: math.Min(top.t*unit, duration)}
 }
 
 // ringDown returns the time, s, in which a mode of angular frequency omega

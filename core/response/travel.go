@@ -236,21 +236,30 @@ func byValue(p, q candidate) int {
 // climb goes from a place to the extreme of the displacement beside it, in x, y
 // and t at once, within the times 0 to end. The value has its sign.
 func (mo *motion) climb(from candidate, end float64) candidate {
+	sin, cos := math.Sincos(from.theta)
+	p := plane{sign: 1}
+	if mo.probe(from.r*cos, from.r*sin, math.Min(math.Max(from.t, 0), end)).w < 0 {
+		p.sign = -1
+	}
+	top := mo.climbOn(p, from, 0, end)
+	top.value *= p.sign
+	return top
+}
+
+// climbOn goes to the largest lift beside a place, within two times, which may be
+// one.
+func (mo *motion) climbOn(on plane, from candidate, begin, end float64) candidate {
 	// Newton's method, held back by a multiple of the unit matrix where the
 	// second derivatives show no extreme or a step leads down (Levenberg and
 	// Marquardt; Nocedal & Wright, Numerical Optimization, section 10.3).
 	sin, cos := math.Sincos(from.theta)
-	at := [3]float64{from.r * cos, from.r * sin, math.Min(math.Max(from.t, 0), end)}
+	at := [3]float64{from.r * cos, from.r * sin, math.Min(math.Max(from.t, begin), end)}
 	p := mo.probe(at[0], at[1], at[2])
-	sign := 1.0
-	if p.w < 0 {
-		sign = -1
-	}
 	hold := 0.0
 	for range 40 {
-		uphill := [3]float64{sign * p.d[0], sign * p.d[1], sign * p.d[2]}
-		fixed := at[2] == 0 && uphill[2] <= 0 || at[2] == end && uphill[2] >= 0
-		step, ok := newtonStep(uphill, p.dd, sign, hold, fixed)
+		uphill := [3]float64{on.sign*p.d[0] - on.x, on.sign*p.d[1] - on.y, on.sign * p.d[2]}
+		fixed := begin == end || at[2] == begin && uphill[2] <= 0 || at[2] == end && uphill[2] >= 0
+		step, ok := newtonStep(uphill, p.dd, on.sign, hold, fixed)
 		if !ok {
 			hold = math.Max(4*hold, 1e-3*curvature(p.dd))
 			continue
@@ -259,12 +268,12 @@ func (mo *motion) climb(from candidate, end float64) candidate {
 		for i := range next {
 			next[i] += step[i]
 		}
-		next[2] = math.Min(math.Max(next[2], 0), end)
+		next[2] = math.Min(math.Max(next[2], begin), end)
 		if r := math.Hypot(next[0], next[1]); r > 1 {
 			next[0], next[1] = next[0]/r, next[1]/r
 		}
 		q := mo.probe(next[0], next[1], next[2])
-		if sign*q.w < sign*p.w {
+		if on.lift(q.w, next[0], next[1]) < on.lift(p.w, at[0], at[1]) {
 			if math.Hypot(math.Hypot(step[0], step[1]), step[2]) < 1e-9 {
 				break // rounding
 			}
@@ -281,7 +290,7 @@ func (mo *motion) climb(from candidate, end float64) candidate {
 			hold = 0
 		}
 	}
-	return candidate{value: p.w, r: math.Hypot(at[0], at[1]), theta: math.Atan2(at[1], at[0]), t: at[2]}
+	return candidate{value: on.lift(p.w, at[0], at[1]), r: math.Hypot(at[0], at[1]), theta: math.Atan2(at[1], at[0]), t: at[2]}
 }
 
 // curvature is a scale of the second derivatives.

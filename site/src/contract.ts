@@ -124,6 +124,23 @@ export interface About {
   calls: CallLine[];
 }
 /**
+ * Approach is how near the sheet comes to a neighbour within the duration.
+ */
+export interface Approach {
+  /**
+   * Least gap, m, below zero where the sheet would pass through, with its place and time, s.
+   */
+  least: number;
+  at: Point;
+  time: number;
+  /**
+   * Touches tells whether there is contact; First is when, s, and FirstAt where.
+   */
+  touches: boolean;
+  first?: number;
+  firstAt: Point;
+}
+/**
  * ArchiveFile is the one file that holds everything.
  */
 export interface ArchiveFile {
@@ -640,11 +657,13 @@ export interface Harmonic {
   angle: number;
 }
 /**
- * History is the displacement of one point against time.
+ * History is the displacement, m, of one point against time, with its velocity, m/s, and acceleration, m/s^2.
  */
 export interface History {
   point: Point;
   values: Numbers;
+  velocity: Numbers;
+  acceleration: Numbers;
 }
 /**
  * IdealReading is the tension that the ideal sheet in vacuum would give for the same peaks, read as the same modes.
@@ -938,6 +957,24 @@ export interface ModesResult {
   applies: Effect[];
   assumptions: string[];
   cautions: string[];
+}
+/**
+ * Neighbour is a flat surface beside the sheet.
+ */
+export interface Neighbour {
+  /**
+   * Below tells that it lies below the sheet at rest, not above.
+   */
+  below?: boolean;
+  /**
+   * Gap at the centre, m, of the sheet at rest.
+   */
+  gap: number;
+  /**
+   * Tilt, rad, by which it falls away from the sheet towards Direction, rad.
+   */
+  tilt?: number;
+  direction?: number;
 }
 /**
  * NoRequest is the request of a call that takes nothing.
@@ -1321,6 +1358,10 @@ export interface RespondRequest {
   radii: number;
   angles: number;
   points: Point[];
+  /**
+   * Neighbour is a flat surface to which the clearance is sought.
+   */
+  neighbour?: Neighbour;
 }
 /**
  * RespondResult is the motion, ready to draw.
@@ -1347,6 +1388,17 @@ export interface RespondResult {
    * Envelope is the largest |w| on the display grid over all frames, m.
    */
   envelope: Numbers;
+  /**
+   * Clearance to the neighbour asked about.
+   */
+  clearance?: Approach;
+  /**
+   * EnergyTimes, s, and the potential and kinetic energy then, J; EnergyOrders holds, instant by instant, that of each number of nodal diameters.
+   */
+  energyTimes: Numbers;
+  potential: Numbers;
+  kinetic: Numbers;
+  energyOrders: Numbers;
   /**
    * Angles of the display grid, as used.
    */
