@@ -75,3 +75,16 @@ test('modes are chosen, and what is set stays after a reload', async () => {
   await field(page, 'more.0.radius').locator('#box').blur();
   await text(field(page, 'more.0.radius').locator('#problem'), /\.$/);
 });
+
+test('a surface beside the sheet: least gap and first contact', async () => {
+  const before = await answer();
+  await box(page, 'neighbour.gap').fill('20 mm');
+  await other(before);
+  await text(page.locator('#clearance'), /^1[45][.\d]* mm.*it does not touch/s);
+  await box(page, 'neighbour.gap').fill('3 mm');
+  await text(page.locator('#clearance'), /^−[.\d]+ mm.*it touches first at 0 ms/s);
+  await page.locator('#side').selectOption('below');
+  await text(page.locator('#clearance'), /touches? first at [1-9]|does not touch/);
+  await page.locator('#shown').selectOption('1');
+  await text(page.locator('#history'), /velocity, m\/s|point 1/);
+});

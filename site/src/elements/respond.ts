@@ -5,7 +5,7 @@ import { customElement, query, state } from 'lit/decorators.js';
 import type { RespondRequest, RespondResult, ShapeKind } from '../contract.js';
 import { Curve, curveStyle } from '../draw/curve.js';
 import { engine, type Problem } from '../engine/client.js';
-import { controlsOf, firstSetup, kindNames, modeChoices, mostPoints, type Part, parts, placeTexts, readItems, type Setup } from '../respond/setup.js';
+import { controlsOf, firstNeighbour, firstSetup, historyKinds, kindNames, modeChoices, mostPoints, type NeighbourSetup, type Part, parts, placeTexts, readItems, type Setup } from '../respond/setup.js';
 import { shownAs, sourceItems, type SourceSetup, toSource } from '../respond/sources.js';
 import { SessionController } from '../session/controller.js';
 import { session } from '../session/session.js';
@@ -24,7 +24,7 @@ import { TypedTexts } from './typed-texts.js';
 const radii = 41;
 const angles = 80;
 const frames = 160;
-const dashes = [[], [8, 4], [2, 3], [10, 3, 2, 3]];
+const dashes = [[], [8, 4], [2, 3], [10, 3, 2, 3], [1, 4], [14, 5], [6, 2, 1, 2], [3, 6]];
 const seriesColours = ['ink', 'up', 'down', 'soft'];
 
 @customElement('hoop-respond')
@@ -46,6 +46,8 @@ export class HoopRespond extends LitElement {
   @state() private setup: Setup = firstSetup();
   @state() private result: RespondResult | null = null;
   @state() private problems: readonly Problem[] = [];
+  /** Place in historyKinds. */
+  @state() private shown = 0;
   @query('#history') private historyHost!: HTMLElement | null;
   @query('hoop-respond-sources') private sourcesPart!: LitElement | null;
   private readonly texts = new TypedTexts();
@@ -92,6 +94,14 @@ export class HoopRespond extends LitElement {
     return this.setup.more ?? [];
   }
 
+  private get neighbour(): NeighbourSetup {
+    return this.setup.neighbour ?? firstNeighbour;
+  }
+
+  private changeNeighbour(change: Partial<NeighbourSetup>): void {
+    this.change({ ...this.setup, neighbour: { ...this.neighbour, ...change } });
+  }
+
   private changeShape(part: Part, change: Partial<Setup[Part]>): void {
     this.change({ ...this.setup, [part]: { ...this.setup[part], ...change } });
   }
@@ -115,6 +125,8 @@ export class HoopRespond extends LitElement {
       circles: this.setup.orders,
       duration: this.texts.value('duration'),
       frames, radii, angles,
+      ...(this.neighbour.gap.trim() === '' ? {} : { neighbour: { below: this.neighbour.below, gap: this.texts.value('neighbour.gap'),
+        tilt: this.texts.value('neighbour.tilt'), direction: this.texts.value('neighbour.direction') } }),
       points: this.setup.points.map((_, i) => ({ radius: this.texts.value(`points.${i}.radius`), angle: this.texts.value(`points.${i}.angle`) })),
     };
     const asked = JSON.stringify(request);
@@ -194,12 +206,13 @@ export class HoopRespond extends LitElement {
       return;
     }
     this.curve ??= new Curve(historyHost);
+    const kind = historyKinds[this.shown]!;
     this.curve.show({
       xLabel: 'time, ms',
-      yLabel: 'displacement, mm',
+      yLabel: `${kind.name}, ${kind.unit}`,
       height: 260,
       series: result.histories.map((_, i) => ({ label: `point ${i + 1}`, colour: seriesColours[i] ?? 'ink', dash: dashes[i] ?? [], width: 1.6 })),
-    }, [result.historyTimes.map((t) => t * 1000), ...result.histories.map((h) => h.values.map((w) => w * 1000))]);
+    }, [result.historyTimes.map((t) => t * 1000), ...result.histories.map((h) => [h.values, h.velocity, h.acceleration][this.shown]!.map((w) => w * kind.scale))]);
   }
 
   protected override render(): TemplateResult {
@@ -207,7 +220,7 @@ export class HoopRespond extends LitElement {
     if (!document) {
       return html`<section class="panel"><p role="status">${session.message || 'Opening the diaphragm…'}</p></section>`;
     }
-    const shown = ['displacement', 'velocity', 'duration', 'points', 'more.'];
+    const shown = ['displacement', 'velocity', 'duration', 'points', 'more.', 'neighbour'];
     const general = this.problems.filter((p) => !shown.some((s) => shownAs(p.field).startsWith(s)));
     return html`
       <section class="panel" aria-label="How it starts, and the motion"><div class="split">
@@ -221,6 +234,16 @@ export class HoopRespond extends LitElement {
           <select id="orders" @change=${(e: Event) => this.change({ ...this.setup, orders: Number((e.target as HTMLSelectElement).value) })}>
             ${modeChoices.map((n) => html`<option value=${n} ?selected=${n === this.setup.orders}>${n === 0 ? 'as many as leave out a thousandth of the energy' : `m up to ${n}, n up to ${n}`}</option>`)}
           </select>
+          <h2>A surface beside the sheet</h2>
+          ${this.typed('neighbour.gap', 'g', 'gap at the centre, at rest', this.neighbour.gap, 'mm', (gap) => this.changeNeighbour({ gap }), 'Left empty: none.')}
+          ${this.neighbour.gap.trim() === '' ? nothing : html`
+            <label for="side">it lies</label>
+            <select id="side" @change=${(e: Event) => this.changeNeighbour({ below: (e.target as HTMLSelectElement).value === 'below' })}>
+              <option value="above" ?selected=${!this.neighbour.below}>above the sheet</option>
+              <option value="below" ?selected=${this.neighbour.below}>below the sheet</option>
+            </select>
+            ${this.typed('neighbour.tilt', 'φ', 'falls away from it by', this.neighbour.tilt, '°', (tilt) => this.changeNeighbour({ tilt }))}
+            ${this.typed('neighbour.direction', 'θ', 'towards', this.neighbour.direction, '°', (direction) => this.changeNeighbour({ direction }))}`}
           ${general.map((p) => html`<p class="error" role="alert">${p.message}</p>`)}
         </div>
         <div class="drawing">
@@ -274,6 +297,10 @@ export class HoopRespond extends LitElement {
       <dl>
         <dt>largest travel</dt><dd id="travel">${figure(travel.displacement * 1000, 4)} mm, at ${figure(travel.at.radius, 3)} of the radius
           and ${Math.round((travel.at.angle * 180) / Math.PI)}°, ${figure(travel.time * 1000, 4)} ms after the start</dd>
+        ${result.clearance ? html`<dt>least gap to the neighbour</dt><dd id="clearance">${figure(result.clearance.least * 1000, 4)} mm, at ${figure(result.clearance.at.radius, 3)} of the radius
+          and ${Math.round((result.clearance.at.angle * 180) / Math.PI)}°, ${figure(result.clearance.time * 1000, 4)} ms after the start; ${result.clearance.touches
+            ? `it touches first at ${figure((result.clearance.first ?? 0) * 1000, 4)} ms, at ${figure(result.clearance.firstAt.radius, 3)} of the radius and ${Math.round((result.clearance.firstAt.angle * 180) / Math.PI)}°. The motion goes on as if nothing were there`
+            : 'it does not touch within the time shown'}</dd>` : nothing}
         <dt>energy at the start</dt><dd>${figure(result.energy, 3)} J</dd>
         <dt>missed by the modes used</dt><dd id="missed">${percent(result.missedEnergy, 2)} of the energy
           (${percent(result.missedDisplacement, 2)} of the shape's, ${percent(result.missedVelocity, 2)} of the motion's)</dd>
@@ -283,6 +310,10 @@ export class HoopRespond extends LitElement {
         <dt>rings for 60 dB</dt><dd>${result.ringDown > 0 ? `${figure(result.ringDown, 3)} s` : 'without end: no damping is given'}</dd>
       </dl>
       ${result.warnings.map((w) => caution(w, 'Read this first'))}
+      ${result.histories.length > 0 ? html`<label for="shown">The points show</label>
+        <select id="shown" @change=${(e: Event) => { this.shown = Number((e.target as HTMLSelectElement).value); }}>
+          ${historyKinds.map((kind, i) => html`<option value=${i} ?selected=${i === this.shown}>${kind.name}</option>`)}
+        </select>` : nothing}
       <div id="history"></div>
       ${result.histories.length > 0 ? html`<hoop-table-actions .table=${historyTable(result)} .whole=${result}></hoop-table-actions>` : nothing}
       ${assumptions(result.assumptions)}
@@ -328,7 +359,10 @@ export class HoopRespond extends LitElement {
 function historyTable(result: RespondResult): ShownTable {
   return {
     name: 'histories',
-    heads: ['time, s', ...result.histories.map((h, i) => `point ${i + 1} (r ${h.point.radius}, theta ${h.point.angle} rad), m`)],
-    rows: Array.from(result.historyTimes, (t, j) => [t, ...result.histories.map((h) => h.values[j] ?? '')]),
+    heads: ['time, s', ...result.histories.flatMap((h, i) => {
+      const name = `point ${i + 1} (r ${h.point.radius}, theta ${h.point.angle} rad)`;
+      return [`${name}, m`, `${name}, m/s`, `${name}, m/s²`];
+    })],
+    rows: Array.from(result.historyTimes, (t, j) => [t, ...result.histories.flatMap((h) => [h.values[j] ?? '', h.velocity[j] ?? '', h.acceleration[j] ?? ''])]),
   };
 }

@@ -26,13 +26,31 @@ export interface Setup {
   points: PointSetup[];
   /** What sets the sheet moving besides. */
   more?: SourceSetup[];
+  /** A surface beside the sheet; without a gap there is none. */
+  neighbour?: NeighbourSetup;
 }
+
+export interface NeighbourSetup {
+  below: boolean;
+  gap: string;
+  tilt: string;
+  direction: string;
+}
+
+export const firstNeighbour: NeighbourSetup = { below: false, gap: '', tilt: '0°', direction: '0°' };
+
+/** What a history shows. */
+export const historyKinds = [
+  { name: 'displacement', unit: 'mm', scale: 1000 },
+  { name: 'velocity', unit: 'm/s', scale: 1 },
+  { name: 'acceleration', unit: 'm/s²', scale: 1 },
+] as const;
 
 export type Part = 'displacement' | 'velocity';
 
 export const parts: readonly Part[] = ['displacement', 'velocity'];
 
-export const mostPoints = 4;
+export const mostPoints = 8;
 
 /** 0 lets the engine choose. */
 export const modeChoices = [0, 8, 12, 16, 20];
@@ -98,6 +116,12 @@ export function readItems(setup: Setup): ReadItem[] {
   }
   if (setup.duration.trim() !== '') {
     item('duration', 'time shown', setup.duration, 'time', 'ms');
+  }
+  const { neighbour } = setup;
+  if (neighbour && neighbour.gap.trim() !== '') {
+    item('neighbour.gap', 'gap to the neighbour', neighbour.gap, 'length', 'mm', 1e-9, 100);
+    item('neighbour.tilt', 'tilt of the neighbour', neighbour.tilt, 'angle', '°');
+    item('neighbour.direction', 'direction of the tilt', neighbour.direction, 'angle', '°');
   }
   setup.points.forEach((point, i) => {
     item(`points.${i}.radius`, `distance of point ${i + 1} from the centre`, point.radius, 'ratio', '', 0, 1);
