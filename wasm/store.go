@@ -78,6 +78,8 @@ func newStore(name string, now func() time.Time, random io.Reader) *store {
 		"taps.delete":       handle(s.deleteTap),
 		"archive.export":    handle(s.export),
 		"archive.import":    handle(s.importFile),
+		"materials.list":    handle(s.materials),
+		"materials.put":     handle(s.putMaterials),
 		"settings.get":      handle(s.settings),
 		"settings.put":      handle(s.putSettings),
 	}

@@ -13,6 +13,7 @@ import (
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/engine"
 	"hoopsheet/core/quantity"
+	"hoopsheet/core/sheet"
 )
 
 var everything = []string{inRecords, inRevisions, inTaps, inRecordings, inSettings}
@@ -45,6 +46,9 @@ func (s *store) export(*engine.NoRequest) (*engine.ArchiveFile, error) {
 		}
 		settings, _, err := t.readSettings()
 		archive.Settings = diaphragm.ArchiveSettings{LinkAddress: settings.LinkAddress, Units: string(settings.Units), By: settings.By}
+		if err == nil {
+			archive.Settings.Materials, err = t.readMaterials()
+		}
 		return err
 	})
 	if err != nil {
@@ -304,8 +308,29 @@ func (in *intake) takeTaps(entry diaphragm.ArchiveEntry, id string) error {
 	return nil
 }
 
-// takeSettings brings in settings where none have been made.
+// takeMaterials adds the materials that are sound and not here yet.
+func (in *intake) takeMaterials(from []sheet.Material) error {
+	own, err := in.t.readMaterials()
+	if err != nil {
+		return err
+	}
+	before := len(own)
+	for _, m := range from {
+		if len(own) < mostMaterials && diaphragm.MaterialFault(m, own) == "" {
+			own = append(own, m)
+		}
+	}
+	if len(own) == before {
+		return nil
+	}
+	return in.t.putJSON(inSettings, materialsKey, engine.OwnMaterials{Materials: own})
+}
+
+// takeSettings brings in settings where none have been made, and materials.
 func (in *intake) takeSettings(from diaphragm.ArchiveSettings) error {
+	if err := in.takeMaterials(from.Materials); err != nil {
+		return err
+	}
 	_, made, err := in.t.readSettings()
 	if err != nil || made {
 		return err

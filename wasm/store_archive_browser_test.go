@@ -10,6 +10,7 @@ import (
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/engine"
+	"hoopsheet/core/sheet"
 )
 
 // filledStore has a kept and changed diaphragm with two taps, one with a
@@ -45,6 +46,7 @@ func filledStore(t *testing.T) (s *store, id string) {
 	deleted := createDemo(t, s, "Deleted")
 	ask[engine.Done](t, s, "records.delete", ref(deleted.Document.ID))
 	ask[engine.Done](t, s, "settings.put", engine.Settings{Units: "inch-pound", By: "R. Field"})
+	ask[engine.Done](t, s, "materials.put", engine.OwnMaterials{Materials: []sheet.Material{ownCloth()}})
 	return s, id
 }
 
@@ -103,6 +105,9 @@ func TestExportImportElsewhere(t *testing.T) {
 	}
 	if got := ask[engine.Settings](t, to, "settings.get", struct{}{}); !got.Chosen || got.By != "R. Field" || got.Units != "inch-pound" {
 		t.Errorf("the settings came over as %+v", got)
+	}
+	if got := ask[engine.OwnMaterials](t, to, "materials.list", struct{}{}); !reflect.DeepEqual(got.Materials, []sheet.Material{ownCloth()}) {
+		t.Errorf("the materials came over as %+v", got)
 	}
 
 	// The same file again changes nothing.
@@ -220,5 +225,28 @@ func TestBadImports(t *testing.T) {
 	}
 	if list := ask[engine.RecordList](t, s, "records.list", struct{}{}); len(list.Records) != 3 {
 		t.Errorf("%d records after refused imports", len(list.Records))
+	}
+}
+
+// ownCloth is an invented material.
+func ownCloth() sheet.Material {
+	return sheet.Material{ID: "own cloth", Name: "Cloth", Density: 1200, E: 1e9, Nu: 0.3, CTE: 20e-6, AllowableStress: 2e7, Source: "invented"}
+}
+
+// TestMaterials: the list is kept as a whole; what cannot be offered is refused in a sentence, and changes nothing.
+func TestMaterials(t *testing.T) {
+	s := freshStore(t)
+	if got := ask[engine.OwnMaterials](t, s, "materials.list", struct{}{}); len(got.Materials) != 0 {
+		t.Errorf("first materials %+v", got)
+	}
+	cloth := ownCloth()
+	ask[engine.Done](t, s, "materials.put", engine.OwnMaterials{Materials: []sheet.Material{cloth}})
+	bad := cloth
+	bad.ID, bad.Nu = "another", 0.7
+	for _, list := range [][]sheet.Material{{cloth, cloth}, {cloth, bad}, {{ID: "nameless"}}} {
+		refused(t, s, engine.CodeRequest, "materials.put", engine.OwnMaterials{Materials: list})
+	}
+	if got := ask[engine.OwnMaterials](t, s, "materials.list", struct{}{}); len(got.Materials) != 1 || got.Materials[0] != cloth {
+		t.Errorf("materials %+v", got)
 	}
 }

@@ -19,7 +19,7 @@ const (
 	inTaps = "taps"
 	// inRecordings: tap id -> Uint8Array, the file as it came.
 	inRecordings = "recordings"
-	// inSettings: "settings" -> engine.Settings.
+	// inSettings: "settings" -> engine.Settings, "materials" -> engine.OwnMaterials.
 	inSettings = "settings"
 )
 

@@ -4,6 +4,8 @@ import (
 	"encoding/json"
 	"sort"
 	"strconv"
+
+	"hoopsheet/core/sheet"
 )
 
 // Archive is everything that one browser keeps, for one file. The file is a
@@ -53,6 +55,8 @@ type ArchiveSettings struct {
 	LinkAddress string `json:"linkAddress"`
 	Units       string `json:"units"`
 	By          string `json:"by"`
+	// Materials are the sheet materials that were added in that browser.
+	Materials []sheet.Material `json:"materials,omitempty"`
 }
 
 const (

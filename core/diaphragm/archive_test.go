@@ -103,7 +103,7 @@ func TestGoldenArchive(t *testing.T) {
 		t.Fatal(err)
 	}
 	want, recordings := fullArchive()
-	if !reflect.DeepEqual(got.Entries, want.Entries) || !reflect.DeepEqual(sounds, recordings) || got.Settings != want.Settings {
+	if !reflect.DeepEqual(got.Entries, want.Entries) || !reflect.DeepEqual(sounds, recordings) || !reflect.DeepEqual(got.Settings, want.Settings) {
 		t.Errorf("got %+v\nwant %+v", got, want)
 	}
 }

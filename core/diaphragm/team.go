@@ -56,7 +56,7 @@ func ReadTeam(data []byte) (Team, []Problem) {
 	materials := team.Materials
 	team.Materials = nil
 	for i, m := range materials {
-		if fault := teamMaterialFault(m, team.Materials); fault != "" || i >= mostTeamMaterials {
+		if fault := MaterialFault(m, team.Materials); fault != "" || i >= mostTeamMaterials {
 			if fault == "" {
 				fault = "one file holds at most " + strconv.Itoa(mostTeamMaterials)
 			}
@@ -83,8 +83,9 @@ func teamProblem(member string, code Code, message string) []Problem {
 	return []Problem{{Field: field, Code: code, Message: message, Offset: -1}}
 }
 
-// teamMaterialFault says why a material cannot be offered; empty where it can.
-func teamMaterialFault(m sheet.Material, before []sheet.Material) string {
+// MaterialFault says why a material cannot be offered beside those before it;
+// empty where it can.
+func MaterialFault(m sheet.Material, before []sheet.Material) string {
 	if strings.TrimSpace(m.ID) == "" || strings.TrimSpace(m.Name) == "" {
 		return "it has no id or no name"
 	}

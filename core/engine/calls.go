@@ -9,6 +9,7 @@ func calls() []call {
 		define("read", "Reads typed quantities such as \"0.9 mil\" into SI values.", runRead),
 		define("check", "Computes published values again and compares them.", runCheck),
 		define("team", "Reads the file defaults.json that a team puts beside the pages.", runTeam),
+		define("materials", "Gives the catalogue of sheet materials: typical figures, with the source of each.", runMaterials),
 		define("edit", "Changes fields of a diaphragm by what was typed, and gives the rows of its form.", runEdit),
 		define("modes", "Lists the modes of the diaphragm as it stands, with damping and the distance to the lines to keep clear of.", runModes),
 		define("costs", "Says what each effect does to one mode, and what its frequency is most sensitive to.", runCosts),

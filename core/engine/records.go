@@ -5,6 +5,7 @@ import (
 
 	"hoopsheet/core/diaphragm"
 	"hoopsheet/core/quantity"
+	"hoopsheet/core/sheet"
 )
 
 // The calls of the store. Their types are declared here, so that the contract
@@ -186,6 +187,11 @@ type Settings struct {
 	By string `json:"by"`
 }
 
+// OwnMaterials are the sheet materials that were added in this browser.
+type OwnMaterials struct {
+	Materials []sheet.Material `json:"materials"`
+}
+
 // StoreCalls lists the calls that the store answers.
 func StoreCalls() []CallInfo {
 	return []CallInfo{
@@ -206,6 +212,8 @@ func StoreCalls() []CallInfo {
 		storeCall[TapRef, TapRecording]("taps.delete", "Deletes a tap session and returns it, so that it can be put back."),
 		storeCall[NoRequest, ArchiveFile]("archive.export", "Writes everything into one file."),
 		storeCall[ImportRequest, ImportResult]("archive.import", "Reads a file of everything, or a hand-over file; overwrites nothing."),
+		storeCall[NoRequest, OwnMaterials]("materials.list", "Lists the sheet materials that were added in this browser."),
+		storeCall[OwnMaterials, Done]("materials.put", "Writes the list of added sheet materials."),
 		storeCall[NoRequest, Settings]("settings.get", "Reads the settings."),
 		storeCall[Settings, Done]("settings.put", "Writes the settings."),
 	}

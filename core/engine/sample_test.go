@@ -44,16 +44,17 @@ func sampleRequests(t *testing.T) map[string]string {
 	}
 	rest := `{"kind":"rest","peak":0,"radius":0,"angle":0,"width":0.1,"formula":""}`
 	return map[string]string{
-		"about":   `{}`,
-		"demo":    `{}`,
-		"read":    `{"items":[{"field":"x","name":"height","text":"0.9 mil","dimension":"length","unit":"mm","low":0,"high":0}]}`,
-		"check":   `{"checks":[{"group":"g","name":"n","quantity":"zero-j","arguments":[0,1],"expected":"2.4048","source":"s"}]}`,
-		"team":    `{"text":"{\"units\":\"si\"}"}`,
-		"edit":    `{"document":` + doc + `,"drafts":{},"units":{},"edits":[{"field":"sheet.thickness","action":"set","text":"23 um"}],"system":"si"}`,
-		"compare": `{"document":` + doc + `,"other":` + doc + `,"count":3}`,
-		"costs":   `{"document":` + doc + `,"m":0,"n":1}`,
-		"modes":   `{"document":` + doc + `,"count":24}`,
-		"shape":   `{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41}`,
+		"about":     `{}`,
+		"demo":      `{}`,
+		"read":      `{"items":[{"field":"x","name":"height","text":"0.9 mil","dimension":"length","unit":"mm","low":0,"high":0}]}`,
+		"check":     `{"checks":[{"group":"g","name":"n","quantity":"zero-j","arguments":[0,1],"expected":"2.4048","source":"s"}]}`,
+		"team":      `{"text":"{\"units\":\"si\"}"}`,
+		"edit":      `{"document":` + doc + `,"drafts":{},"units":{},"edits":[{"field":"sheet.thickness","action":"set","text":"23 um"}],"system":"si"}`,
+		"materials": `{}`,
+		"compare":   `{"document":` + doc + `,"other":` + doc + `,"count":3}`,
+		"costs":     `{"document":` + doc + `,"m":0,"n":1}`,
+		"modes":     `{"document":` + doc + `,"count":24}`,
+		"shape":     `{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41}`,
 		"respond": `{"document":` + doc + `,"displacement":{"kind":"bulge","peak":0.002,"radius":0,"angle":0,"width":0.1,"formula":""},"velocity":` + rest +
 			`,"orders":8,"circles":8,"duration":0,"frames":10,"radii":11,"angles":20,"points":[{"radius":0,"angle":0}]}`,
 		"peaks":   `{"recording":"` + recording + `","lowest":0,"highest":0,"most":0,"tap":0,"displayPoints":0}`,

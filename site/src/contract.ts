@@ -178,6 +178,23 @@ export interface CallLine {
   summary: string;
 }
 /**
+ * CatalogueEntry is one material with its typical figures and their sources.
+ */
+export interface CatalogueEntry {
+  name: string;
+  /**
+   * Figures are typical values with their units.
+   */
+  figures: string;
+  source: string;
+}
+/**
+ * CatalogueResult is the catalogue of sheet materials, for reading.
+ */
+export interface CatalogueResult {
+  materials: CatalogueEntry[];
+}
+/**
  * Check is one published value.
  */
 export interface Check {
@@ -1006,6 +1023,12 @@ export interface OpenedRecord {
   stamp: number;
   unkept: boolean;
   revisions: RevisionInfo[];
+}
+/**
+ * OwnMaterials are the sheet materials that were added in this browser.
+ */
+export interface OwnMaterials {
+  materials: Material[];
 }
 /**
  * Patch is a round thing on the sheet: a sensor, a target, a repair.
@@ -2168,6 +2191,8 @@ export interface CallMap {
   "check": { request: CheckRequest; result: CheckResult };
   /** Reads the file defaults.json that a team puts beside the pages. */
   "team": { request: TeamRequest; result: TeamResult };
+  /** Gives the catalogue of sheet materials: typical figures, with the source of each. */
+  "materials": { request: NoRequest; result: CatalogueResult };
   /** Changes fields of a diaphragm by what was typed, and gives the rows of its form. */
   "edit": { request: EditRequest; result: EditResult };
   /** Lists the modes of the diaphragm as it stands, with damping and the distance to the lines to keep clear of. */
@@ -2226,6 +2251,10 @@ export interface StoreMap {
   "archive.export": { request: NoRequest; result: ArchiveFile };
   /** Reads a file of everything, or a hand-over file; overwrites nothing. */
   "archive.import": { request: ImportRequest; result: ImportResult };
+  /** Lists the sheet materials that were added in this browser. */
+  "materials.list": { request: NoRequest; result: OwnMaterials };
+  /** Writes the list of added sheet materials. */
+  "materials.put": { request: OwnMaterials; result: Done };
   /** Reads the settings. */
   "settings.get": { request: NoRequest; result: Settings };
   /** Writes the settings. */

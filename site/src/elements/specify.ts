@@ -9,6 +9,7 @@ import { derivedTable } from './derived.js';
 import './faces.js';
 import './field.js';
 import { cautions } from './notes.js';
+import './own-materials.js';
 import { sharedStyle } from './style.js';
 
 interface Group {
@@ -73,7 +74,8 @@ export class HoopSpecify extends LitElement {
     const used = listed.some((l) => l.rows.length > 0 || l.path === this.removed?.path) || session.problems.some((p) => rows.some((r) => r.field === p.field));
     const body = html`${group.name === 'faces' ? html`<hoop-faces></hoop-faces>` : nothing}${single.map((r) => field(r))}
       ${listed.map((l) => this.list(l.path, l.one, l.rows))}
-      ${derivedTable(session.derived.filter((d) => d.group === group.name))}`;
+      ${derivedTable(session.derived.filter((d) => d.group === group.name))}
+      ${group.name === 'sheet' ? html`<hoop-own-materials></hoop-own-materials>` : nothing}`;
     return html`<section class="panel" aria-labelledby="g-${group.name}">
       ${group.folded ? html`<details ?open=${used}><summary><h2 id="g-${group.name}">${group.title}</h2></summary>${body}</details>`
         : html`<h2 id="g-${group.name}">${group.title}</h2>${body}`}

@@ -8,7 +8,7 @@
 import type { Answer, Refusal, StoreAnswer } from '../engine/answer.js';
 import { hasCode, sentences } from '../engine/answer.js';
 import { engine } from '../engine/client.js';
-import type { Diaphragm, DerivedRow, Done, Edit, EditResult, OpenedRecord, Problem, RevisionInfo, Row, Saved, Settings } from '../contract.js';
+import type { Diaphragm, DerivedRow, Done, Edit, EditResult, Material, OpenedRecord, Problem, RevisionInfo, Row, Saved, Settings } from '../contract.js';
 import { SaveRequest } from '../shell/save-request.js';
 import { addressDiaphragm, addressedDiaphragm, lastDiaphragm, rememberDiaphragm } from './remembered.js';
 import { noTeam, readTeam, type TeamChoices } from './team.js';
@@ -54,6 +54,8 @@ export class Session extends EventTarget {
   shared = false;
   settings: Settings = { chosen: false, linkAddress: '', units: 'si', by: '' };
   team: TeamChoices = noTeam;
+  /** Sheet materials that were added in this browser. */
+  ownMaterials: readonly Material[] = [];
   /** Number of the last state of the working copy on this device; each save makes a higher one. */
   stamp = 0;
 
@@ -99,7 +101,8 @@ export class Session extends EventTarget {
   }
 
   private async openFirst(): Promise<void> {
-    const [settings, team] = await Promise.all([engine.store('settings.get', {}), readTeam()]);
+    const [settings, own, team] = await Promise.all([engine.store('settings.get', {}), engine.store('materials.list', {}), readTeam()]);
+    this.ownMaterials = own.kind === 'result' ? own.result.materials : [];
     if (settings.kind === 'result') {
       this.settings = settings.result;
     }
@@ -161,6 +164,17 @@ export class Session extends EventTarget {
   }
 
   /** Keeps the choices of this browser and shows fields accordingly. */
+  /** Keeps the list of added materials, and offers them from now on. */
+  async changeMaterials(materials: readonly Material[]): Promise<StoreAnswer<Done>> {
+    const answer = await engine.store('materials.put', { materials: [...materials] });
+    if (answer.kind === 'result') {
+      this.ownMaterials = materials;
+      await this.refresh();
+      this.tell();
+    }
+    return answer;
+  }
+
   async changeSettings(settings: Settings): Promise<StoreAnswer<Done>> {
     const answer = await engine.store('settings.put', settings);
     if (answer.kind === 'result') {
@@ -280,7 +294,7 @@ export class Session extends EventTarget {
       units: this.units,
       edits,
       system: this.system,
-      materials: this.team.team.materials,
+      materials: [...this.ownMaterials, ...this.team.team.materials],
     }, { quick: true });
   }
 
