@@ -24,10 +24,7 @@ type candidate struct {
 
 // drawFrames computes the frames of a case. unit is a/c in s.
 func drawFrames(ctx context.Context, c *Case, moves *motion, unit float64, report func(share float64)) (*pictures, error) {
-	radii := make([]float64, c.Radii)
-	for i := range radii {
-		radii[i] = float64(i) / float64(c.Radii-1)
-	}
+	radii := c.radii()
 	table := takeTable(moves.basis, radii, c.Angles)
 	defer keepTable(table)
 	size := table.Len()
@@ -59,6 +56,15 @@ func drawFrames(ctx context.Context, c *Case, moves *motion, unit float64, repor
 	p.steepest = steepest / c.Sheet.Radius
 	report(1)
 	return p, nil
+}
+
+// radii of the display grid.
+func (c *Case) radii() []float64 {
+	radii := make([]float64, c.Radii)
+	for i := range radii {
+		radii[i] = float64(i) / float64(c.Radii-1)
+	}
+	return radii
 }
 
 // take keeps frame number f and returns the place and size of its largest value.

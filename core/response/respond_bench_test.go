@@ -5,6 +5,7 @@ import (
 	"testing"
 
 	"hoopsheet/core/diaphragm"
+	"hoopsheet/core/disc"
 	"hoopsheet/core/modes"
 )
 
@@ -32,12 +33,27 @@ func BenchmarkRespond(b *testing.B) {
 func BenchmarkRespondFrame(b *testing.B) {
 	c := benchCase()
 	begin, _ := c.start()
-	radii := make([]float64, c.Radii)
-	for i := range radii {
-		radii[i] = float64(i) / float64(c.Radii-1)
-	}
-	table := takeTable(begin.moves.basis, radii, c.Angles)
+	table := takeTable(begin.moves.basis, c.radii(), c.Angles)
 	walk, values := newWalk(begin.moves, 0.01), make([]float64, table.Len())
+	for b.Loop() {
+		walk.next()
+		table.Synthesise(values, walk.coef)
+	}
+}
+
+// finest is a table of 128 x 256 points with a motion of 1,600 modes.
+func finest() (*disc.Table, *walk) {
+	c := benchCase()
+	c.Orders, c.Circles, c.Radii, c.Angles = 39, 40, 128, 256
+	begin, _ := c.start()
+	return takeTable(begin.moves.basis, c.radii(), c.Angles), newWalk(begin.moves, 0.001)
+}
+
+// BenchmarkFrame1600 is one frame of 1,600 modes, m to 39 and n to 40, on
+// 128 x 256 points.
+func BenchmarkFrame1600(b *testing.B) {
+	table, walk := finest()
+	values := make([]float64, table.Len())
 	for b.Loop() {
 		walk.next()
 		table.Synthesise(values, walk.coef)
