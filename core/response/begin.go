@@ -73,15 +73,16 @@ func (c *Case) start() (*start, []diaphragm.Problem) {
 	basis := basisOf(c.Orders, c.terms())
 	s := &start{projector: c.newProjector(basis), displacement: rest{}, velocity: rest{}}
 	var problems []diaphragm.Problem
-	for i, g := range c.sources() {
+	for _, g := range c.sources() {
 		if more := c.project(s.projector, g); len(more) > 0 {
 			problems = append(problems, more...)
 			continue
 		}
 		s.list = append(s.list, g)
-		if c.Displacement.Kind != ShapeRest && i == 0 {
+		switch g.prefix {
+		case "displacement.":
 			s.displacement = g.form
-		} else if i <= 1 && g.way == wayVelocity || g.way == wayImpulse {
+		case "velocity.":
 			s.velocity = g.form
 		}
 	}

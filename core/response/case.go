@@ -43,6 +43,8 @@ type Case struct {
 	// Duration, s, and the number of frames spread evenly over it.
 	Duration float64
 	Frames   int
+	// Stream keeps no frames: Motion.Frames gives them when they are wanted.
+	Stream bool
 	// Display grid: radii j/(Radii-1) and angles 2 pi i/Angles.
 	Radii, Angles int
 	// Points whose history is kept.
@@ -59,7 +61,8 @@ const (
 	MostRadii   = 257
 	MostAngles  = 512
 	MostPoints  = 8
-	// MostMotion is the largest number of values of all frames together.
+	// MostMotion is the largest number of values of all frames together that are
+	// kept.
 	MostMotion = 8 << 20
 	// MostPeriods of mode (0,1) in a duration.
 	MostPeriods = 10000
@@ -103,7 +106,7 @@ func (c *Case) Check() []diaphragm.Problem {
 			r.bounds("angles", say("The number of angles of the display grid is #; modes with up to # nodal diameters need an even number of at least #, whose half has no prime factor above 5, such as #.",
 				c.Angles, c.Orders, 2*c.Orders+2, disc.NextAngles(max(c.Angles, 2*c.Orders+2))))
 		}
-		if c.Frames*c.Radii*c.Angles > MostMotion {
+		if !c.Stream && c.Frames*c.Radii*c.Angles > MostMotion {
 			r.add("frames", diaphragm.CodeConflict, -1, say("Frames times radii times angles come to # values; at most # are computed. Take fewer frames or a coarser grid.",
 				c.Frames*c.Radii*c.Angles, MostMotion))
 		}

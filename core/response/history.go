@@ -68,7 +68,10 @@ func follow(ctx context.Context, c *Case, moves *motion, unit float64) (*histori
 // given, or its derivative of order d, at even steps of time, those within the
 // stage.
 func (s *stage) follow(sum, values []float64, d int, step, until float64) {
-	at := int(math.Ceil(s.from / step))
+	at := 0
+	for float64(at)*step < s.from {
+		at++
+	}
 	for l := range s.legs {
 		end := until
 		if l+1 < len(s.legs) {

@@ -17,7 +17,8 @@ type Motion struct {
 	// HistoryTimes, s, and one list of displacements, m, per point.
 	HistoryTimes []float32
 	Histories    [][]float32
-	// Envelope is the largest |w| of all frames on the display grid, m.
+	// Envelope is the largest |w| on the display grid within the duration, m,
+	// refined between the frames.
 	Envelope []float32
 	Travel   Travel
 	// Clearance to the neighbour of the case, if it has one.
@@ -45,6 +46,12 @@ type Motion struct {
 	// Strongest lists the modes that carry most energy, largest first.
 	Strongest             []Share
 	Assumptions, Warnings []string
+
+	// What Frames needs: the motion, the display grid, and a/c in s.
+	moves  *motion
+	radii  []float64
+	angles int
+	unit   float64
 }
 
 // Share is the share of the initial energy that one mode carries.
@@ -92,17 +99,14 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 			return nil, nil, err
 		}
 	}
-	m := &Motion{
-		Clearance:    clearance,
-		Times:        pictures.times,
-		Values:       pictures.motion,
-		Envelope:     pictures.envelope,
-		HistoryTimes: histories.times,
-		Histories:    histories.values[0], Speeds: histories.values[1], Accelerations: histories.values[2],
-		Travel:   travelOf(top, unit, c.Duration),
-		Period:   c.period(),
-		RingDown: ringDown(2*math.Pi/c.period(), c.lowestZeta()),
-	}
+	m := c.motionOf(begin.moves)
+	m.Clearance = clearance
+	m.Times, m.Values, m.Envelope = pictures.times, pictures.motion, pictures.envelope
+	m.HistoryTimes = histories.times
+	m.Histories, m.Speeds, m.Accelerations = histories.values[0], histories.values[1], histories.values[2]
+	m.Travel = travelOf(top, unit, c.Duration)
+	m.Period = c.period()
+	m.RingDown = ringDown(2*math.Pi/c.period(), c.lowestZeta())
 	begin.energies(m, c)
 	m.Energies = begin.moves.energies(c)
 	m.Assumptions = c.assumptions()

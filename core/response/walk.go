@@ -20,6 +20,7 @@ func (a stepper) next(c, s float64) (nextC, nextS float64) {
 // walk steps the coordinates of a motion and their coefficients through time.
 type walk struct {
 	mo    *motion
+	from  float64
 	step  float64
 	count int // of steps taken
 	stage *stage
@@ -34,14 +35,17 @@ type walk struct {
 }
 
 // newWalk begins at t = 0.
-func newWalk(mo *motion, step float64) *walk {
-	w := &walk{mo: mo, step: step, coef: make([]float64, mo.basis.Len())}
+func newWalk(mo *motion, step float64) *walk { return walkFrom(mo, 0, step) }
+
+// walkFrom begins at any time.
+func walkFrom(mo *motion, from, step float64) *walk {
+	w := &walk{mo: mo, from: from, step: step, coef: make([]float64, mo.basis.Len())}
 	w.settle()
 	return w
 }
 
 // time of the walk.
-func (w *walk) time() float64 { return float64(w.count) * w.step }
+func (w *walk) time() float64 { return w.from + float64(w.count)*w.step }
 
 func (w *walk) next() {
 	w.count++
