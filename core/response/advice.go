@@ -116,6 +116,7 @@ func (c *Case) extraTension(energy float64) float64 {
 	return c.Sheet.Stretch * mean / 4 / c.Sheet.Tension
 }
 
+//go:noinline
 func percent(share float64) string { return short2(share*100) + " %" }
 
 // short2 writes two significant digits, without an exponent where that is

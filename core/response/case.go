@@ -17,6 +17,8 @@ type Sheet struct {
 }
 
 // WaveSpeed returns c = sqrt(T/sigma), m/s.
+//
+//go:noinline
 func (s Sheet) WaveSpeed() float64 { return math.Sqrt(s.Tension / s.ArealDensity) }
 
 // Case is one initial-value problem of the ideal sheet and what to show of it.
@@ -143,6 +145,8 @@ func (c *Case) Check() []diaphragm.Problem {
 func (c *Case) Fit() { c.Angles = disc.NextAngles(max(c.Angles, disc.MinAngles(c.Orders))) }
 
 // unit of time a/c, s.
+//
+//go:noinline
 func (c *Case) unit() float64 { return c.Sheet.Radius / c.Sheet.WaveSpeed() }
 
 // period of mode (0,1) without damping, s.

@@ -220,6 +220,8 @@ func unary(op opcode, a float64) float64 {
 
 // utf16Offset converts a place in bytes to UTF-16 units; bytes that are no
 // UTF-8 count as one unit each, as a browser shows them.
+//
+//go:noinline
 func utf16Offset(text string, bytes int) int {
 	units := 0
 	for _, r := range text[:bytes] {

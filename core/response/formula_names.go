@@ -164,6 +164,7 @@ func editDistance(a, b string) int {
 	return d[len(a)][len(b)]
 }
 
+//go:noinline
 func quoted(name string) string {
 	const most = 20
 	if runes := []rune(name); len(runes) > most {

@@ -48,6 +48,7 @@ type parser struct {
 	height, highest int // of the stack of the evaluation
 }
 
+//go:noinline
 func (p *parser) fail(at int, message string) error {
 	if p.err == nil {
 		p.err = &FormulaError{Offset: utf16Offset(p.text, at), Message: message}

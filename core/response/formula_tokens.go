@@ -24,6 +24,7 @@ type token struct {
 	value float64
 }
 
+//go:noinline
 func (t token) is(sign string) bool { return t.kind == tokenSign && t.text == sign }
 
 // starts reports whether a value starts with the token.

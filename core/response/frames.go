@@ -79,7 +79,7 @@ func drawFrames(ctx context.Context, c *Case, moves *motion, unit float64, repor
 
 // crest raises the envelope to the extremes between three frames.
 func crest(envelope, before, now, after []float32) {
-	// The parabola through the three misses w by no more than |w”'| step^3/16
+	// The parabola through the three misses w by no more than step^3/16 times the third derivative
 	// within half a step of the middle one, and that is where its extreme lies if
 	// the middle value is the largest.
 	before, now, after = before[:len(envelope)], now[:len(envelope)], after[:len(envelope)]
@@ -100,7 +100,7 @@ func crest(envelope, before, now, after []float32) {
 
 // Frames writes frames to dst, at the time from, s, and at even steps after it:
 // as many as it holds, each the values in m on the display grid, radius by
-// radius. One goroutine at a time may use a Motion for it.
+// radius.
 func (m *Motion) Frames(dst []float32, from, step float64) {
 	table := takeTable(m.moves.basis, m.radii, m.angles)
 	defer keepTable(table)
@@ -114,6 +114,9 @@ func (m *Motion) Frames(dst []float32, from, step float64) {
 		walk.next()
 	}
 }
+
+// Grid returns the numbers of radii and angles of a frame.
+func (m *Motion) Grid() (radii, angles int) { return len(m.radii), m.angles }
 
 // Prepare is the first step of Respond: a Motion that holds nothing but what
 // Frames needs.
@@ -129,6 +132,9 @@ func Prepare(c *Case) (*Motion, []diaphragm.Problem) {
 }
 
 func (c *Case) motionOf(moves *motion) *Motion {
+	for _, s := range moves.stages {
+		s.pair() // here, so that Frames changes nothing
+	}
 	return &Motion{moves: moves, radii: c.radii(), angles: c.Angles, unit: c.unit()}
 }
 

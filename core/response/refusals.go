@@ -35,10 +35,13 @@ type refusals struct {
 }
 
 // add takes a problem; at is the place in a text, -1 without one.
+//
+//go:noinline
 func (r *refusals) add(field string, code diaphragm.Code, at int, message string) {
 	r.list = append(r.list, diaphragm.Problem{Field: r.prefix + field, Code: code, Message: message, Offset: at})
 }
 
+//go:noinline
 func (r *refusals) bounds(field, message string) { r.add(field, diaphragm.CodeBounds, -1, message) }
 
 // within holds a value, of which the unit begins with a blank, between bounds.
@@ -61,6 +64,8 @@ func (r *refusals) choice(field, what, word string, all []string) bool {
 }
 
 // refusal is a single problem.
+//
+//go:noinline
 func refusal(field string, code diaphragm.Code, at int, message string) []diaphragm.Problem {
 	return []diaphragm.Problem{{Field: field, Code: code, Message: message, Offset: at}}
 }

@@ -96,6 +96,8 @@ var sourceTable = [...]struct {
 const blowNote = "The blow is over before anything has moved; it sets sheet and fluid moving."
 
 // place of the kind in the table; -1 if there is none.
+//
+//go:noinline
 func (s *Source) place() int {
 	for i := range sourceTable {
 		if sourceTable[i].kind == s.Kind {

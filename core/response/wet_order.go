@@ -142,6 +142,8 @@ func (o *wetOrder) factorise() {
 }
 
 // dotted sums a[i] b[i]; b is at least as long as a.
+//
+//go:noinline
 func dotted(a, b []float64) float64 {
 	sum := 0.0
 	for i, v := range a {
