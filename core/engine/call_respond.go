@@ -34,6 +34,9 @@ type RespondRequest struct {
 	// Frames evenly spaced over it.
 	Duration float64 `json:"duration"`
 	Frames   int     `json:"frames"`
+	// Stream leaves the frames out of the result: the call "frames" gives them
+	// when they are drawn. There may then be as many on any grid.
+	Stream bool `json:"stream,omitempty"`
 	// Radii and Angles set the display grid: radii j/(Radii-1), angles
 	// 2 pi i/Angles. Angles is even and its half has no prime factor above 5;
 	// it is raised if the orders used need more.
@@ -49,14 +52,15 @@ type RespondResult struct {
 	// Times of the frames, s.
 	Times Numbers `json:"times"`
 	// Motion holds the frames one after another, each Radii x Angles values of
-	// displacement in m, a radius at a time.
+	// displacement in m, a radius at a time; empty with Stream.
 	Motion Numbers `json:"motion"`
 	// Histories holds one list per point; HistoryTimes belong to all, s.
 	HistoryTimes Numbers   `json:"historyTimes"`
 	Histories    []History `json:"histories"`
 	// Travel is the largest |w| anywhere within the duration.
 	Travel Travel `json:"travel"`
-	// Envelope is the largest |w| on the display grid over all frames, m.
+	// Envelope is the largest |w| on the display grid within the duration, m,
+	// refined between the frames.
 	Envelope Numbers `json:"envelope"`
 	// Clearance to the neighbour asked about.
 	Clearance *response.Approach `json:"clearance,omitempty"`

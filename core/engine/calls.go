@@ -16,6 +16,7 @@ func calls() []call {
 		define("compare", "Holds a diaphragm against another: what differs in its modes and in its specification.", runCompare),
 		define("shape", "Draws one mode: raster, section, nodal lines and lobes.", runShape),
 		define("respond", "Computes the motion after initial values: frames, histories, largest travel, missed energy.", runRespond),
+		define("frames", "Gives frames of a motion at the times wanted, for a replay that draws them as they come.", runFrames),
 		define("peaks", "Reads a WAV recording and finds its ringing lines.", runPeaks),
 		define("tap", "Matches peaks to modes and gives the tension, its spread and the verdict.", runTap),
 		define("send", "Makes the hand-over of a diaphragm: figures, link and file.", runSend),

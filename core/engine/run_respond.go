@@ -11,44 +11,9 @@ import (
 )
 
 func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, error) {
-	c := respondCase(request)
-	doc := &request.Document
-	effects, err := effectsWithout(request.Without)
+	c, err := respondCaseOf(request)
 	if err != nil {
 		return nil, err
-	}
-	chosen := request.Circles == 0
-	_, coupled := unevenOf(doc, request.Without)
-	coupled = coupled && doc.Ring.HubRadius == 0
-	if coupled {
-		// The modes that are coupled take part whole.
-		c.Orders, c.Circles = max(c.Orders, coupledDiameters), max(c.Circles, leastChosen)
-	}
-	if chosen {
-		c.Circles = leastChosen
-		if !coupled {
-			c.Orders = 0
-		}
-	}
-	c.Fit()
-	// How long a duration may be depends on the modes, which are still to come.
-	problems := slices.DeleteFunc(append(diaphragm.Validate(*doc), c.Check()...), func(p Problem) bool { return p.Field == "duration" })
-	if !(request.Tolerance >= 0 && request.Tolerance < 1) {
-		problems = append(problems, Problem{Field: "tolerance", Code: CodeRange, Offset: -1, Message: "The share of the energy that may be left out must be from 0 to below 1."})
-	}
-	if err := refuse(problems); err != nil {
-		return nil, err
-	}
-	if chosen {
-		if err := chooseModes(c, request, effects, coupled); err != nil {
-			return nil, err
-		}
-	}
-	if c.Wet, err = wetOf(doc, request.Without, effects, c.Orders, c.Circles); err != nil {
-		return nil, err
-	}
-	if request.Duration == 0 && c.Wet != nil {
-		c.Duration = shownPeriods * 2 * math.Pi / c.Wet.Orders[0][0].Omega
 	}
 	motion, problems, err := response.Respond(ctx, c, progress(ctx))
 	if err != nil {
@@ -56,6 +21,12 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 	}
 	if err := refuse(problems); err != nil {
 		return nil, err
+	}
+	if c.Stream {
+		key := motionKey(request)
+		if _, kept := motions.get(key); !kept {
+			motions.put(key, motion)
+		}
 	}
 	result := &RespondResult{
 		Times:        motion.Times,
@@ -95,6 +66,50 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		result.Strongest = append(result.Strongest, ModeShare{M: share.M, N: share.N, Share: share.Share, Frequency: share.Frequency})
 	}
 	return result, nil
+}
+
+// respondCaseOf gives the case that is asked for, with its modes.
+func respondCaseOf(request *RespondRequest) (*response.Case, error) {
+	c := respondCase(request)
+	doc := &request.Document
+	effects, err := effectsWithout(request.Without)
+	if err != nil {
+		return nil, err
+	}
+	chosen := request.Circles == 0
+	_, coupled := unevenOf(doc, request.Without)
+	coupled = coupled && doc.Ring.HubRadius == 0
+	if coupled {
+		// The modes that are coupled take part whole.
+		c.Orders, c.Circles = max(c.Orders, coupledDiameters), max(c.Circles, leastChosen)
+	}
+	if chosen {
+		c.Circles = leastChosen
+		if !coupled {
+			c.Orders = 0
+		}
+	}
+	c.Fit()
+	// How long a duration may be depends on the modes, which are still to come.
+	problems := slices.DeleteFunc(append(diaphragm.Validate(*doc), c.Check()...), func(p Problem) bool { return p.Field == "duration" })
+	if !(request.Tolerance >= 0 && request.Tolerance < 1) {
+		problems = append(problems, Problem{Field: "tolerance", Code: CodeRange, Offset: -1, Message: "The share of the energy that may be left out must be from 0 to below 1."})
+	}
+	if err := refuse(problems); err != nil {
+		return nil, err
+	}
+	if chosen {
+		if err := chooseModes(c, request, effects, coupled); err != nil {
+			return nil, err
+		}
+	}
+	if c.Wet, err = wetOf(doc, request.Without, effects, c.Orders, c.Circles); err != nil {
+		return nil, err
+	}
+	if request.Duration == 0 && c.Wet != nil {
+		c.Duration = shownPeriods * 2 * math.Pi / c.Wet.Orders[0][0].Omega
+	}
+	return c, nil
 }
 
 // The modes that are chosen where none are asked for.
@@ -157,6 +172,7 @@ func respondCase(request *RespondRequest) *response.Case {
 		Circles:      request.Circles,
 		Duration:     duration,
 		Frames:       request.Frames,
+		Stream:       request.Stream,
 		Radii:        request.Radii,
 		Angles:       request.Angles,
 		Points:       request.Points,

@@ -43,6 +43,8 @@ func sampleRequests(t *testing.T) map[string]string {
 		return fragment
 	}
 	rest := `{"kind":"rest","peak":0,"radius":0,"angle":0,"width":0.1,"formula":""}`
+	respond := `{"document":` + doc + `,"displacement":{"kind":"bulge","peak":0.002,"radius":0,"angle":0,"width":0.1,"formula":""},"velocity":` + rest +
+		`,"orders":8,"circles":8,"duration":0,"frames":10,"radii":11,"angles":20,"points":[{"radius":0,"angle":0}]}`
 	return map[string]string{
 		"about":     `{}`,
 		"demo":      `{}`,
@@ -55,12 +57,12 @@ func sampleRequests(t *testing.T) map[string]string {
 		"costs":     `{"document":` + doc + `,"m":0,"n":1}`,
 		"modes":     `{"document":` + doc + `,"count":24}`,
 		"shape":     `{"m":2,"n":1,"orientation":0,"size":64,"sectionAngle":0,"sectionPoints":41}`,
-		"respond": `{"document":` + doc + `,"displacement":{"kind":"bulge","peak":0.002,"radius":0,"angle":0,"width":0.1,"formula":""},"velocity":` + rest +
-			`,"orders":8,"circles":8,"duration":0,"frames":10,"radii":11,"angles":20,"points":[{"radius":0,"angle":0}]}`,
-		"peaks":   `{"recording":"` + recording + `","lowest":0,"highest":0,"most":0,"tap":0,"displayPoints":0}`,
-		"tap":     `{"document":` + doc + `,"peaks":[{"frequency":15.94,"uncertainty":0.05,"level":0,"use":true,"m":0,"n":0},{"frequency":36.33,"uncertainty":0.05,"level":-3,"use":true,"m":0,"n":0}]}`,
-		"send":    send,
-		"receive": `{"fragment":"` + fragment() + `","parcel":""}`,
+		"respond":   respond,
+		"frames":    `{"respond":` + respond + `,"from":0.01,"step":0.001,"count":3}`,
+		"peaks":     `{"recording":"` + recording + `","lowest":0,"highest":0,"most":0,"tap":0,"displayPoints":0}`,
+		"tap":       `{"document":` + doc + `,"peaks":[{"frequency":15.94,"uncertainty":0.05,"level":0,"use":true,"m":0,"n":0},{"frequency":36.33,"uncertainty":0.05,"level":-3,"use":true,"m":0,"n":0}]}`,
+		"send":      send,
+		"receive":   `{"fragment":"` + fragment() + `","parcel":""}`,
 	}
 }
 

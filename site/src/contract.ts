@@ -619,6 +619,34 @@ export interface FoundPeak {
   glide: number;
 }
 /**
+ * FramesRequest asks for frames of a motion, for a replay that draws them as they come.
+ */
+export interface FramesRequest {
+  /**
+   * Respond is the request of the motion; its Frames are not read.
+   */
+  respond: RespondRequest;
+  /**
+   * From is the time of the first, s, Step that between two, and Count how many there are.
+   */
+  from: number;
+  step: number;
+  count: number;
+}
+/**
+ * FramesResult holds the frames.
+ */
+export interface FramesResult {
+  /**
+   * Motion is as in RespondResult: Count frames of Radii x Angles values, m.
+   */
+  motion: Numbers;
+  /**
+   * Angles of the display grid, as used.
+   */
+  angles: number;
+}
+/**
  * HandOverPage is all that the hand-over page shows.
  */
 export interface HandOverPage {
@@ -1376,6 +1404,10 @@ export interface RespondRequest {
   duration: number;
   frames: number;
   /**
+   * Stream leaves the frames out of the result: the call "frames" gives them when they are drawn. There may then be as many on any grid.
+   */
+  stream?: boolean;
+  /**
    * Radii and Angles set the display grid: radii j/(Radii-1), angles 2 pi i/Angles. Angles is even and its half has no prime factor above 5; it is raised if the orders used need more.
    */
   radii: number;
@@ -1395,7 +1427,7 @@ export interface RespondResult {
    */
   times: Numbers;
   /**
-   * Motion holds the frames one after another, each Radii x Angles values of displacement in m, a radius at a time.
+   * Motion holds the frames one after another, each Radii x Angles values of displacement in m, a radius at a time; empty with Stream.
    */
   motion: Numbers;
   /**
@@ -1408,7 +1440,7 @@ export interface RespondResult {
    */
   travel: Travel;
   /**
-   * Envelope is the largest |w| on the display grid over all frames, m.
+   * Envelope is the largest |w| on the display grid within the duration, m, refined between the frames.
    */
   envelope: Numbers;
   /**
@@ -2205,6 +2237,8 @@ export interface CallMap {
   "shape": { request: ShapeRequest; result: ShapeResult };
   /** Computes the motion after initial values: frames, histories, largest travel, missed energy. */
   "respond": { request: RespondRequest; result: RespondResult };
+  /** Gives frames of a motion at the times wanted, for a replay that draws them as they come. */
+  "frames": { request: FramesRequest; result: FramesResult };
   /** Reads a WAV recording and finds its ringing lines. */
   "peaks": { request: PeaksRequest; result: PeaksResult };
   /** Matches peaks to modes and gives the tension, its spread and the verdict. */
