@@ -248,10 +248,11 @@ func (s *stage) act(begin []state, acts []acting, until float64) {
 		}
 	}
 	slices.Sort(times)
-	times = slices.Compact(times)
-	s.legs = make([]leg, len(times))
-	for l, t := range times {
-		s.legs[l].from = t
+	s.legs = nil
+	for i, t := range times {
+		if i == 0 || t > times[i-1] {
+			s.legs = append(s.legs, leg{from: t})
+		}
 	}
 	for i := range s.modes {
 		gains := make([]float64, len(acts))
@@ -265,9 +266,8 @@ func (s *stage) act(begin []state, acts []acting, until float64) {
 	for k := range acts {
 		for n := range acts[k].pieces {
 			p := &acts[k].pieces[n]
-			l, _ := slices.BinarySearch(times, p.from)
-			for ; l < len(times) && times[l] < p.to; l++ {
-				if t := times[l]; t >= p.from {
+			for l := s.legAt(p.from); l < len(s.legs) && s.legs[l].from < p.to; l++ {
+				if t := s.legs[l].from; t >= p.from {
 					s.legs[l].loads = append(s.legs[l].loads, p.begun(k, t))
 				}
 			}

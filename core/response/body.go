@@ -14,7 +14,12 @@ const mostJoined = 900
 // bodies lets the bodies strike one after another: each meets the sheet as what
 // came before has left it.
 func (s *start) bodies(c *Case, begin []state, acts []acting) []diaphragm.Problem {
-	list := slices.DeleteFunc(slices.Clone(s.list), func(g *given) bool { return g.Kind != SourceBody })
+	var list []*given
+	for _, g := range s.list {
+		if g.Kind == SourceBody {
+			list = append(list, g)
+		}
+	}
 	if len(list) == 0 {
 		return nil
 	}

@@ -2,7 +2,6 @@ package response
 
 import (
 	"math"
-	"slices"
 
 	"hoopsheet/core/bessel"
 	"hoopsheet/core/disc"
@@ -135,12 +134,12 @@ func (mo *motion) breaks() []float64 {
 	var list []float64
 	for _, s := range mo.stages {
 		for _, l := range s.legs {
-			if l.from > 0 {
+			if l.from > 0 && (len(list) == 0 || l.from > list[len(list)-1]) {
 				list = append(list, l.from)
 			}
 		}
 	}
-	return slices.Compact(list)
+	return list
 }
 
 // values writes the coefficients of the displacement (k = 0), the velocity (1) or
