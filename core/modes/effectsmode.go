@@ -64,7 +64,7 @@ func (p *wetPlan) mode(o *wetOrder, n int, w wetMode) RealMode {
 		mode.FilmShare = real(1 / (1 - w.slope))
 	}
 	mode.SoundNumber = p.soundNumber(omega)
-	mode.Error = mode.Frequency * (o.truncation(w, 4)/2 + w.change + p.edgeError(zero))
+	mode.Error = mode.Frequency * (o.truncation(w, 4)/2 + w.change + p.edgeError(zero) + o.liveError())
 	mode.coef = o.realPart(w)
 	peak := o.peak(mode.coef)
 	for i := range mode.coef {

@@ -91,7 +91,7 @@ func (p *wetPlan) order(m, count int) *wetOrder {
 	n := p.shapes(m, count)
 	live := n
 	if l := 2*count + 4 + m/12; l < n {
-		live = l // the rest changes no frequency by 1e-8 (TestLiveShapes)
+		live = l // the rest changes no frequency by more than liveError
 	}
 	a, r := p.radius, p.real
 	nu, rim := r.Poisson, r.Rim
