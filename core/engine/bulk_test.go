@@ -77,7 +77,7 @@ func TestBulkEqualsPlain(t *testing.T) {
 		if !reflect.DeepEqual(got, want) {
 			t.Errorf("%s: the side channel gives another answer", name)
 		}
-		if has := len(arrays) > 0; has != (name == "shape" || name == "respond" || name == "peaks") {
+		if has := len(arrays) > 0; has != (name == "shape" || name == "respond" || name == "frames" || name == "peaks") {
 			t.Errorf("%s: %d arrays beside the JSON", name, len(arrays))
 		}
 	}

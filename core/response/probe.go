@@ -32,32 +32,35 @@ func (mo *motion) probe(x, y, t float64) probe {
 		turn = complex(x/r, y/r)
 	}
 	s := mo.stage(t)
-	mixed := make([]amplitude, mo.basis.Len()/2)
+	// Of every Bessel function displacement, velocity and acceleration, first of
+	// the cosine, then of the sine.
+	const parts = 6
+	mixed := make([]float64, parts*mo.basis.Len()/2)
 	for i := range s.modes {
-		var own amplitude
 		q, dq, ddq := s.at(i, t)
-		for _, b := range s.modes[i].shape {
-			// The cosine and the sine part are the real part of q exp(i m theta).
-			if b.part == disc.Cos {
-				own = amplitude{complex(q, 0), complex(dq, 0), complex(ddq, 0)}
-			} else {
-				own = amplitude{complex(0, -q), complex(0, -dq), complex(0, -ddq)}
+		for k := range s.modes[i].shape {
+			b := &s.modes[i].shape[k]
+			n, row := 1, b.row
+			if row == nil {
+				n, row = b.n, singleRow[:]
 			}
-			if b.row == nil {
-				mixed[mo.basis.Index(b.m, b.n, disc.Cos)/2].add(own, 1)
-				continue
-			}
-			to := mixed[mo.basis.Index(b.m, 1, disc.Cos)/2:]
-			for n, v := range b.row {
-				to[n].add(own, v)
+			at := parts/2*int(b.part) + parts*(mo.basis.Index(b.m, n, disc.Cos)/2)
+			for _, v := range row {
+				to := mixed[at : at+3]
+				to[0] += v * q
+				to[1] += v * dq
+				to[2] += v * ddq
+				at += parts
 			}
 		}
 	}
 	phase := complex(1, 0) // exp(i m theta)
 	for m := 0; m <= mo.basis.M; m++ {
 		for n := 1; n <= mo.basis.N; n++ {
-			if own := mixed[mo.basis.Index(m, n, disc.Cos)/2]; own.q != 0 || own.dq != 0 || own.ddq != 0 {
-				p.add(m, mo.basis.Zero(m, n), r, phase, turn, own)
+			own := mixed[parts*(mo.basis.Index(m, n, disc.Cos)/2):][:parts]
+			if own[0] != 0 || own[1] != 0 || own[2] != 0 || own[3] != 0 || own[4] != 0 || own[5] != 0 {
+				// Cosine and sine part are the real part of q exp(i m theta).
+				p.add(m, mo.basis.Zero(m, n), r, phase, turn, amplitude{complex(own[0], -own[3]), complex(own[1], -own[4]), complex(own[2], -own[5])})
 			}
 		}
 		phase *= turn
@@ -65,14 +68,11 @@ func (mo *motion) probe(x, y, t float64) probe {
 	return p
 }
 
+// singleRow is the row of a mode that is a Bessel function by itself.
+var singleRow = [1]float64{1}
+
 // amplitude of a Bessel function with its first and second derivative in time.
 type amplitude struct{ q, dq, ddq complex128 }
-
-func (a *amplitude) add(b amplitude, by float64) {
-	a.q += scaled(b.q, by)
-	a.dq += scaled(b.dq, by)
-	a.ddq += scaled(b.ddq, by)
-}
 
 // add adds J_m(wave r) exp(i m theta) with its amplitude.
 func (p *probe) add(m int, wave, r float64, phase, turn complex128, own amplitude) {
