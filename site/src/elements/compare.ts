@@ -19,7 +19,7 @@ export class HoopCompare extends LitElement {
     sharedStyle,
     css`
       select { max-width: 100%; }
-      tr.differs th, tr.differs td { background: var(--tint, transparent); }
+      tr.differs th, tr.differs td { font-weight: 600; }
       .pairs { display: flex; gap: 8px 18px; align-items: center; flex-wrap: wrap; }
     `,
   ];
