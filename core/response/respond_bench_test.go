@@ -2,6 +2,7 @@ package response
 
 import (
 	"context"
+	"fmt"
 	"testing"
 
 	"hoopsheet/core/diaphragm"
@@ -41,22 +42,50 @@ func BenchmarkRespondFrame(b *testing.B) {
 	}
 }
 
-// finest is a table of 128 x 256 points with a motion of 1,600 modes.
-func finest() (*disc.Table, *walk) {
+// framesOf gives a table of the display grid and a walk of its motion.
+func framesOf(orders, circles, radii, angles int) (*disc.Table, *walk) {
 	c := benchCase()
-	c.Orders, c.Circles, c.Radii, c.Angles = 39, 40, 128, 256
+	c.Orders, c.Circles, c.Radii, c.Angles = orders, circles, radii, angles
 	begin, _ := c.start()
 	return takeTable(begin.moves.basis, c.radii(), c.Angles), newWalk(begin.moves, 0.001)
+}
+
+func benchFrames(b *testing.B, table *disc.Table, walk *walk, frames int) {
+	values := make([]float64, table.Len())
+	for b.Loop() {
+		for range frames {
+			walk.next()
+			table.Synthesise(values, walk.coef)
+		}
+	}
 }
 
 // BenchmarkFrame1600 is one frame of 1,600 modes, m to 39 and n to 40, on
 // 128 x 256 points.
 func BenchmarkFrame1600(b *testing.B) {
-	table, walk := finest()
-	values := make([]float64, table.Len())
-	for b.Loop() {
-		walk.next()
-		table.Synthesise(values, walk.coef)
+	table, walk := framesOf(39, 40, 128, 256)
+	benchFrames(b, table, walk, 1)
+}
+
+// BenchmarkFrameGrowth lets modes, points and frames grow by themselves.
+func BenchmarkFrameGrowth(b *testing.B) {
+	for _, n := range []int{10, 20, 40} {
+		b.Run(fmt.Sprintf("modes=%d", n), func(b *testing.B) {
+			table, walk := framesOf(n-1, n, 128, 256)
+			benchFrames(b, table, walk, 1)
+		})
+	}
+	for _, n := range []int{32, 64, 128, 256} {
+		b.Run(fmt.Sprintf("radii=%d", n), func(b *testing.B) {
+			table, walk := framesOf(39, 40, n, max(2*n, 80))
+			benchFrames(b, table, walk, 1)
+		})
+	}
+	for _, n := range []int{1, 10, 100} {
+		b.Run(fmt.Sprintf("frames=%d", n), func(b *testing.B) {
+			table, walk := framesOf(39, 40, 128, 256)
+			benchFrames(b, table, walk, n)
+		})
 	}
 }
 

@@ -16,6 +16,7 @@ type work struct {
 var works = []work{
 	{"400 lowest modes of the ideal sheet", "modes", "BenchmarkModesTable", "modes_scipy.py", "modes-table", "SciPy jn_zeros and a sort", 0, 0},
 	{"one frame of a response, 17 x 16 modes", "response", "BenchmarkRespondFrame", "response_numpy.py", "response-frame", "NumPy, same sums", 0, 0},
+	{"one frame of 1,600 modes, 128 x 256", "response", "BenchmarkFrame1600", "response_numpy.py", "response-frame-1600", "NumPy with BLAS and FFT", 0, 0},
 	{"WAV to peaks, 3 s at 48 kHz", "spectrum", "BenchmarkWavToPeaks", "spectrum_numpy.py", "wav-to-peaks", "NumPy and SciPy, same steps", 0, 0},
 	{"10,000 zeros, m 0..39, n 1..250", "bessel", "BenchmarkZeros10000", "bessel_scipy.py", "BenchmarkZeros10000", "SciPy jn_zeros", 20, 8},
 	{"J_nu(x), 1e6 random", "bessel", "BenchmarkJRandom", "bessel_scipy.py", "BenchmarkJRandom", "SciPy jv", 3, 1.5},
@@ -32,5 +33,6 @@ var growths = []growing{
 	{"first n zeros of one order", "bessel", "BenchmarkZerosGrowth"},
 	{"the other functions, one value", "bessel", "BenchmarkOthers"},
 	{"disc there and back, M = N, 4N radii, 8N angles", "disc", "BenchmarkDiscGrowth"},
+	{"a frame of a response: modes a way, radii with twice the angles, frames", "response", "BenchmarkFrameGrowth"},
 	{"modes of the diaphragm as it stands", "modes", "BenchmarkWetModes"},
 }
