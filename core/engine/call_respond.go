@@ -43,6 +43,8 @@ type RespondRequest struct {
 	Radii  int              `json:"radii"`
 	Angles int              `json:"angles"`
 	Points []response.Point `json:"points"`
+	// Level of the ring-down of the energy, dB below; 0 stands for 60.
+	Level float64 `json:"level,omitempty"`
 	// Neighbour is a flat surface to which the clearance is sought.
 	Neighbour *response.Neighbour `json:"neighbour,omitempty"`
 }
@@ -94,6 +96,9 @@ type RespondResult struct {
 	// RingDown is the time to -60 dB at the damping ratio of mode (0,1), s; 0
 	// without damping.
 	RingDown float64 `json:"ringDown"`
+	// EnergyDown is how long after the last load or blow the energy takes to fall
+	// by Level, s; 0 if it does not, or a load stays.
+	EnergyDown float64 `json:"energyDown"`
 	// Strongest lists the modes that carry most energy, largest first.
 	Strongest   []ModeShare `json:"strongest"`
 	Assumptions []string    `json:"assumptions"`
@@ -107,6 +112,13 @@ type History struct {
 	Values       Numbers        `json:"values"`
 	Velocity     Numbers        `json:"velocity"`
 	Acceleration Numbers        `json:"acceleration"`
+	// Spectrum holds amplitudes, m, of the displacement, Hann-windowed over the
+	// duration, at the frequencies 0, SpectrumStep, 2 SpectrumStep ... Hz.
+	Spectrum     Numbers `json:"spectrum"`
+	SpectrumStep float64 `json:"spectrumStep"`
+	// Modes that move the point most; the shares are of the sum of how far each
+	// may move it.
+	Modes []ModeShare `json:"modes"`
 }
 
 // Travel is the largest displacement found, with its place and time.
@@ -118,7 +130,8 @@ type Travel struct {
 	Time float64 `json:"time"`
 }
 
-// ModeShare is the share of the initial energy that one mode carries.
+// ModeShare is the share that one mode has, of the initial energy or of the
+// movement of a point.
 type ModeShare struct {
 	M     int     `json:"m"`
 	N     int     `json:"n"`

@@ -54,18 +54,26 @@ func runRespond(ctx context.Context, request *RespondRequest) (*RespondResult, e
 		Energy:             motion.Energy,
 		Period:             motion.Period,
 		RingDown:           motion.RingDown,
+		EnergyDown:         motion.EnergyDown,
 		Histories:          []History{},
-		Strongest:          []ModeShare{},
 		Assumptions:        motion.Assumptions,
 		Warnings:           append(respondCautions(&request.Document, request.Without), motion.Warnings...),
 	}
 	for i, values := range motion.Histories {
-		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values, Velocity: motion.Speeds[i], Acceleration: motion.Accelerations[i]})
+		spot := &motion.Spots[i]
+		result.Histories = append(result.Histories, History{Point: request.Points[i], Values: values, Velocity: motion.Speeds[i], Acceleration: motion.Accelerations[i],
+			Spectrum: spot.Spectrum, SpectrumStep: spot.SpectrumStep, Modes: modeShares(spot.Modes)})
 	}
-	for _, share := range motion.Strongest {
-		result.Strongest = append(result.Strongest, ModeShare{M: share.M, N: share.N, Share: share.Share, Frequency: share.Frequency})
-	}
+	result.Strongest = modeShares(motion.Strongest)
 	return result, nil
+}
+
+func modeShares(shares []response.Share) []ModeShare {
+	list := make([]ModeShare, len(shares))
+	for i, s := range shares {
+		list[i] = ModeShare{M: s.M, N: s.N, Share: s.Share, Frequency: s.Frequency}
+	}
+	return list
 }
 
 // respondCaseOf gives the case that is asked for, with its modes.
@@ -176,6 +184,7 @@ func respondCase(request *RespondRequest) *response.Case {
 		Radii:        request.Radii,
 		Angles:       request.Angles,
 		Points:       request.Points,
+		Level:        request.Level,
 		Neighbour:    request.Neighbour,
 	}
 }

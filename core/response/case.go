@@ -51,6 +51,8 @@ type Case struct {
 	Radii, Angles int
 	// Points whose history is kept.
 	Points []Point
+	// Level of the ring-down of energy, dB below; 0 stands for 60.
+	Level float64
 	// Neighbour, if there is one, to which the clearance is sought.
 	Neighbour *Neighbour
 }
@@ -84,6 +86,9 @@ func (c *Case) Check() []diaphragm.Problem {
 	c.checkSources(&r)
 	if !(c.Smooth >= 0 && c.Smooth <= 0.5) {
 		r.bounds("smooth", say("The radius of smoothing is # ring radii; it must be from 0 to 0.5.", c.Smooth))
+	}
+	if !(c.Level >= 0 && c.Level <= 200) {
+		r.bounds("level", say("The level is # dB below; it must be from 0 to 200.", c.Level))
 	}
 	if c.Neighbour != nil {
 		c.Neighbour.check(&r, c.Sheet.Radius)

@@ -27,6 +27,11 @@ type Motion struct {
 	Speeds, Accelerations [][]float32
 	// Energies against time.
 	Energies Energies
+	// Spots tell more of each point.
+	Spots []Spot
+	// EnergyDown is how long after the last load or blow the energy takes to fall
+	// by the level of the case, s; 0 if it does not or a load stays.
+	EnergyDown float64
 	// Sources tell what was found about each source.
 	Sources []SourceNote
 	// MissedTravel estimates how far the modes left out could move the sheet
@@ -109,6 +114,12 @@ func Respond(ctx context.Context, c *Case, report func(share float64)) (*Motion,
 	m.RingDown = ringDown(2*math.Pi/c.period(), c.lowestZeta())
 	begin.energies(m, c)
 	m.Energies = begin.moves.energies(c)
+	m.Spots = begin.moves.spots(c, histories)
+	level := c.Level
+	if level == 0 {
+		level = usualLevel
+	}
+	m.EnergyDown = begin.moves.energyDown(level) * unit
 	m.Assumptions = c.assumptions()
 	m.Warnings = c.warnings(begin, m, warned{
 		steepest:      math.Max(pictures.steepest, begin.steepest/c.Sheet.Radius),
@@ -199,15 +210,7 @@ func (mo *motion) strongest(whole float64, c *Case) []Share {
 			shares = append(shares, Share{M: k.m, N: k.n, Share: energy / whole, Frequency: k.omega * hertz})
 		}
 	}
-	sorting.By(shares, func(p, q Share) int {
-		switch {
-		case p.Share > q.Share:
-			return -1
-		case p.Share < q.Share:
-			return 1
-		}
-		return 0
-	})
+	sorting.By(shares, byShare)
 	return slices.Clip(shares[:min(most, len(shares))])
 }
 

@@ -709,6 +709,15 @@ export interface History {
   values: Numbers;
   velocity: Numbers;
   acceleration: Numbers;
+  /**
+   * Spectrum holds amplitudes, m, of the displacement, Hann-windowed over the duration, at the frequencies 0, SpectrumStep, 2 SpectrumStep ... Hz.
+   */
+  spectrum: Numbers;
+  spectrumStep: number;
+  /**
+   * Modes that move the point most; the shares are of the sum of how far each may move it.
+   */
+  modes: ModeShare[];
 }
 /**
  * IdealReading is the tension that the ideal sheet in vacuum would give for the same peaks, read as the same modes.
@@ -943,7 +952,7 @@ export interface ModeName {
   n: number;
 }
 /**
- * ModeShare is the share of the initial energy that one mode carries.
+ * ModeShare is the share that one mode has, of the initial energy or of the movement of a point.
  */
 export interface ModeShare {
   m: number;
@@ -1414,6 +1423,10 @@ export interface RespondRequest {
   angles: number;
   points: Point[];
   /**
+   * Level of the ring-down of the energy, dB below; 0 stands for 60.
+   */
+  level?: number;
+  /**
    * Neighbour is a flat surface to which the clearance is sought.
    */
   neighbour?: Neighbour;
@@ -1489,6 +1502,10 @@ export interface RespondResult {
    * RingDown is the time to -60 dB at the damping ratio of mode (0,1), s; 0 without damping.
    */
   ringDown: number;
+  /**
+   * EnergyDown is how long after the last load or blow the energy takes to fall by Level, s; 0 if it does not, or a load stays.
+   */
+  energyDown: number;
   /**
    * Strongest lists the modes that carry most energy, largest first.
    */
