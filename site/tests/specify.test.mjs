@@ -3,7 +3,7 @@ import assert from 'node:assert/strict';
 import { after, afterEach, before, beforeEach, test } from 'node:test';
 
 import { launchToKill, newProfile, removeProfile } from './support/chromium.mjs';
-import { box, edited, field, openSite, saved, text, value } from './support/visit.mjs';
+import { box, edited, field, openSite, saved, text, until, value } from './support/visit.mjs';
 
 let site, visit, page;
 before(async () => { site = await openSite(); });
@@ -168,8 +168,11 @@ test('what is typed while a revision is being kept is in the working copy', asyn
 });
 
 test('closing the page right after typing loses nothing', async () => {
+  const bar = page.locator('hoop-bar [data-stamp]');
+  const before = await bar.getAttribute('data-stamp');
   await box(page, 'notes').fill('written in the last moment');
-  await page.locator('hoop-bar [data-keeping=waiting], hoop-bar [data-keeping=saving], hoop-bar [data-keeping=saved]').waitFor();
+  // From when the bar no longer says that all is saved, or is past that already, nothing may be lost.
+  await until(async () => (await bar.getAttribute('data-keeping')) !== 'saved' || (await bar.getAttribute('data-stamp')) !== before, 'the change to be taken in');
   await page.close({ runBeforeUnload: true });
   const again = await visit.open('specify.html');
   await saved(again);
