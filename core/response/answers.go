@@ -105,6 +105,9 @@ func (mo *motion) energyDown(level float64) float64 {
 		return u + v
 	}
 	wanted := energy(0) * math.Pow(10, -level/10)
+	if wanted == 0 {
+		return 0 // at rest
+	}
 	// Left to itself it never rises.
 	high := 1.0
 	for energy(high) > wanted {

@@ -173,3 +173,8 @@ test('what cannot be read stays and is explained', async () => {
     assert.equal(await box(page, name).inputValue(), bad);
   }
 });
+
+test('tells what moves each point and how long the energy takes to fall', async () => {
+  await text(page.locator('#energy-down'), /^[\d.]+ s after the last load$/);
+  await text(page.locator('.movers').first(), /^\(\d+, \d+\) [\d.]+ %/);
+});

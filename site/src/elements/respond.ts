@@ -308,6 +308,8 @@ export class HoopRespond extends LitElement {
           result.missedTravel < 0 ? 'a sum without end' : `at most about ${figure(result.missedTravel * 1000, 2)} mm`}</dd>
         <dt>period of mode (0, 1)</dt><dd>${figure(result.period * 1000, 4)} ms</dd>
         <dt>rings for 60 dB</dt><dd>${result.ringDown > 0 ? `${figure(result.ringDown, 3)} s` : 'without end: no damping is given'}</dd>
+        ${result.energyDown > 0 ? html`<dt>all the energy falls by 60 dB in</dt><dd id="energy-down">${figure(result.energyDown, 3)} s after the last load</dd>` : nothing}
+        ${result.histories.map((h, i) => html`<dt>point ${i + 1} is moved by</dt><dd class="movers">${h.modes.slice(0, 3).map((m) => `(${m.m}, ${m.n}) ${percent(m.share, 2)}`).join(', ') || 'nothing'}</dd>`)}
       </dl>
       ${result.warnings.map((w) => caution(w, 'Read this first'))}
       ${result.histories.length > 0 ? html`<label for="shown">The points show</label>
