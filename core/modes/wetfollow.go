@@ -56,7 +56,7 @@ func (o *wetOrder) followTogether(out, starts []wetMode, marked []bool, aside fl
 	// Numerical continuation: E. L. Allgower & K. Georg, Introduction to Numerical Continuation Methods, SIAM 2003,
 	// chapter 2. Two roots meet at isolated complex values of the sound number, near which a path of real ones may lead:
 	// then it goes around through complex ones. It may exchange the two, but not lose one.
-	const least, most = 1.0 / 2048, 1.0 / 8
+	const least, most = 1.0 / 2048, 1.0 / 4
 	resistance := o.cavity.ventResistance
 	defer func() { o.sound, o.cavity.ventResistance = 1, resistance }()
 	var which []int
@@ -73,16 +73,20 @@ func (o *wetOrder) followTogether(out, starts []wetMode, marked []bool, aside fl
 		o.sound = complex(done+step, aside*(1-done-step)*(done+step))
 		o.cavity.ventResistance = resistance * (done + step)
 		fine := true
+		end, apart := roughEnd, 100*oneRoot // on the way
+		if done+step == 1 {
+			end, apart = iterateEnd, oneRoot
+		}
 		for i, k := range which {
 			start := out[k]
 			if last > 0 {
 				start.theta += (out[k].theta - before[k]) * complex(step/last, 0)
 			}
 			overlap := 0.0
-			trial[k], overlap = o.iterate(start, iterateEnd)
+			trial[k], overlap = o.iterate(start, end)
 			fine = overlap > sameMode && trial[k].good
 			for _, j := range which[:i] {
-				fine = fine && cmplx.Abs(trial[k].theta/trial[j].theta-1) >= oneRoot
+				fine = fine && cmplx.Abs(trial[k].theta/trial[j].theta-1) >= apart
 			}
 			if !fine {
 				break
